@@ -1,0 +1,16 @@
+# The compiler's side of a flavour: language level, warnings, sanitizers.
+set(CMAKE_CXX_STANDARD 20)
+set(CMAKE_CXX_STANDARD_REQUIRED ON)
+set(CMAKE_CXX_EXTENSIONS OFF)
+set(CMAKE_EXPORT_COMPILE_COMMANDS ON)
+
+set(LIGHTLEDGER_SANITIZE "" CACHE STRING "sanitizers to build with, as -fsanitize= takes them")
+
+add_compile_options(-Wall -Wextra -Wpedantic -Wshadow -Wconversion -Wno-sign-conversion -Werror)
+# No silent fusing: the same source gives the same bits on every machine.
+add_compile_options(-ffp-contract=off)
+
+if(LIGHTLEDGER_SANITIZE)
+  add_compile_options(-fsanitize=${LIGHTLEDGER_SANITIZE} -fno-sanitize-recover=all -fno-omit-frame-pointer)
+  add_link_options(-fsanitize=${LIGHTLEDGER_SANITIZE})
+endif()
