@@ -9,6 +9,8 @@ set(LIGHTLEDGER_SANITIZE "" CACHE STRING "sanitizers to build with, as -fsanitiz
 add_compile_options(-Wall -Wextra -Wpedantic -Wshadow -Wconversion -Wno-sign-conversion -Werror)
 # No silent fusing: the same source gives the same bits on every machine.
 add_compile_options(-ffp-contract=off)
+# Mathematical functions tell of trouble by their value; errno would keep loops over them from being vectorised.
+add_compile_options(-fno-math-errno)
 
 if(LIGHTLEDGER_SANITIZE)
   add_compile_options(-fsanitize=${LIGHTLEDGER_SANITIZE} -fno-sanitize-recover=all -fno-omit-frame-pointer)

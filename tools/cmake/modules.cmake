@@ -18,7 +18,7 @@ function(lightledger_tests name)
     list(APPEND sources ${found})
   endforeach()
   add_executable(${name} ${sources})
-  target_include_directories(${name} PRIVATE ${PROJECT_SOURCE_DIR}/tests)
+  target_include_directories(${name} PRIVATE ${PROJECT_SOURCE_DIR}/tests ${PROJECT_SOURCE_DIR}/src)
   target_compile_definitions(${name} PRIVATE
     LIGHTLEDGER_SOURCE_DIR="${PROJECT_SOURCE_DIR}"
     LIGHTLEDGER_PROGRAM="$<TARGET_FILE:lightledger>")

@@ -48,8 +48,8 @@ enum class Split { none, wavelength, field };
 
 /// The ledger of one wavelength or one field, in fractions of what was launched there.
 struct SplitBudget {
-  std::optional<double> wavelength_nm;    ///< for Split::wavelength
-  std::optional<std::string> field_name;  ///< for Split::field, none for an unnamed one
+  std::optional<double> wavelength_nm;   ///< for Split::wavelength
+  std::optional<std::string> field_name; ///< for Split::field, none for an unnamed one
   std::vector<StationBudget> stations;
 };
 

@@ -1,0 +1,34 @@
+#pragma once
+
+#include <lightledger/assembly/assembly.hpp>
+#include <lightledger/assembly/diagnostics.hpp>
+
+#include <Eigen/Core>
+#include <optional>
+#include <vector>
+
+namespace lightledger::trace {
+
+/// A right-handed frame in bench coordinates: mm, and the axes x, y, z as columns.
+struct Frame {
+  Eigen::Vector3d origin = Eigen::Vector3d::Zero();
+  Eigen::Matrix3d axes = Eigen::Matrix3d::Identity();
+};
+
+/// Where everything stands, by the axis rule of contract §2. The bench's own coordinates are those of the
+/// axis as it arrives at the first station.
+struct Bench {
+  std::vector<Frame> surface;  ///< per surface: vertex, and the surface's own axes after shift and tilt
+  std::vector<Frame> arriving; ///< per station: its point of the axis, and the axes as the light arrives
+  std::vector<Frame> leaving;  ///< per station: the same point, the axes after reflection and turn
+  std::vector<double> gap;     ///< per station, in mm along the leaving axis; 0 after the last
+};
+
+/// Rx(a) Ry(b) Rz(c) for angles in degrees, exact at multiples of 90°.
+[[nodiscard]] Eigen::Matrix3d rotation(const std::array<double, 3>& degrees);
+
+/// Lays the train out. A focus that is virtual or infinitely far, and an axis that runs in a mirror's plane,
+/// are faults, and no bench is returned then.
+[[nodiscard]] std::optional<Bench> lay_out(const assembly::Assembly& assembly, assembly::Faults& faults);
+
+} // namespace lightledger::trace

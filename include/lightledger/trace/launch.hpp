@@ -1,0 +1,67 @@
+#pragma once
+
+#include <lightledger/assembly/assembly.hpp>
+#include <lightledger/trace/rays.hpp>
+
+#include <cstdint>
+#include <variant>
+#include <vector>
+
+namespace lightledger::trace {
+
+/// Independent shifts of a scattered set, from whose spread the standard error follows.
+inline constexpr int replicates = 16;
+
+/// A point of the disc of launch relative to its radius, and its weight.
+struct PupilPoint {
+  double x, y, weight;
+};
+
+/// Points on the disc of launch by number. A scattered set is a Kronecker lattice in integers modulo 2⁶⁴ with
+/// the generalised golden ratio (Roberts 2018), shifted per replicate; rings are Gauss–Legendre nodes in r²
+/// (Forbes, J. Opt. Soc. Am. A 5, 1943 (1988)); a grid takes the cells whose centres lie on the disc.
+class Pupil {
+public:
+  explicit Pupil(const assembly::Light& light);
+
+  /// Points a replicate holds in a pattern of fixed size; for scattered sets a sixteenth of the count,
+  /// rounded up.
+  [[nodiscard]] std::uint64_t size() const { return m_size; }
+  [[nodiscard]] bool scattered() const { return m_scattered; }
+  /// The point of a number below size() of a replicate; weight 0 where a grid's cell is off the disc.
+  [[nodiscard]] PupilPoint point(std::uint64_t number, int replicate) const;
+
+private:
+  struct RingNode {
+    double r_squared, weight;
+  };
+  [[nodiscard]] PupilPoint on_disc(double fraction_of_area, double azimuth_turns, double weight) const;
+
+  assembly::Sampling m_sampling;
+  bool m_scattered;
+  std::uint64_t m_size;
+  double m_inner_squared;  ///< of the hole, relative to the radius
+  double m_gaussian_decay; ///< 2 radius²/w², 0 for even irradiance
+  std::vector<RingNode> m_rings;
+};
+
+/// Fills blocks with the rays of one field, in the first station's arriving frame, at the launch plane z = 0.
+class Launcher {
+public:
+  Launcher(const assembly::Light& light, const Pupil& pupil, const assembly::Field& field);
+
+  /// Rays `first` … of a replicate, as many as fit below `end`; returns the number of the next ray.
+  std::uint64_t fill(RayBlock& block, int replicate, std::uint64_t first, std::uint64_t end) const;
+
+private:
+  void aim(RayBlock& block, int lane) const;
+
+  const Pupil& m_pupil;
+  double m_radius;
+  std::array<double, 2> m_at;
+  bool m_infinite;
+  bool m_converging;
+  std::array<double, 3> m_object; ///< direction at infinity, else the object point
+};
+
+} // namespace lightledger::trace

@@ -1,0 +1,52 @@
+#pragma once
+
+#include <limits>
+#include <span>
+#include <vector>
+
+namespace lightledger::trace {
+
+/// What became of the power that met one surface, in the unit of the rays' weights (contract §5, budget).
+struct Entry {
+  double incident = 0.0;
+  double missed = 0.0;
+  double clipped = 0.0;
+  double onward = 0.0;
+  double aside = 0.0;
+  double absorbed = 0.0;
+  double scattered = 0.0;
+  double extra = 0.0;
+  double bulk = 0.0;     ///< in the leg that leads here; a Ledger's row: in the gap that follows
+  double backward = 0.0; ///< power that ran against its direction on that leg; a row: on the leg that follows
+
+  double inside = 0.0; ///< arriving power inside the clear area
+  double pass_s = 0.0; ///< Σ arriving power · |a_s|² over the same rays
+  double pass_p = 0.0;
+  double incidence = 0.0; ///< Σ arriving power · angle of incidence, rad
+  double least_incidence = std::numeric_limits<double>::infinity();
+  double most_incidence = -std::numeric_limits<double>::infinity();
+
+  Entry& operator+=(const Entry& other);
+  /// All powers times a factor; angles stay.
+  Entry& operator*=(double factor);
+};
+
+/// The rows of all stations, and what was launched.
+struct Ledger {
+  double launched = 0.0;
+  std::vector<Entry> rows;
+
+  explicit Ledger(std::size_t stations = 0) : rows(stations) {}
+
+  /// Enters what a step found on its way to and at a station; the leg's own losses go to the station before.
+  void enter(std::size_t station, const Entry& found);
+
+  [[nodiscard]] double delivered() const { return rows.empty() ? 0.0 : rows.back().onward; }
+  /// launched − delivered − the losses of all stations as summed.
+  [[nodiscard]] double closure_error() const;
+
+  Ledger& operator+=(const Ledger& other);
+  Ledger& operator*=(double factor);
+};
+
+} // namespace lightledger::trace

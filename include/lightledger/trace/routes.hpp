@@ -1,0 +1,84 @@
+#pragma once
+
+#include <lightledger/assembly/assembly.hpp>
+
+#include <cstdint>
+#include <variant>
+#include <vector>
+
+namespace lightledger::trace {
+
+using assembly::Act;
+using assembly::StationId;
+using LegId = std::uint32_t;
+using OpId = std::uint32_t;
+
+enum class Heading { along, against };
+
+/// Light about to meet a surface: on which visit, and which way.
+struct State {
+  StationId visit;
+  Heading heading;
+};
+
+/// Where light ends that meets no further surface of the train.
+enum class End { detected, returned, leaked, absorbed };
+
+/// To the next meeting by a leg.
+struct Onward {
+  State state;
+  LegId leg;
+};
+using Hop = std::variant<Onward, End>;
+
+/// A straight run of the light from one surface to the next, or from the launch plane to the first.
+struct Leg {
+  bool launch;
+  StationId from; ///< without meaning for a launch leg
+  StationId to;
+  assembly::MediumId medium;
+};
+
+/// Where light goes after each meeting. Neighbourhood in the train is known here and nowhere else.
+class Routes {
+public:
+  static constexpr LegId launch_leg = 0;
+
+  explicit Routes(const assembly::Assembly& assembly);
+
+  [[nodiscard]] const std::vector<Leg>& legs() const { return m_legs; }
+  [[nodiscard]] State start() const { return {0, Heading::along}; }
+  [[nodiscard]] Hop next(State state, Act act) const;
+
+private:
+  struct Meeting {
+    Hop pass, bounce, detect;
+  };
+  [[nodiscard]] Meeting meeting(const assembly::Assembly& assembly, State state) const;
+  [[nodiscard]] Hop forward(StationId visit) const;
+  [[nodiscard]] Hop backward(StationId visit) const;
+
+  StationId m_stations;
+  std::vector<Leg> m_legs;
+  std::vector<Meeting> m_meetings; ///< two a visit: along, against
+};
+
+/// The operator of a meeting: a surface, met from its side `before` or `beyond`.
+[[nodiscard]] OpId operator_of(const assembly::Assembly& assembly, State state);
+
+/// One way through the train: how the light gets to each meeting, and what it does there.
+struct Path {
+  struct Step {
+    LegId leg;
+    OpId op;
+    StationId visit;
+    Act act;
+  };
+  std::vector<Step> steps;
+  End end;
+};
+
+/// The path on which every visit goes as intended.
+[[nodiscard]] Path intended_path(const assembly::Assembly& assembly, const Routes& routes);
+
+} // namespace lightledger::trace

@@ -1,0 +1,66 @@
+#include "paraxial.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <limits>
+
+namespace lightledger::trace {
+namespace {
+
+using assembly::Act;
+using assembly::Assembly;
+
+double curvature(const assembly::Plane&) {
+  return 0.0;
+}
+
+template <typename Curved>
+double curvature(const Curved& shape) {
+  return 1.0 / shape.radius;
+}
+
+} // namespace
+
+ParaxialRay::ParaxialRay(const Assembly& assembly)
+    : m_assembly(assembly), m_index(index(assembly.light.medium)) {
+  if (assembly.light.object_distance)
+    m_slope = m_index / *assembly.light.object_distance;
+  m_largest_slope = std::abs(m_slope);
+}
+
+void ParaxialRay::meet(const assembly::Station& station) {
+  const assembly::Surface& surface = m_assembly.surfaces[station.surface];
+  const double c = std::visit([](const auto& shape) { return curvature(shape); }, surface.shape);
+  double next = m_index;
+  double power = 0.0;
+  if (station.intended == Act::bounce) {
+    power = -2.0 * m_index * c;
+  } else if (std::holds_alternative<assembly::Interface>(surface.effect)) {
+    next = index(*surface.beyond);
+    power = (next - m_index) * c;
+  }
+  m_slope -= m_height * power;
+  m_index = next;
+  m_largest_slope = std::max(m_largest_slope, std::abs(m_height * power));
+}
+
+std::optional<double> ParaxialRay::image_distance() const {
+  if (std::abs(m_slope) <= parallel())
+    return std::nullopt;
+  const double distance = -m_height * m_index / m_slope;
+  return distance >= 0.0 ? std::optional(distance) : std::nullopt;
+}
+
+const char* ParaxialRay::why_no_image() const {
+  return std::abs(m_slope) <= parallel() ? "infinitely far" : "virtual, on the side the light comes from";
+}
+
+double ParaxialRay::index(assembly::MediumId medium) const {
+  return optics::index_at(m_assembly.media[medium], m_assembly.light.wavelengths.front().nm).value().n;
+}
+
+double ParaxialRay::parallel() const {
+  return 16.0 * std::numeric_limits<double>::epsilon() * m_largest_slope;
+}
+
+} // namespace lightledger::trace

@@ -1,0 +1,180 @@
+#include <lightledger/assembly/films.hpp>
+#include <lightledger/trace/plan.hpp>
+
+#include <algorithm>
+#include <cmath>
+#include <iterator>
+#include <limits>
+#include <numbers>
+
+namespace lightledger::trace {
+namespace {
+
+using assembly::Assembly;
+using assembly::Side;
+using assembly::Surface;
+using optics::Index;
+
+constexpr double nm_per_mm = 1e6;
+
+PlanLeg compile(const Leg& leg, const Assembly& assembly, const Bench& bench, double wavelength_nm) {
+  const Frame& from =
+      leg.launch ? bench.arriving.front() : bench.surface[assembly.stations[leg.from].surface];
+  const Frame& to = bench.surface[assembly.stations[leg.to].surface];
+  const bool aligned = from.axes == to.axes;
+  Eigen::Matrix3d turn = Eigen::Matrix3d::Identity(); // exact where no axis turns
+  if (!aligned)
+    turn = to.axes.transpose() * from.axes;
+  const Eigen::Vector3d shift = to.axes.transpose() * (from.origin - to.origin);
+  const Index index = optics::index_at(assembly.media[leg.medium], wavelength_nm).value();
+
+  PlanLeg plan{};
+  plan.launch = leg.launch;
+  for (int row = 0; row < 3; ++row) {
+    plan.shift[row] = shift[row];
+    for (int column = 0; column < 3; ++column)
+      plan.rotation[row][column] = turn(row, column);
+  }
+  plan.kind = aligned && shift[0] == 0.0 && shift[1] == 0.0 ? LegKind::along_z : LegKind::rigid;
+  plan.alpha = leg.launch ? 0.0 : 4.0 * std::numbers::pi * index.kappa / wavelength_nm * nm_per_mm;
+  plan.index = index.n;
+  return plan;
+}
+
+struct ShapeCompiler {
+  PlanOp& op;
+
+  void operator()(const assembly::Plane&) const { op.shape = ShapeKind::plane; }
+  void operator()(const assembly::Sphere& sphere) const {
+    op.shape = ShapeKind::conic;
+    op.curvature = 1.0 / sphere.radius;
+  }
+  void operator()(const assembly::Conic& conic) const {
+    op.shape = ShapeKind::conic;
+    op.curvature = 1.0 / conic.radius;
+    op.conic = conic.conic;
+  }
+  void operator()(const assembly::Asphere& asphere) const {
+    op.shape = ShapeKind::asphere;
+    op.curvature = 1.0 / asphere.radius;
+    op.conic = asphere.conic;
+    std::copy(asphere.terms.begin(), asphere.terms.end(), op.a);
+  }
+};
+
+struct ClearCompiler {
+  PlanOp& op;
+
+  void operator()(const assembly::Clear::Unlimited&) const { set(ClearKind::unlimited, 0.0, 0.0); }
+  void operator()(const assembly::Clear::Disc& disc) const { set(ClearKind::disc, disc.radius, disc.radius); }
+  void operator()(const assembly::Clear::Rectangle& rectangle) const {
+    set(ClearKind::rectangle, rectangle.half_width, rectangle.half_height);
+  }
+  void operator()(const assembly::Clear::Ellipse& ellipse) const {
+    set(ClearKind::ellipse, ellipse.semi_x, ellipse.semi_y);
+  }
+
+private:
+  void set(ClearKind kind, double x, double y) const {
+    op.clear = kind;
+    op.clear_x = x;
+    op.clear_y = y;
+  }
+};
+
+/// Fills the optical part of an operator: media, coating, what becomes of the light that crosses.
+class BoundaryCompiler {
+public:
+  BoundaryCompiler(const Assembly& assembly, const Surface& surface, double wavelength_nm)
+      : m_assembly(assembly), m_surface(surface), m_wavelength_nm(wavelength_nm) {}
+
+  void compile(PlanOp& op, Side met_from, Act intended, Plan& plan) const {
+    op.intended = intended;
+    op.wavelength_nm = m_wavelength_nm;
+    op.n1 = op.n2 = index(m_surface.before).n;
+    op.scatter_reflected = op.scatter_transmitted = 0.0;
+    op.amplitude = AmplitudeKind::none;
+    if (!std::holds_alternative<assembly::Interface>(m_surface.effect))
+      return;
+    media(op, met_from);
+    amplitudes(op, met_from, plan);
+    const double per_length = 2.0 * std::numbers::pi * m_surface.roughness_nm / m_wavelength_nm;
+    op.scatter_reflected = 2.0 * per_length * op.n1;
+    op.scatter_transmitted = per_length;
+  }
+
+private:
+  [[nodiscard]] Index index(assembly::MediumId medium) const {
+    return optics::index_at(m_assembly.media[medium], m_wavelength_nm).value();
+  }
+
+  void media(PlanOp& op, Side met_from) const {
+    const Index before = index(m_surface.before);
+    const Index beyond = m_surface.beyond ? index(*m_surface.beyond) : before;
+    op.n1 = met_from == Side::before ? before.n : beyond.n;
+    op.n2 = met_from == Side::before ? beyond.n : before.n;
+    op.swallows = met_from == Side::before && optics::opaque(beyond);
+    op.n2_kappa = op.swallows ? beyond.kappa : 0.0;
+  }
+
+  void amplitudes(PlanOp& op, Side met_from, Plan& plan) const {
+    op.amplitude = op.swallows ? AmplitudeKind::metal : AmplitudeKind::fresnel;
+    if (!m_surface.coating)
+      return;
+    const auto& kind = m_assembly.coatings[m_surface.coating->coating].kind;
+    if (const auto* ideal = std::get_if<assembly::Ideal>(&kind)) {
+      op.amplitude = AmplitudeKind::ideal;
+      op.reflect_s = ideal->s.reflect;
+      op.reflect_p = ideal->p.reflect;
+      op.transmit_s = ideal->s.transmit;
+      op.transmit_p = ideal->p.transmit;
+      return;
+    }
+    const std::vector<optics::Layer> layers =
+        assembly::optical_layers(m_assembly, std::get<assembly::Layers>(kind), m_wavelength_nm);
+    auto& stack = plan.stacks.emplace_back(std::make_unique<optics::Layer[]>(layers.size()));
+    // Written from the substrate outward; light that arrives at the outer side meets the last one first.
+    if (m_surface.coating->substrate == met_from)
+      std::copy(layers.begin(), layers.end(), stack.get());
+    else
+      std::reverse_copy(layers.begin(), layers.end(), stack.get());
+    op.amplitude = AmplitudeKind::stack;
+    op.layers = stack.get();
+    op.layer_count = static_cast<std::uint32_t>(layers.size());
+  }
+
+  const Assembly& m_assembly;
+  const Surface& m_surface;
+  double m_wavelength_nm;
+};
+
+Act intended_act(const Assembly& assembly, assembly::SurfaceId surface) {
+  const auto visit =
+      std::find_if(assembly.stations.begin(), assembly.stations.end(),
+                   [&](const assembly::Station& station) { return station.surface == surface; });
+  return visit->intended;
+}
+
+} // namespace
+
+Plan compile(const Assembly& assembly, const Bench& bench, const Routes& routes, double wavelength_nm) {
+  Plan plan{wavelength_nm, {}, {}, {}};
+  for (const Leg& leg : routes.legs())
+    plan.legs.push_back(compile(leg, assembly, bench, wavelength_nm));
+  for (assembly::SurfaceId id = 0; id < assembly.surfaces.size(); ++id) {
+    const Surface& surface = assembly.surfaces[id];
+    PlanOp op{};
+    std::visit(ShapeCompiler{op}, surface.shape);
+    std::visit(ClearCompiler{op}, surface.clear.opening);
+    op.hole = surface.clear.hole_radius;
+    std::copy(surface.clear.at.begin(), surface.clear.at.end(), op.centre);
+    op.loss = surface.loss;
+    for (const Side side : {Side::before, Side::beyond}) {
+      BoundaryCompiler(assembly, surface, wavelength_nm).compile(op, side, intended_act(assembly, id), plan);
+      plan.ops.push_back(op);
+    }
+  }
+  return plan;
+}
+
+} // namespace lightledger::trace
