@@ -1,5 +1,6 @@
 #include "parallel.hpp"
 
+#include <tbb/global_control.h>
 #include <tbb/parallel_for.h>
 #include <tbb/task_arena.h>
 
@@ -10,7 +11,14 @@ void parallel_jobs(std::size_t count, const std::function<void(std::size_t)>& jo
 }
 
 void with_threads(int threads, const std::function<void()>& work) {
-  tbb::task_arena(threads > 0 ? threads : tbb::task_arena::automatic).execute(work);
+  if (threads <= 0) {
+    tbb::task_arena().execute(work);
+    return;
+  }
+  // A number asked for holds also where the machine has fewer cores.
+  const tbb::global_control allowed(tbb::global_control::max_allowed_parallelism,
+                                    static_cast<std::size_t>(threads));
+  tbb::task_arena(threads).execute(work);
 }
 
 } // namespace lightledger::trace

@@ -55,6 +55,7 @@ public:
 
 private:
   friend class DocumentBuilder;
+  friend class DocumentEditor;
 
   std::string m_file;
   std::string m_text;

@@ -2,7 +2,7 @@
 
 #include <lightledger/optics/index.hpp>
 
-#include <array>
+#include <algorithm>
 #include <limits>
 #include <optional>
 #include <string>
@@ -19,6 +19,11 @@ struct Range {
 
   [[nodiscard]] bool holds(double wavelength_nm) const {
     return from_nm <= wavelength_nm && wavelength_nm <= to_nm;
+  }
+
+  /// What both hold; nothing where they do not meet.
+  [[nodiscard]] Range overlap(Range other) const {
+    return {std::max(from_nm, other.from_nm), std::min(to_nm, other.to_nm)};
   }
 };
 

@@ -4,6 +4,7 @@
 
 #include <gtest/gtest.h>
 
+#include <Eigen/LU>
 #include <string>
 
 namespace lightledger::trace {

@@ -201,7 +201,7 @@ TEST(Bulk, MissedRaysLoseNone) {
       walked("- {name: in, into: grey, gap: 50}\n- {name: out, radius: 3, into: air, gap: 5}\n" + end,
              ray({0, 4, 0}, {0, 0, 1}));
   EXPECT_EQ(w.ledger.rows[0].bulk, 0.0);
-  EXPECT_EQ(w.ledger.rows[1].missed, w.ledger.rows[0].onward);
+  EXPECT_DOUBLE_EQ(w.ledger.rows[1].missed, w.ledger.rows[0].onward);
 }
 
 TEST(Losses, AreTakenInTheOrderScatterThenExtra) {

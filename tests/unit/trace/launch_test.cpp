@@ -97,8 +97,9 @@ TEST(Pupil, AScatteredCountIsRoundedUpToAMultipleOfSixteen) {
 
 TEST(Pupil, AScatteredSetIsEvenPerArea) {
   const auto all = points(disc(Scattered{4096}));
-  EXPECT_NEAR(mean_r_power(all, 2), 0.5, 1e-4);
-  EXPECT_NEAR(mean_r_power(all, 4), 1.0 / 3.0, 1e-4);
+  // Sixteen shifted lattices of 256: each is even to 1/256 of the area, their mean to a quarter of that.
+  EXPECT_NEAR(mean_r_power(all, 2), 0.5, 1e-3);
+  EXPECT_NEAR(mean_r_power(all, 4), 1.0 / 3.0, 1e-3);
 }
 
 TEST(Pupil, ReplicatesOfAScatteredSetDiffer) {

@@ -1,0 +1,47 @@
+#include "commands.hpp"
+
+#include <algorithm>
+#include <array>
+
+namespace lightledger::app {
+namespace {
+
+constexpr std::array<std::string_view, 4> planned{"ghosts", "polarization", "draw", "report"};
+
+} // namespace
+
+const std::vector<CommandInfo>& commands() {
+  static const std::vector<CommandInfo> all{
+      {Command::check, "check", "FILE", "Is the file sound, and are its requirements met?",
+       "lightledger check systems/fog-bank-lidar.yaml"},
+      {Command::budget, "budget", "FILE",
+       "How much light arrives, and where did the rest go, station by station?",
+       "lightledger budget systems/fog-bank-lidar.yaml --json -"},
+      {Command::coating, "coating", "FILE NAME", "What does a coating do against wavelength and angle?",
+       "lightledger coating systems/fog-bank-lidar.yaml lens_ar --wavelengths 500:560:20 --angles 0:30:15"},
+      {Command::media, "media", "[NAME]", "Which media are known by name, and what are n and kappa of one?",
+       "lightledger media fused-silica --wavelengths 400:700:50"}};
+  return all;
+}
+
+const CommandInfo& info(Command command) {
+  return *std::ranges::find(commands(), command, &CommandInfo::command);
+}
+
+const CommandInfo* find_command(std::string_view name) {
+  const auto found = std::ranges::find(commands(), name, &CommandInfo::name);
+  return found == commands().end() ? nullptr : &*found;
+}
+
+bool is_planned(std::string_view name) {
+  return std::ranges::find(planned, name) != planned.end();
+}
+
+std::vector<std::string_view> command_names() {
+  std::vector<std::string_view> names(planned.begin(), planned.end());
+  for (const CommandInfo& command : commands())
+    names.emplace_back(command.name);
+  return names;
+}
+
+} // namespace lightledger::app

@@ -1,0 +1,31 @@
+#pragma once
+
+#include "commands.hpp"
+
+#include <lightledger/analysis/budget.hpp>
+#include <lightledger/assembly/load.hpp>
+
+#include <optional>
+#include <string>
+#include <vector>
+
+namespace lightledger::app {
+
+/// The command line, read and checked.
+struct Options {
+  Command command = Command::check;
+  std::string file;                ///< empty for `media`
+  std::optional<std::string> name; ///< of the coating or medium
+
+  std::optional<std::string> json, csv;  ///< paths, `-` for stdout
+  std::vector<assembly::Change> changes; ///< of --set, --rays and --accuracy
+  int threads = 0;
+  bool decibels = false;
+  bool quiet = false;
+
+  analysis::Split split = analysis::Split::none;
+  std::optional<std::string> incident, substrate;
+  std::vector<double> wavelengths_nm, angles_deg; ///< empty where not given
+};
+
+} // namespace lightledger::app

@@ -1,0 +1,73 @@
+#include "outputs.hpp"
+
+#include "help.hpp"
+#include "input_error.hpp"
+
+#include <lightledger/assembly/diagnostics.hpp>
+
+#include <fmt/format.h>
+
+#include <system_error>
+
+namespace lightledger::app {
+namespace {
+
+using assembly::Faults;
+
+void open(std::optional<Output>& output, const char* option, const std::optional<std::string>& path,
+          Faults& faults) {
+  if (!path)
+    return;
+  try {
+    output.emplace(*path);
+  } catch (const std::system_error& error) {
+    faults.add(
+        {{},
+         fmt::format("{}: '{}' cannot be opened for writing: {}", option, *path, error.code().message()),
+         {},
+         {}});
+  }
+}
+
+void keep_input(const char* option, const std::optional<Output>& output, const Options& options,
+                Faults& faults) {
+  if (output && output->is_file(options.file))
+    faults.add({{}, fmt::format("{}: '{}' is the input file", option, output->path()), {}, {}});
+}
+
+} // namespace
+
+Outputs::Outputs(const Options& options) {
+  Faults faults;
+  open(m_json, "--json", options.json, faults);
+  open(m_csv, "--csv", options.csv, faults);
+  keep_input("--json", m_json, options, faults);
+  keep_input("--csv", m_csv, options, faults);
+  if (m_json && m_csv && m_json->same_place(*m_csv))
+    faults.add({{}, "--json and --csv go to the same place", "two different paths", {}});
+  if (!faults.none())
+    throw InputError(assembly::describe(faults, "lightledger", "") + command_usage(info(options.command)) +
+                     '\n');
+}
+
+bool Outputs::stdout_is_taken() const {
+  return (m_json && m_json->is_stdout()) || (m_csv && m_csv->is_stdout());
+}
+
+void Outputs::write(const Answer& answer) {
+  const auto stage = [](std::optional<Output>& output, const std::string& document, bool to_stdout) {
+    if (output && output->is_stdout() == to_stdout)
+      output->stage(document);
+  };
+  stage(m_json, answer.json, false);
+  stage(m_csv, answer.csv, false);
+  for (std::optional<Output>* output : {&m_json, &m_csv})
+    if (*output)
+      (*output)->publish();
+  stage(m_json, answer.json, true);
+  stage(m_csv, answer.csv, true);
+  if (!stdout_is_taken())
+    Output("-").stage(answer.text);
+}
+
+} // namespace lightledger::app

@@ -1,0 +1,26 @@
+#pragma once
+
+#include "answer.hpp"
+#include "options.hpp"
+#include "output.hpp"
+
+#include <optional>
+
+namespace lightledger::app {
+
+/// All that a run writes, opened before the run. Files come into their places together, stdout comes last.
+class Outputs {
+public:
+  /// Throws InputError where a place cannot be written, is the input, or is given twice.
+  explicit Outputs(const Options& options);
+
+  /// Throws std::system_error where writing fails; no file is changed then unless a rename is what failed.
+  void write(const Answer& answer);
+
+private:
+  [[nodiscard]] bool stdout_is_taken() const;
+
+  std::optional<Output> m_json, m_csv;
+};
+
+} // namespace lightledger::app

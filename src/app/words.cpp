@@ -1,0 +1,79 @@
+#include "words.hpp"
+
+#include <CLI/CLI.hpp>
+
+#include <algorithm>
+
+namespace lightledger::app {
+namespace {
+
+void add_option(CLI::App& app, const OptionInfo& option, Words& words) {
+  if (option.switched)
+    app.add_flag(option.name, words.*option.switched)->multi_option_policy(CLI::MultiOptionPolicy::TakeLast);
+  else
+    app.add_option(option.name, words.*option.values)
+        ->expected(0, 1)
+        ->allow_extra_args(false)
+        ->multi_option_policy(CLI::MultiOptionPolicy::TakeAll);
+}
+
+} // namespace
+
+const std::vector<OptionInfo>& common_options() {
+  static const std::vector<OptionInfo> options{
+      {"--json", "PATH", "write the result as JSON; - is stdout, which then holds nothing else",
+       &Words::json},
+      {"--csv", "PATH", "write the table as CSV; - is stdout, which then holds nothing else", &Words::csv},
+      {"--rays", "N", "scattered rays per field and wavelength", &Words::rays},
+      {"--accuracy", "X", "double the rays until the standard error is below X", &Words::accuracy},
+      {"--threads", "N", "threads to use; all of the machine's without it", &Words::threads},
+      {"--isa", "NAME", "instruction set of the tracer: portable", &Words::isa},
+      {"--set", "PATH=VALUE", "change a value of the file, as fold.tilt=[44,0,0]; repeatable", &Words::set},
+      {"--db", nullptr, "fractions in dB in the text", nullptr, &Words::decibels},
+      {"--quiet", nullptr, "no text on stdout", nullptr, &Words::quiet}};
+  return options;
+}
+
+const std::vector<OptionInfo>& own_options(Command command) {
+  static const std::vector<OptionInfo> none;
+  static const std::vector<OptionInfo> budget{
+      {"--split", "wavelength|field", "a ledger for each wavelength or field as well", &Words::split}};
+  static const OptionInfo wavelengths{"--wavelengths", "START:STOP:STEP", "in nm, or one number",
+                                      &Words::wavelengths};
+  static const std::vector<OptionInfo> coating{
+      {"--incident", "MEDIUM", "the medium that light comes from; air without it", &Words::incident},
+      {"--substrate", "MEDIUM", "that of the first station that uses the coating without it",
+       &Words::substrate},
+      wavelengths,
+      {"--angles", "START:STOP:STEP", "degrees in the medium of incidence, or one number", &Words::angles}};
+  static const std::vector<OptionInfo> media{wavelengths};
+  switch (command) {
+  case Command::budget:
+    return budget;
+  case Command::coating:
+    return coating;
+  case Command::media:
+    return media;
+  case Command::check:
+    break;
+  }
+  return none;
+}
+
+Words sort_words(Command command, std::vector<std::string> arguments) {
+  Words words;
+  CLI::App app;
+  app.set_help_flag();
+  app.allow_extras();
+  for (const OptionInfo& option : own_options(command))
+    add_option(app, option, words);
+  for (const OptionInfo& option : common_options())
+    add_option(app, option, words);
+  std::ranges::reverse(arguments); // the order in which the parser takes them
+  app.parse(std::move(arguments));
+  for (const std::string& word : app.remaining())
+    (word.size() > 1 && word.front() == '-' ? words.unknown : words.positionals).push_back(word);
+  return words;
+}
+
+} // namespace lightledger::app

@@ -1,0 +1,51 @@
+#include "coverage.hpp"
+
+#include <lightledger/assembly/films.hpp>
+
+#include <fmt/format.h>
+
+#include <algorithm>
+
+namespace lightledger::assembly {
+
+const Coverage::Known& Coverage::known(MediumId id) {
+  m_known.resize(std::max<std::size_t>(m_known.size(), m_media.size()));
+  if (m_known[id])
+    return *m_known[id];
+  Known& known = m_known[id].emplace();
+  for (const Wavelength& wavelength : m_wavelengths) {
+    const auto index = optics::index_at(m_media[id], wavelength.nm);
+    if (!index && !known.missing_nm)
+      known.missing_nm = wavelength.nm;
+    if (index && optics::opaque(*index) && !known.opaque_nm)
+      known.opaque_nm = wavelength.nm;
+    known.gas = known.gas && index && optics::gas(*index);
+  }
+  return known;
+}
+
+void Coverage::check_known(MediumId id, Mark use) {
+  if (const auto missing = known(id).missing_nm)
+    m_reader.fault(use, fmt::format("{}; the light has {} nm", known_range(m_media[id]), *missing));
+}
+
+void Coverage::check_known_at(MediumId id, double nm, Mark use) {
+  if (!optics::index_at(m_media[id], nm))
+    m_reader.fault(use, fmt::format("{}; the layer is given at {} nm", known_range(m_media[id]), nm));
+}
+
+void Coverage::check_transparent(MediumId id, Mark use) {
+  check_known(id, use);
+  if (const auto opaque = known(id).opaque_nm)
+    m_reader.fault(use,
+                   fmt::format("{} is opaque at {} nm, so no light goes on in it", m_media[id].name, *opaque),
+                   "a medium of kappa up to 1e-3; a metal is the backing of a reflecting station");
+}
+
+std::optional<bool> Coverage::gas(MediumId id) {
+  if (m_wavelengths.empty() || known(id).missing_nm)
+    return std::nullopt;
+  return known(id).gas;
+}
+
+} // namespace lightledger::assembly

@@ -1,0 +1,43 @@
+#pragma once
+
+#include "reader.hpp"
+
+#include <lightledger/assembly/assembly.hpp>
+
+#include <optional>
+#include <vector>
+
+namespace lightledger::assembly {
+
+/// What the media are at the light's wavelengths, found out as they come into use.
+class Coverage {
+public:
+  Coverage(Reader& reader, const std::vector<optics::Medium>& media,
+           const std::vector<Wavelength>& wavelengths)
+      : m_reader(reader), m_media(media), m_wavelengths(wavelengths) {}
+
+  /// A fault at the place of use where the medium is not known at one of the light's wavelengths.
+  void check_known(MediumId id, Mark use);
+  /// The same at one wavelength of another origin; `whose` begins the clause about it: "the layer's 'at' is".
+  void check_known_at(MediumId id, double nm, Mark use);
+  /// A fault where rays cannot go on in the medium: not known, or opaque.
+  void check_transparent(MediumId id, Mark use);
+
+  /// Whether the medium is a gas at all wavelengths; none where that is not known.
+  [[nodiscard]] std::optional<bool> gas(MediumId id);
+
+private:
+  struct Known {
+    std::optional<double> missing_nm; ///< the first wavelength at which nothing is known
+    std::optional<double> opaque_nm;  ///< the first at which the medium is opaque
+    bool gas = true;
+  };
+  const Known& known(MediumId id);
+
+  Reader& m_reader;
+  const std::vector<optics::Medium>& m_media;
+  const std::vector<Wavelength>& m_wavelengths;
+  std::vector<std::optional<Known>> m_known;
+};
+
+} // namespace lightledger::assembly

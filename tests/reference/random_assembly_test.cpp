@@ -1,0 +1,139 @@
+#include "reference/ledger.hpp"
+#include "reference/random_test.hpp"
+#include "reference/reversal.hpp"
+
+#include <gtest/gtest.h>
+#include <rapidcheck/gtest.h>
+
+#include <algorithm>
+#include <numeric>
+
+namespace lightledger::reference {
+namespace {
+
+constexpr int rays_each = 8;
+
+/// A random assembly, laid out, with some rays of its light.
+struct Case {
+  assembly::Assembly assembly;
+  Bench bench;
+  std::vector<Ray> rays;
+
+  explicit Case(std::uint64_t seed, const Variety& variety = {})
+      : assembly(random_assembly(seed, variety)), bench(lay_out(assembly)) {
+    Dice dice(seed + 1);
+    rays = random_rays(assembly.light, dice, rays_each);
+  }
+  [[nodiscard]] double wavelength() const { return assembly.light.wavelengths.front().nm; }
+  [[nodiscard]] RayRecord follow(const Ray& ray) const { return trace(bench, assembly, wavelength(), ray); }
+};
+
+TEST(RandomAssembly, RepeatsWithItsSeed) {
+  const Case once(5);
+  const Case again(5);
+  EXPECT_EQ(once.assembly.stations.size(), again.assembly.stations.size());
+  EXPECT_EQ(once.follow(once.rays[0]).delivered, again.follow(again.rays[0]).delivered);
+}
+
+TEST(RandomAssembly, LetsMostRaysThroughAndLosesSomeInEveryWay) {
+  Ledger all;
+  int delivered = 0;
+  constexpr int seeds = 400;
+  for (std::uint64_t seed = 0; seed < seeds; ++seed) {
+    const Case sample(seed);
+    for (const Ray& ray : sample.rays) {
+      const RayRecord record = sample.follow(ray);
+      all.enter(record, 1.0);
+      delivered +=
+          record.steps.size() == sample.assembly.stations.size() && record.steps.back().inside ? 1 : 0;
+    }
+  }
+  EXPECT_GT(delivered, seeds * rays_each / 2);
+  const auto sum = [&](double StationLedger::*column) {
+    return std::accumulate(all.stations.begin(), all.stations.end(), 0.0,
+                           [&](double total, const StationLedger& line) { return total + line.*column; });
+  };
+  for (const auto column :
+       {&StationLedger::missed, &StationLedger::clipped, &StationLedger::aside, &StationLedger::absorbed,
+        &StationLedger::scattered, &StationLedger::extra, &StationLedger::bulk})
+    EXPECT_GT(sum(column), 0.001 * all.launched);
+}
+
+RC_GTEST_PROP(ReferenceProperty, EveryRayIsAccountedFor, ()) {
+  const Case sample(any_seed());
+  for (const Ray& ray : sample.rays) {
+    const RayRecord record = sample.follow(ray);
+    RC_ASSERT(std::abs(1.0 - record.delivered - lost(record)) < 1e-12);
+  }
+}
+
+RC_GTEST_PROP(ReferenceProperty, LosslessTrainsKeepAllPower, ()) {
+  const Case sample(any_seed(), {.lossless = true});
+  for (const Ray& ray : sample.rays) {
+    const RayRecord record = sample.follow(ray);
+    double kept = record.delivered;
+    for (const Step& step : record.steps)
+      kept += step.aside + step.missed;
+    RC_ASSERT(std::abs(kept - 1.0) < 1e-12);
+    for (const Step& step : record.steps)
+      RC_ASSERT(step.bulk == 0.0 && step.scattered == 0.0 && step.extra == 0.0);
+  }
+}
+
+RC_GTEST_PROP(ReferenceProperty, AMovedBenchMovesTheResult, ()) {
+  const std::uint64_t seed = any_seed();
+  const Case sample(seed);
+  Dice dice(seed + 2);
+  const Frame motion{{dice.around_zero(5.0), dice.around_zero(5.0), dice.around_zero(5.0)},
+                     rotation({dice.around_zero(180.0), dice.around_zero(90.0), dice.around_zero(180.0)})};
+  const Bench elsewhere = moved(sample.bench, motion);
+  for (const Ray& ray : sample.rays) {
+    const RayRecord here = sample.follow(ray);
+    const RayRecord there = trace(elsewhere, sample.assembly, sample.wavelength(),
+                                  {motion.bench(ray.point), motion.axes * ray.direction});
+    if (here.doubtful || there.doubtful)
+      continue;
+    RC_ASSERT(here.steps.size() == there.steps.size());
+    const PolarizationMatrix carried = motion.axes.cast<std::complex<double>>() * here.steps.back().P *
+                                       motion.axes.transpose().cast<std::complex<double>>();
+    RC_ASSERT((carried - there.steps.back().P).norm() < 1e-11);
+  }
+}
+
+/// Whether a ray that runs back meets the surfaces where it met them on the way there. Behind a strongly
+/// curved mirror it may meet another point of it that is nearer to the tangent plane, and so goes astray by
+/// the rule of the contract.
+bool same_places(const RayRecord& there, const RayRecord& back, const Frame& entrance) {
+  for (std::size_t i = 0; i < back.steps.size(); ++i) {
+    const Vector& expected = there.steps[there.steps.size() - 2 - i].point;
+    if (!back.steps[i].hit || (entrance.bench(back.steps[i].point) - expected).norm() > 1e-6)
+      return false;
+  }
+  return true;
+}
+
+/// Helmholtz reciprocity: the ray that runs back has the transposed matrix.
+RC_GTEST_PROP(ReferenceProperty, TheWayBackHasTheTransposedMatrix, ()) {
+  const Case sample(any_seed(), {.reversible = true});
+  const Reversed reverse = reversed(sample.assembly, sample.bench);
+  const Bench reverse_bench = lay_out(reverse.assembly);
+  const Frame& entrance = reverse.entrance;
+  const PolarizationMatrix axes = entrance.axes.cast<std::complex<double>>();
+  for (const Ray& ray : sample.rays) {
+    const RayRecord there = sample.follow(ray);
+    if (there.doubtful || there.steps.size() < sample.assembly.stations.size())
+      continue;
+    const Step& last = there.steps[there.steps.size() - 2];
+    const Ray returning{entrance.local(last.point + last.direction),
+                        -entrance.axes.transpose() * last.direction};
+    const RayRecord back = trace(reverse_bench, reverse.assembly, sample.wavelength(), returning);
+    if (back.doubtful || !same_places(there, back, entrance))
+      continue;
+    RC_ASSERT(back.steps.size() == reverse.assembly.stations.size());
+    RC_ASSERT((axes * back.steps.back().P * axes.adjoint() - last.P.transpose()).norm() < 1e-11);
+    RC_ASSERT((entrance.axes * back.steps.back().direction + ray.direction).norm() < 1e-11);
+  }
+}
+
+} // namespace
+} // namespace lightledger::reference

@@ -1,0 +1,92 @@
+#include "reference/reversal.hpp"
+
+#include "reference/media.hpp"
+
+#include <cmath>
+#include <numbers>
+#include <utility>
+
+namespace lightledger::reference {
+namespace {
+
+using assembly::Act;
+using assembly::Station;
+using assembly::Surface;
+
+/// Half a turn about x: y and z change their sign.
+Rotation about_face() {
+  return Eigen::Vector3d(1.0, -1.0, -1.0).asDiagonal();
+}
+
+struct FromBehind {
+  assembly::Shape operator()(const assembly::Plane& shape) const { return shape; }
+  assembly::Shape operator()(const assembly::Sphere& shape) const { return assembly::Sphere{-shape.radius}; }
+  assembly::Shape operator()(const assembly::Conic& shape) const {
+    return assembly::Conic{-shape.radius, shape.conic};
+  }
+  assembly::Shape operator()(assembly::Asphere shape) const {
+    shape.radius = -shape.radius;
+    for (double& term : shape.terms)
+      term = -term;
+    return shape;
+  }
+};
+
+assembly::Side other(assembly::Side side) {
+  return side == assembly::Side::before ? assembly::Side::beyond : assembly::Side::before;
+}
+
+Surface turned_round(Surface surface, const Place& place, Act act) {
+  surface.shape = std::visit(FromBehind{}, surface.shape);
+  surface.clear.at[1] = -surface.clear.at[1];
+  surface.shift[1] = -surface.shift[1];
+  surface.tilt_deg =
+      angles_of(about_face() * place.leaving.axes.transpose() * place.surface.axes * about_face());
+  if (act == Act::pass && surface.beyond) {
+    std::swap(surface.before, *surface.beyond);
+    if (surface.coating)
+      surface.coating->substrate = other(surface.coating->substrate);
+  }
+  return surface;
+}
+
+/// What turns the axis behind a station met from its other side onto the axis that arrived there.
+std::array<double, 3> turn_back(const Place& place, Act act) {
+  Rotation axes = place.leaving.axes * about_face();
+  if (act == Act::bounce) {
+    const Vector normal = place.surface.axes.col(2);
+    const Rotation mirror = Rotation::Identity() - 2.0 * normal * normal.transpose();
+    axes = mirror * axes * Rotation(Eigen::Vector3d(1.0, -1.0, 1.0).asDiagonal()); // y' = z' × x'
+  }
+  return angles_of(axes.transpose() * place.arriving.axes * about_face());
+}
+
+} // namespace
+
+std::array<double, 3> angles_of(const Rotation& rotation) {
+  constexpr double degree = std::numbers::pi / 180.0;
+  const double across = std::hypot(rotation(1, 2), rotation(2, 2));
+  return {std::atan2(-rotation(1, 2), rotation(2, 2)) / degree, std::atan2(rotation(0, 2), across) / degree,
+          std::atan2(-rotation(0, 1), rotation(0, 0)) / degree};
+}
+
+Reversed reversed(const assembly::Assembly& assembly, const Bench& bench) {
+  Reversed result{assembly, {}};
+  result.assembly.stations.clear();
+  for (std::size_t i = assembly.stations.size() - 1; i-- > 0;) {
+    Station station = assembly.stations[i];
+    const Place& place = bench.stations[i];
+    Surface& surface = result.assembly.surfaces[station.surface];
+    surface = turned_round(surface, place, station.intended);
+    station.turn_deg = turn_back(place, station.intended);
+    station.gap = i > 0 ? bench.stations[i - 1].gap : 0.0;
+    if (result.assembly.stations.empty()) {
+      result.entrance = {place.leaving.origin, place.leaving.axes * about_face()};
+      result.assembly.light.medium = medium_behind(assembly, assembly.stations[i]);
+    }
+    result.assembly.stations.push_back(station);
+  }
+  return result;
+}
+
+} // namespace lightledger::reference
