@@ -39,8 +39,12 @@ std::vector<std::string_view> medium_names(const Assembly& assembly) {
 std::optional<Medium> named_medium(const Assembly& assembly, const std::string& name, const char* option,
                                    Faults& faults) {
   std::optional<Medium> medium = assembly::medium_named(assembly, name);
-  if (!medium)
-    faults.add(unknown_medium(name, option, medium_names(assembly)));
+  if (!medium) {
+    Fault fault = unknown_medium(name, medium_names(assembly));
+    fault.message += fmt::format(" for {}", option);
+    fault.accepted += ", or a medium of the file";
+    faults.add(std::move(fault));
+  }
   return medium;
 }
 

@@ -8,11 +8,10 @@
 
 namespace lightledger::analysis {
 
-assembly::Fault unknown_medium(std::string_view name, std::string_view purpose,
-                               const std::vector<std::string_view>& known) {
+assembly::Fault unknown_medium(std::string_view name, const std::vector<std::string_view>& known) {
   return {{},
-          fmt::format("there is no medium '{}'{}{}", name, purpose.empty() ? "" : " for ", purpose),
-          "a name that `lightledger media` lists, or a medium of the file",
+          fmt::format("there is no medium '{}'", name),
+          "a name that `lightledger media` lists",
           std::string(assembly::nearest(name, known))};
 }
 

@@ -10,8 +10,8 @@
 /// The faults of asking for media by name.
 namespace lightledger::analysis {
 
-/// The fault of a name that is none of the known ones; `purpose` may say what it was asked for.
-[[nodiscard]] assembly::Fault unknown_medium(std::string_view name, std::string_view purpose,
+/// The fault of a name that is none of the known ones.
+[[nodiscard]] assembly::Fault unknown_medium(std::string_view name,
                                              const std::vector<std::string_view>& known);
 
 /// The fault of the first wavelength at which the medium is not known; it names the range.

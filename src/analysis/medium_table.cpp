@@ -36,7 +36,7 @@ MediumTableResult medium_table(const std::optional<std::string>& name,
   }
   const std::optional<optics::Medium> medium = optics::builtin_medium(*name);
   if (!medium) {
-    result.faults.add(unknown_medium(*name, {}, optics::builtin_media()));
+    result.faults.add(unknown_medium(*name, optics::builtin_media()));
     return result;
   }
   if (auto fault = outside_range(*medium, wavelengths_nm)) {

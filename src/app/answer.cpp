@@ -97,9 +97,9 @@ Answer answer_check(const Options& options, const Input& input) {
 }
 
 analysis::CoatingRequest coating_request(const Options& options) {
-  analysis::CoatingRequest request{.name = options.name.value_or(""),
-                                   .substrate = options.substrate,
-                                   .wavelengths_nm = options.wavelengths_nm};
+  analysis::CoatingRequest request{.name = options.name.value_or("")};
+  request.substrate = options.substrate;
+  request.wavelengths_nm = options.wavelengths_nm;
   if (options.incident)
     request.incident = *options.incident;
   if (!options.angles_deg.empty())

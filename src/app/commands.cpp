@@ -14,12 +14,11 @@ const std::vector<CommandInfo>& commands() {
   static const std::vector<CommandInfo> all{
       {Command::check, "check", "FILE", "Is the file sound, and are its requirements met?",
        "lightledger check systems/fog-bank-lidar.yaml"},
-      {Command::budget, "budget", "FILE",
-       "How much light arrives, and where did the rest go, station by station?",
+      {Command::budget, "budget", "FILE", "How much light arrives, and where did the rest go?",
        "lightledger budget systems/fog-bank-lidar.yaml --json -"},
       {Command::coating, "coating", "FILE NAME", "What does a coating do against wavelength and angle?",
        "lightledger coating systems/fog-bank-lidar.yaml lens_ar --wavelengths 500:560:20 --angles 0:30:15"},
-      {Command::media, "media", "[NAME]", "Which media are known by name, and what are n and kappa of one?",
+      {Command::media, "media", "[NAME]", "Which media are known, and what are n and kappa of one?",
        "lightledger media fused-silica --wavelengths 400:700:50"}};
   return all;
 }

@@ -38,15 +38,15 @@ std::string command_usage(const CommandInfo& command) {
 }
 
 std::string program_help() {
-  std::string text =
-      "lightledger keeps the ledger of an optical train: every unit of launched power is entered,\n"
-      "followed, and accounted for. The train is described in a YAML file.\n\n";
+  std::string text = "lightledger keeps the ledger of an optical train: every unit of launched power is\n"
+                     "entered, followed, and accounted for. A YAML file describes the train.\n\n";
   text += program_usage() + "\n\n";
   for (const CommandInfo& command : commands())
-    text += fmt::format("  {:8} {:10} {}\n", command.name, command.arguments, command.purpose);
-  text += "\n`lightledger COMMAND --help` lists the options of a command, `lightledger --version` tells the\n"
-          "version. Exit codes: 0 done; 1 a requirement is not met or cannot be told; 2 the input or the\n"
-          "command line is wrong; 3 anything else.\n\n";
+    text +=
+        fmt::format("  {:18} {}\n", fmt::format("{} {}", command.name, command.arguments), command.purpose);
+  text += "\n`lightledger COMMAND --help` lists the options of a command, `lightledger\n"
+          "--version` tells the version. Exit codes: 0 done; 1 a requirement is not met, or\n"
+          "cannot be told; 2 the input or the command line is wrong; 3 anything else.\n\n";
   text += fmt::format("example: {}\n", info(Command::budget).example);
   return text;
 }

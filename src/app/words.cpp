@@ -21,14 +21,13 @@ void add_option(CLI::App& app, const OptionInfo& option, Words& words) {
 
 const std::vector<OptionInfo>& common_options() {
   static const std::vector<OptionInfo> options{
-      {"--json", "PATH", "write the result as JSON; - is stdout, which then holds nothing else",
-       &Words::json},
-      {"--csv", "PATH", "write the table as CSV; - is stdout, which then holds nothing else", &Words::csv},
+      {"--json", "PATH", "the result as JSON; - is stdout, then for it alone", &Words::json},
+      {"--csv", "PATH", "the table as CSV; - is stdout, then for it alone", &Words::csv},
       {"--rays", "N", "scattered rays per field and wavelength", &Words::rays},
       {"--accuracy", "X", "double the rays until the standard error is below X", &Words::accuracy},
       {"--threads", "N", "threads to use; all of the machine's without it", &Words::threads},
       {"--isa", "NAME", "instruction set of the tracer: portable", &Words::isa},
-      {"--set", "PATH=VALUE", "change a value of the file, as fold.tilt=[44,0,0]; repeatable", &Words::set},
+      {"--set", "PATH=VALUE", "a change of the file, as fold.tilt=[44,0,0]; repeatable", &Words::set},
       {"--db", nullptr, "fractions in dB in the text", nullptr, &Words::decibels},
       {"--quiet", nullptr, "no text on stdout", nullptr, &Words::quiet}};
   return options;

@@ -24,7 +24,7 @@ class AddressWalk {
 public:
   AddressWalk(const Document& document, std::string_view address);
 
-  [[nodiscard]] bool arrived() const { return !m_path.empty() && m_rest.empty(); }
+  [[nodiscard]] bool arrived() const { return m_path.size() > 1 && m_rest.empty(); }
   [[nodiscard]] const std::vector<AddressStep>& path() const {
     return m_path;
   }                                                              ///< root first; empty without one

@@ -20,8 +20,8 @@ constexpr std::string_view layers_example = "a list of layers from the substrate
 
 void Coatings::read(Value section) {
   if (m_reader.node(section).kind != Node::Kind::mapping)
-    return m_reader.wrong_kind(section,
-                               "a mapping of names to coatings: {neutral: {ideal: {reflect: 0.005}}}");
+    return m_reader.not_a_mapping(section, "coatings",
+                                  "names of coatings: {neutral: {ideal: {reflect: 0.005}}}");
   for (const Node::Entry& entry : m_reader.node(section).entries) {
     const std::size_t before = m_reader.fault_count();
     check_own_name(m_reader, entry);

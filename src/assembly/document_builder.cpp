@@ -32,10 +32,10 @@ bool is_scalar_tag(std::string_view tag) {
          tag == "null";
 }
 
-/// The parser overlooks that text in quotes has no end where a line end comes last.
-std::string_view without_trailing_blanks(std::string_view text) {
-  return text.substr(0, text.find_last_not_of(" \t\r\n") + 1); // npos + 1 is 0
-}
+/// Where the text ends but for blanks and line ends.
+std::size_t end_of_content(std::string_view text) {
+  return text.find_last_not_of(" \t\r\n") + 1;
+} // npos + 1 is 0
 
 } // namespace
 
@@ -45,19 +45,29 @@ DocumentBuilder::DocumentBuilder(Document& document, Faults& faults, Origin orig
 
 std::optional<NodeId> DocumentBuilder::build(const std::string& text) {
   try {
-    std::istringstream stream(std::string(without_trailing_blanks(text)));
+    // The parser overlooks that text in quotes has no end where a line end comes last; a comment comes later.
+    std::istringstream stream(text + "\n#");
     YAML::Parser parser(stream);
     while (parser.HandleNextDocument(*this)) {
     }
     return m_root;
   } catch (const Abandoned&) {
   } catch (const YAML::Exception& error) {
-    const bool placed = !error.mark.is_null();
-    const auto at = placed ? std::min(static_cast<std::size_t>(error.mark.pos), text.size()) : 0;
-    m_faults.add(syntax_fault(error.msg, placed ? place(error.mark) : Mark{},
-                              std::string_view(text).substr(0, at), std::string_view(text).substr(at)));
+    refuse_syntax(text, error);
   }
   return std::nullopt;
+}
+
+void DocumentBuilder::refuse_syntax(std::string_view text, const YAML::Exception& error) {
+  const std::size_t end = end_of_content(text);
+  const auto at = error.mark.is_null() ? end : static_cast<std::size_t>(error.mark.pos);
+  Mark mark = place(error.mark);
+  if (at >= end) {
+    mark = mark_at(text, end);
+    mark = {mark.line - 1 + m_origin.line, mark.column + (mark.line == 1 ? m_origin.column_shift : 0)};
+  }
+  const std::size_t split = std::min(at, end);
+  m_faults.add(syntax_fault(error.msg, mark, text.substr(0, split), text.substr(split)));
 }
 
 Mark DocumentBuilder::place(const YAML::Mark& mark) const {
@@ -146,6 +156,7 @@ void DocumentBuilder::open(Node::Kind kind, const YAML::Mark& mark, const std::s
   if (m_open.size() == deepest)
     abandon(place(mark), fmt::format("lists and mappings stand more than {} deep in each other", deepest));
   m_open.push_back({make(kind, mark, anchor), std::nullopt});
+  m_extents.back().height = 1;
 }
 
 void DocumentBuilder::close() {

@@ -3,6 +3,7 @@
 #include <lightledger/assembly/document.hpp>
 
 #include <yaml-cpp/eventhandler.h>
+#include <yaml-cpp/exceptions.h>
 #include <yaml-cpp/mark.h>
 
 #include <cstdint>
@@ -59,7 +60,7 @@ private:
   /// What an alias to a node brings with it.
   struct Extent {
     std::uint32_t nodes = 1;
-    int height = 0; ///< levels of collections below
+    int height = 0; ///< levels of collections, its own included
   };
 
   [[nodiscard]] Mark place(const YAML::Mark& mark) const;
@@ -70,6 +71,7 @@ private:
   void close();
   void take_key(Key key);
   void attach(NodeId id, Mark mark);
+  void refuse_syntax(std::string_view text, const YAML::Exception& error);
   void refuse_equal_keys(const Node& mapping);
 
   Document& m_document;

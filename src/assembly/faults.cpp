@@ -15,6 +15,14 @@ char lower(char letter) {
   return static_cast<char>(std::tolower(static_cast<unsigned char>(letter)));
 }
 
+/// Letters are mistaken for each other; digits are meant.
+std::size_t replacement(char a, char b) {
+  const auto is_digit = [](char letter) { return std::isdigit(static_cast<unsigned char>(letter)) != 0; };
+  if (lower(a) == lower(b))
+    return 0;
+  return is_digit(a) && is_digit(b) ? 2 : 1;
+}
+
 /// Number of insertions, deletions, replacements and swaps of neighbours that turn one word into the other
 /// (optimal string alignment, Damerau 1964); both no longer than `longest_word`.
 std::size_t edit_distance(std::string_view a, std::string_view b) {
@@ -27,7 +35,7 @@ std::size_t edit_distance(std::string_view a, std::string_view b) {
   for (std::size_t i = 1; i <= a.size(); ++i) {
     row[0] = i;
     for (std::size_t j = 1; j <= b.size(); ++j) {
-      const std::size_t replaced = last[j - 1] + (lower(a[i - 1]) == lower(b[j - 1]) ? 0 : 1);
+      const std::size_t replaced = last[j - 1] + replacement(a[i - 1], b[j - 1]);
       row[j] = std::min({last[j] + 1, row[j - 1] + 1, replaced});
       if (i > 1 && j > 1 && lower(a[i - 1]) == lower(b[j - 2]) && lower(a[i - 2]) == lower(b[j - 1]))
         row[j] = std::min(row[j], before_last[j - 2] + 1);

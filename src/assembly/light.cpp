@@ -17,10 +17,15 @@ constexpr std::string_view object_forms = "infinity, or {distance: 1200}";
 constexpr std::string_view field_forms = "a list of [x, y] or {at: [x, y], weight: w, name: n}";
 
 std::optional<double> read_object(Reader& reader, Value value) {
-  if (reader.node(value).kind != Node::Kind::mapping) {
-    if (reader.node(value).scalar != "infinity")
-      reader.fault(reader.mark(value), fmt::format("'object' is {}", quoted(reader.node(value).scalar)),
-                   std::string(object_forms), reader.suggest(reader.node(value).scalar, {"infinity"}));
+  const Node& node = reader.node(value);
+  if (node.kind == Node::Kind::scalar) {
+    if (node.scalar != "infinity")
+      reader.fault(node.mark, fmt::format("'object' is {}", quoted(node.scalar)), std::string(object_forms),
+                   reader.suggest(node.scalar, {"infinity"}));
+    return std::nullopt;
+  }
+  if (node.kind != Node::Kind::mapping) {
+    reader.wrong_kind(value, object_forms);
     return std::nullopt;
   }
   Mapping object(reader, value, "an object");

@@ -16,7 +16,7 @@ std::optional<Mapping> Mapping::read(Reader& reader, Value value, std::string_vi
                                      std::string_view accepted) {
   if (reader.node(value).kind == Node::Kind::mapping)
     return Mapping(reader, value, what);
-  reader.wrong_kind(value, accepted);
+  reader.not_a_mapping(value, what, accepted);
   return std::nullopt;
 }
 

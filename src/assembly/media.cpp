@@ -22,7 +22,7 @@ void check_own_name(Reader& reader, const Node::Entry& entry) {
 
 void Media::read(Value section) {
   if (m_reader.node(section).kind != Node::Kind::mapping)
-    return m_reader.wrong_kind(section, "a mapping of names to media: {resin: {index: 1.49}}");
+    return m_reader.not_a_mapping(section, "media", "names of media: {resin: {index: 1.49}}");
   for (const Node::Entry& entry : m_reader.node(section).entries) {
     check_own_name(m_reader, entry);
     m_ids.emplace(entry.key, static_cast<MediumId>(m_media.size()));

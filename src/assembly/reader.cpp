@@ -103,6 +103,15 @@ void Reader::wrong_kind(Value value, std::string_view accepted) {
   });
 }
 
+void Reader::not_a_mapping(Value value, std::string_view what, std::string_view accepted) {
+  fault_from([&] {
+    return Fault{mark(value),
+                 fmt::format("{} is a mapping, but this is {}", what, kind_words(node(value))),
+                 std::string(accepted),
+                 {}};
+  });
+}
+
 bool Reader::within(Value value, double number, Bound bound) {
   const auto refuse = [&](std::string_view why) {
     fault_from([&] {
@@ -221,7 +230,7 @@ std::optional<std::vector<double>> Reader::row(Value value, std::size_t count, U
     return std::nullopt;
   }
   if (list.items.size() != count) {
-    fault(mark(value), fmt::format("'{}' has {} numbers, not {}", value.label, list.items.size(), count),
+    fault(mark(value), fmt::format("'{}' holds {} values, not {}", value.label, list.items.size(), count),
           example_row(count, unit));
     return std::nullopt;
   }

@@ -70,6 +70,8 @@ public:
 
   /// Adds that this is not the kind of value that is wanted.
   void wrong_kind(Value value, std::string_view accepted);
+  /// Adds that this is not a mapping, though `what` ("a beam") is one.
+  void not_a_mapping(Value value, std::string_view what, std::string_view accepted);
 
 private:
   std::optional<std::vector<double>> row(Value value, std::size_t count, Unit unit, Bound bound);

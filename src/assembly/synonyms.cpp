@@ -90,6 +90,19 @@ constexpr auto meanings = std::to_array<Meaning>({
     {"waveplate retarder plate", "retard"},
     {"rotator", "rotate"},
     {"inf infinite .inf", "infinity"},
+    {"aluminium aluminum", "Al"},
+    {"silver", "Ag"},
+    {"gold", "Au"},
+    {"copper", "Cu"},
+    {"chromium chrome", "Cr"},
+    {"nickel", "Ni"},
+    {"titanium", "Ti"},
+    {"tungsten", "W"},
+    {"platinum", "Pt"},
+    {"silicon", "Si"},
+    {"germanium", "Ge"},
+    {"silica quartz fused-quartz", "fused-silica"},
+    {"bk7 n-bk7", "crown-517642"},
 });
 
 bool says(std::string_view said, std::string_view word) {

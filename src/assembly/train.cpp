@@ -34,11 +34,13 @@ void Train::read(Value section) {
 
 void Train::read_station(Value value, bool last) {
   auto station = Mapping::read(m_reader, {value.id, "station"}, "a station", station_example);
+  m_current_known = m_current_known && station;
   if (!station)
     return;
   Station result{};
   read_name(*station, result);
   const Does does = read_does(*station);
+  m_current_known = m_current_known && does != Does::unavailable;
   if (does == Does::unavailable)
     return;
   station->call(kinds[static_cast<std::size_t>(does)]);

@@ -52,7 +52,8 @@ private:
   Coatings& m_coatings;
   Coverage& m_coverage;
   Assembly& m_assembly;
-  MediumId m_current; ///< the medium that the light arrives in at the next station
+  MediumId m_current;          ///< the medium that the light arrives in at the next station
+  bool m_current_known = true; ///< not so after a fault; then nothing is concluded from it
   std::vector<bool> m_coating_used;
   std::unordered_set<std::string> m_names;
 };

@@ -18,12 +18,12 @@ void Train::read_refracting(Mapping& station, Surface& surface) {
   const auto coating = read_coating(station);
   surface.roughness_nm = station.number_or(0.0, "roughness", Unit::nanometres, Bound::not_negative);
   surface.beyond = into ? m_media.named(*into) : std::nullopt;
-  if (!surface.beyond)
-    return;
-  m_coverage.check_transparent(*surface.beyond, m_reader.mark(*into));
-  m_current = *surface.beyond;
+  if (surface.beyond)
+    m_coverage.check_transparent(*surface.beyond, m_reader.mark(*into));
   if (coating)
     surface.coating = placed(*coating, surface);
+  m_current = surface.beyond.value_or(m_current);
+  m_current_known = surface.beyond.has_value();
 }
 
 void Train::read_reflecting(Mapping& station, Surface& surface) {
@@ -78,7 +78,7 @@ CoatingUse Train::placed(const CoatingWritten& coating, const Surface& surface) 
   CoatingUse use{coating.id, coating.substrate.value_or(Side::beyond)};
   const bool needs_side =
       m_coatings.sound(coating.id) && m_coatings.layered(coating.id) && !coating.substrate;
-  if (needs_side && surface.beyond)
+  if (needs_side && m_current_known && surface.beyond)
     use.substrate = side_with_body(coating, surface.before, *surface.beyond);
   return use;
 }

@@ -33,7 +33,7 @@ const std::array<Words, 29> all_words{{
     {said::MAP_VALUE, "a second colon stands here, or a key is not in the column of its neighbours",
      "one key: value a line; text with a colon in quotes"},
     {said::UNKNOWN_TOKEN, "no value can begin with this character", "text in quotes"},
-    {said::EOF_IN_SCALAR, "text in quotes has no end", ""},
+    {said::EOF_IN_SCALAR, "text in quotes begins above and has no end", ""},
     {said::DOC_IN_SCALAR, "text in quotes has no end before the document's", ""},
     {said::CHAR_IN_SCALAR, "this character cannot stand in text without quotes", "text in quotes"},
     {said::INVALID_ESCAPE, "this backslash begins no known escape", "text in single quotes, or \\\\"},

@@ -58,7 +58,7 @@ std::string requirements_table(const Judgement& judgement, const TextStyle& styl
     const char* sense = verdict.sense == assembly::Sense::at_least ? ">=" : "<=";
     const std::string value = verdict.value ? figure(*verdict.value, verdict, style) : "-";
     table.add({std::to_string(i + 1), shortened(on_one_line(verdict.quantity), style.width - others_width),
-               Cell(sense), figure(verdict.limit, verdict, style), value, margin(verdict, style),
+               sense, figure(verdict.limit, verdict, style), value, margin(verdict, style),
                Cell(verdict_word(verdict), verdict.met == false)});
   }
   return table.text(style.emphasis);

@@ -1,6 +1,7 @@
 #pragma once
 
 #include <string>
+#include <utility>
 #include <vector>
 
 namespace lightledger::report {
@@ -14,7 +15,8 @@ struct Column {
 };
 
 struct Cell {
-  Cell(std::string content = {}, bool is_strong = false) : text(std::move(content)), strong(is_strong) {}
+  Cell(std::string content, bool is_strong = false) : text(std::move(content)), strong(is_strong) {}
+  Cell(const char* content, bool is_strong = false) : Cell(std::string(content), is_strong) {}
 
   std::string text;
   bool strong; ///< bold where emphasis is allowed

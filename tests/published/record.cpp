@@ -18,9 +18,15 @@ std::string this_test() {
   return test == nullptr ? "" : fmt::format("{}.{}", test->test_suite_name(), test->name());
 }
 
-/// Six digits, on which all machines agree.
+/// Six digits, on which all machines agree: a tie is decided after eleven, where rounding errors are gone.
 std::string rounded(double value) {
-  return fmt::format("{:.6g}", value);
+  return fmt::format("{:.6g}", std::stod(fmt::format("{:.11g}", value)));
+}
+
+/// In the unit in which `text` is printed.
+std::string rounded_like(std::string_view text, double value) {
+  const double scale = quoted(text).scale;
+  return rounded(value * scale) + (scale == 1.0 ? "" : " %");
 }
 
 /// Values of few digits are meant exactly; of others the last digit is rounded.
@@ -50,7 +56,7 @@ Sheet& Sheet::derived(std::string_view what, std::string_view value, double ours
   const testing::ScopedTrace trace{__FILE__, __LINE__, fmt::format("{}: {}", m_id, what)};
   expect_computed(value, ours, more.relative);
   enter(m_id, m_title, m_source,
-        {std::string{what}, "", "formula", std::string{value}, rounded(ours * quoted(value).scale),
+        {std::string{what}, "", "formula", std::string{value}, rounded_like(value, ours),
          fmt::format("{:.2g} of it", more.relative), this_test()});
   return *this;
 }
@@ -73,7 +79,7 @@ void Sheet::check_published(std::string_view what, std::string_view value, std::
     expect_computed(more.computed, ours, more.relative);
   enter(m_id, m_title, m_source,
         {std::string{what}, std::string{value}, std::string{origin}, std::string{more.computed},
-         rounded(ours * published.scale), fmt::format("{:.2g}", within), this_test()});
+         rounded_like(value, ours), fmt::format("{:.2g}", within), this_test()});
 }
 
 } // namespace lightledger::published

@@ -36,7 +36,7 @@ public:
 
   /// A value that was read in the source.
   Sheet& printed(std::string_view what, std::string_view value, double ours, More more = {});
-  /// A value recalled from the source, and confirmed by an independent computation.
+  /// A value recalled from the source, which was not at hand.
   Sheet& recalled(std::string_view what, std::string_view value, double ours, More more = {});
   /// A value that the source does not print, computed independently from its formula.
   Sheet& derived(std::string_view what, std::string_view value, double ours, More more = {});

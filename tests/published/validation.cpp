@@ -33,9 +33,9 @@ Published values that lightledger reproduces. This file is written by the test p
 of its checks pass; each line names the test that guards it.
 
 - *published*: the value as its source prints it; *ours* in the same unit, to six digits.
-- *from*: **print**, the value was read in the source; **memory**, it was recalled from the source and confirmed by
-  an independent computation; **formula**, the source gives the formula, and the value was computed from it
-  independently, with 50 digits; **identity**, it follows exactly.
+- *from*: **print**, the value was read in the source; **memory**, it was recalled from the source without having it at
+  hand; **formula**, the source gives the formula, and the value was computed from it independently, with 50 digits;
+  **identity**, it follows exactly.
 - *within*: the tolerance of the check, against print half a unit of the last digit unless there is a reason for
   another. Where a *computed* value stands beside, ours agrees with it too, as a rule to 1e-10 of it or its last digit.
 )";

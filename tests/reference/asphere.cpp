@@ -71,9 +71,10 @@ std::optional<Interval> crossing(const Approach& ray, double from, double to) {
   return Interval{std::min(from, turn), std::max(from, turn)};
 }
 
-/// Walks from the tangent plane outward on both sides, in growing steps, until the height changes its sign.
-std::optional<Interval> nearest_crossing(const Approach& ray, const Interval& allowed) {
-  const double start = std::clamp(0.0, allowed.from, allowed.to);
+/// Walks from the tangent plane (or from the equator, where that comes before it) outward on both sides, in
+/// growing steps, until the height changes its sign.
+std::optional<Interval> nearest_crossing(const Approach& ray, double tangent_plane, const Interval& allowed) {
+  const double start = std::clamp(tangent_plane, allowed.from, allowed.to);
   const double scale = std::min(std::abs(ray.height(start)), ray.radius(start));
   const double first_step = std::max(scale, 1e-12) / 50.0;
   constexpr int steps = 200;
@@ -112,36 +113,48 @@ double root_within(const Approach& ray, Interval bracket) {
   return t;
 }
 
+/// Whether the terms slope so much, where the ray meets the surface or the tangent plane, that it may meet
+/// the surface more than once, or the meeting is so oblique that Newton's iteration may leave it.
+bool steep(const Approach& ray, double hit, double tangent_plane, double cosine) {
+  const assembly::Asphere terms{std::numeric_limits<double>::infinity(), 0.0, ray.shape.terms};
+  const auto slope = [&](double t) { return std::abs(sag_at(terms, ray.radius(t)).slope); };
+  const double whole_slope = std::abs(sag_at(ray.shape, ray.radius(hit)).slope);
+  return std::max(slope(hit), slope(tangent_plane)) > 0.3 || whole_slope > 5.0 || cosine < 0.1;
+}
+
+Vector unit_normal(const assembly::Asphere& shape, const Vector& hit) {
+  const double r = hit.head<2>().norm();
+  if (r == 0.0)
+    return Vector::UnitZ();
+  const double slope = sag_at(shape, r).slope;
+  return Vector(-slope * hit.x() / r, -slope * hit.y() / r, 1.0).normalized();
+}
+
 } // namespace
 
 Meeting meet_asphere(const assembly::Asphere& shape, const Frame& surface, const Ray& ray) {
-  const Vector point = surface.local(ray.point);
   const Vector direction = surface.axes.transpose() * ray.direction;
-  const double to_tangent_plane = -point.z() / direction.z();
-  const Approach approach{shape, point + to_tangent_plane * direction, direction};
+  const double to_nearest = (surface.origin - ray.point).dot(ray.direction); // to the vertex
+  const Approach approach{shape, surface.local(ray.point + to_nearest * ray.direction), direction};
+  const double tangent_plane = -approach.start.z() / direction.z();
 
   const Interval allowed = within_equator(approach);
-  if (!std::isfinite(to_tangent_plane) || allowed.from > allowed.to)
+  if (!std::isfinite(tangent_plane) || allowed.from > allowed.to)
     return {};
-  const auto bracket = nearest_crossing(approach, allowed);
+  const auto bracket = nearest_crossing(approach, tangent_plane, allowed);
   if (!bracket)
     return {};
   const double t = root_within(approach, *bracket);
   const Vector hit = approach.at(t);
-  const double r = approach.radius(t);
-  const Sag sag = sag_at(shape, r);
-  const Eigen::Vector2d outward = r > 0.0 ? Eigen::Vector2d(hit.head<2>() / r) : Eigen::Vector2d::Zero();
-  const Vector normal = Vector(-sag.slope * outward.x(), -sag.slope * outward.y(), 1.0).normalized();
+  const Vector normal = unit_normal(shape, hit);
 
   Meeting meeting;
-  meeting.hit = Hit{to_tangent_plane + t, surface.bench(hit), surface.axes * normal};
-  const double c = 1.0 / shape.radius;
+  meeting.hit = Hit{to_nearest + t, surface.bench(hit), surface.axes * normal};
   const double cosine = std::abs(normal.dot(direction));
-  meeting.doubtful = cosine * cosine < doubtful_within ||
-                     std::abs(1.0 - (1.0 + shape.conic) * c * c * r * r) < doubtful_within;
-  const assembly::Asphere terms{std::numeric_limits<double>::infinity(), 0.0, shape.terms};
-  const double terms_slope = sag_at(terms, std::max(r, approach.radius(0.0))).slope;
-  meeting.steep = std::abs(terms_slope) > 0.5 || std::abs(sag.slope) > 5.0 || cosine < 0.1;
+  const double c = 1.0 / shape.radius;
+  const double before_equator = 1.0 - (1.0 + shape.conic) * c * c * hit.head<2>().squaredNorm();
+  meeting.doubtful = cosine * cosine < doubtful_within || before_equator < doubtful_within;
+  meeting.steep = steep(approach, t, tangent_plane, cosine);
   return meeting;
 }
 

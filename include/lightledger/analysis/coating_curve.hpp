@@ -15,11 +15,11 @@ inline constexpr std::string_view bare = "bare";
 
 /// What is asked of one coating.
 struct CoatingRequest {
-  std::string name;                     ///< a coating of the file, or `bare`
-  std::string incident = "air";         ///< the medium that light comes from
-  std::optional<std::string> substrate; ///< none: that of the first station that uses the coating
-  std::vector<double> wavelengths_nm;   ///< empty: those of the assembly's light
-  std::vector<double> angles_deg{0.0};  ///< in the medium of incidence, 0 to 90
+  std::string name;                       ///< a coating of the file, or `bare`
+  std::string incident = "air";           ///< the medium that light comes from
+  std::optional<std::string> substrate{}; ///< none: that of the first station that uses the coating
+  std::vector<double> wavelengths_nm{};   ///< empty: those of the assembly's light
+  std::vector<double> angles_deg{0.0};    ///< in the medium of incidence, 0 to 90
 };
 
 /// What the coating does to one polarization: fractions of power, phases in degrees in (−180, 180].

@@ -19,7 +19,11 @@ inline constexpr double opaque_kappa = 1e-3;
 /// A transparent medium of index below this counts as a gas (contract §3).
 inline constexpr double gas_index = 1.01;
 
-[[nodiscard]] inline bool opaque(Index index) { return index.kappa > opaque_kappa; }
-[[nodiscard]] inline bool gas(Index index) { return !opaque(index) && index.n < gas_index; }
+[[nodiscard]] inline bool opaque(Index index) {
+  return index.kappa > opaque_kappa;
+}
+[[nodiscard]] inline bool gas(Index index) {
+  return !opaque(index) && index.n < gas_index;
+}
 
 } // namespace lightledger::optics

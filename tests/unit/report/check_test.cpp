@@ -50,9 +50,9 @@ TEST(CheckText, ListsLimitValueAndMargin) {
   EXPECT_EQ(text_of({met, missed}),
             R"(Fog-bank lidar receiver    532 nm, linear 0 deg
 
-     quantity                         limit    value    margin
-  1  delivered                  >=   0.8000   0.8899   0.08990  met
-  2  budget.stations.fold.a...  <=  0.05000  0.08870  -0.03870  not met
+     quantity                             limit    value    margin
+  1  delivered                      >=   0.8000   0.8899   0.08990  met
+  2  budget.stations.fold.absorbed  <=  0.05000  0.08870  -0.03870  not met
 
 The file is sound. Requirements not met: 2.
 )");
