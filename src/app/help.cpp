@@ -38,8 +38,8 @@ std::string command_usage(const CommandInfo& command) {
 }
 
 std::string program_help() {
-  std::string text = "lightledger keeps the ledger of an optical train: every unit of launched power is\n"
-                     "entered, followed, and accounted for. A YAML file describes the train.\n\n";
+  std::string text = "lightledger keeps the ledger of an optical train: every unit of launched power\n"
+                     "is entered, followed, and accounted for. A YAML file describes the train.\n\n";
   text += program_usage() + "\n\n";
   for (const CommandInfo& command : commands())
     text +=

@@ -18,7 +18,7 @@ public:
 
   /// A fault at the place of use where the medium is not known at one of the light's wavelengths.
   void check_known(MediumId id, Mark use);
-  /// The same at one wavelength of another origin; `whose` begins the clause about it: "the layer's 'at' is".
+  /// The same at the wavelength at which a layer's waves are counted.
   void check_known_at(MediumId id, double nm, Mark use);
   /// A fault where rays cannot go on in the medium: not known, or opaque.
   void check_transparent(MediumId id, Mark use);

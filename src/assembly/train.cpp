@@ -57,7 +57,7 @@ void Train::read_station(Value value, bool last) {
   if (m_reader.fault_count() != 0)
     return; // nothing will come of it, so nothing is kept
   result.surface = static_cast<SurfaceId>(m_assembly.surfaces.size());
-  m_assembly.surfaces.push_back(std::move(surface));
+  m_assembly.surfaces.push_back(surface);
   m_assembly.stations.push_back(std::move(result));
 }
 

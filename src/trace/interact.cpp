@@ -122,6 +122,20 @@ void aim_passed(const PlanOp& op, const Meeting& m, RayBlock& out) {
   }
 }
 
+/// A rotator turns the field by turning the basis that it is written in: u' = cosθ u + sinθ k × u.
+void turn_basis(const PlanOp& op, RayBlock& out) {
+  const double c = op.turn[0];
+  const double s = op.turn[1];
+  for (int i = 0; i < out.count; ++i) {
+    const double ux = out.u[0][i];
+    const double uy = out.u[1][i];
+    const double uz = out.u[2][i];
+    out.u[0][i] = c * ux + s * (out.d[1][i] * uz - out.d[2][i] * uy);
+    out.u[1][i] = c * uy + s * (out.d[2][i] * ux - out.d[0][i] * uz);
+    out.u[2][i] = c * uz + s * (out.d[0][i] * uy - out.d[1][i] * ux);
+  }
+}
+
 void aim_bounced(const Meeting& m, RayBlock& out) {
   for (int i = 0; i < m.count; ++i)
     for (int axis = 0; axis < 3; ++axis)
@@ -248,12 +262,15 @@ void interact(const PlanLeg& leg, const PlanOp& op, const optics::Coherency& coh
   if (out.pass != nullptr) {
     leave(leg, m, field, passed, bulk, in, *out.pass);
     aim_passed(op, m, *out.pass);
+    if (op.amplitude == AmplitudeKind::element)
+      turn_basis(op, *out.pass);
     out.pass->alive = bits(m.inside, m.count) & bits(m.crosses, m.count);
   }
   if (out.bounce != nullptr) {
     leave(leg, m, field, bounced, bulk, in, *out.bounce);
     aim_bounced(m, *out.bounce);
-    out.bounce->alive = op.amplitude == AmplitudeKind::none ? 0 : bits(m.inside, m.count);
+    const bool reflects = op.amplitude != AmplitudeKind::none && op.amplitude != AmplitudeKind::element;
+    out.bounce->alive = reflects ? bits(m.inside, m.count) : 0;
   }
 }
 

@@ -31,6 +31,21 @@ void senkrecht(Meeting& m) {
   }
 }
 
+/// s = unit(A − (A·k) k), the axis of an element projected across the ray.
+void project_axis(const PlanOp& op, Meeting& m) {
+  for (int i = 0; i < m.count; ++i) {
+    m.sin1_squared[i] = m.d[0][i] * m.d[0][i] + m.d[1][i] * m.d[1][i];
+    const double along = op.axis[0] * m.d[0][i] + op.axis[1] * m.d[1][i];
+    const double sx = op.axis[0] - along * m.d[0][i];
+    const double sy = op.axis[1] - along * m.d[1][i];
+    const double sz = -along * m.d[2][i];
+    const double scale = 1.0 / std::sqrt(std::max(sx * sx + sy * sy + sz * sz, 1e-300));
+    m.s[0][i] = sx * scale;
+    m.s[1][i] = sy * scale;
+    m.s[2][i] = sz * scale;
+  }
+}
+
 /// cosφ = s·u and sinφ = s·v with v = d × u.
 void turn(Meeting& m) {
   for (int i = 0; i < m.count; ++i) {
@@ -56,22 +71,42 @@ void refract(const PlanOp& op, Meeting& m) {
   }
 }
 
-} // namespace
-
-void orient(const PlanOp& op, Meeting& m) {
-  senkrecht(m);
-  if (op.amplitude != AmplitudeKind::none) {
-    turn(m);
-    refract(op, m);
-    return;
+void go_straight(Meeting& m) {
+  for (int i = 0; i < m.count; ++i) {
+    m.crosses[i] = mask_of(true);
+    m.cos2[i] = m.cos1[i];
   }
+}
+
+/// Keeps the basis that the light came with.
+void keep(Meeting& m) {
   for (int i = 0; i < m.count; ++i) {
     for (int axis = 0; axis < 3; ++axis)
       m.s[axis][i] = m.u[axis][i];
     m.turn_cos[i] = 1.0;
     m.turn_sin[i] = 0.0;
-    m.crosses[i] = mask_of(true);
-    m.cos2[i] = m.cos1[i];
+  }
+}
+
+} // namespace
+
+void orient(const PlanOp& op, Meeting& m) {
+  switch (op.amplitude) {
+  case AmplitudeKind::none:
+    senkrecht(m);
+    keep(m);
+    go_straight(m);
+    break;
+  case AmplitudeKind::element:
+    project_axis(op, m);
+    turn(m);
+    go_straight(m);
+    break;
+  default:
+    senkrecht(m);
+    turn(m);
+    refract(op, m);
+    break;
   }
 }
 

@@ -35,6 +35,18 @@ void untouched(Meeting& m) {
   }
 }
 
+/// A polarizer, retarder or rotator; what it blocks is absorbed.
+void element(const PlanOp& op, Meeting& m) {
+  for (int i = 0; i < m.count; ++i) {
+    set(m.r_s, i, 0.0);
+    set(m.r_p, i, 0.0);
+    set(m.t_s, i, op.along[0], op.along[1]);
+    set(m.t_p, i, op.across[0], op.across[1]);
+    m.absorbed_s[i] = op.blocked[0];
+    m.absorbed_p[i] = op.blocked[1];
+  }
+}
+
 /// Fresnel (1823) between transparent media. Numerators are products, so that nothing cancels near equal
 /// indices or Brewster's angle; beyond the critical angle the root is imaginary and |r| = 1.
 void fresnel(const PlanOp& op, Meeting& m) {
@@ -113,6 +125,9 @@ void respond(const PlanOp& op, Meeting& m) {
     break;
   case AmplitudeKind::ideal:
     ideal(op, m);
+    break;
+  case AmplitudeKind::element:
+    element(op, m);
     break;
   }
   const double swallowed = op.swallows ? 1.0 : 0.0;

@@ -8,6 +8,7 @@
 #include <Eigen/Geometry>
 #include <algorithm>
 #include <cmath>
+#include <numeric>
 #include <stdexcept>
 
 namespace lightledger::properties {
@@ -65,10 +66,11 @@ RayBlock block_of(const std::vector<reference::Ray>& rays) {
   return block;
 }
 
-Run run(const trace::Train& train, const RayBlock& launched, std::size_t wavelength) {
+Run run(const trace::Train& train, const RayBlock& launched, std::size_t wavelength, const Meddle& meddle) {
   const trace::Plan& plan = train.plans.at(wavelength);
   const optics::Coherency coherency = optics::coherency(train.assembly->light.polarization);
   Run result{trace::Ledger(train.assembly->stations.size()), {}, 0};
+  result.ledger.launched = std::accumulate(launched.w, launched.w + launched.count, 0.0);
   RayBlock block = launched;
   for (const trace::Path::Step& step : trace::intended_path(*train.assembly, train.routes).steps) {
     if (block.alive == 0)
@@ -79,6 +81,8 @@ Run run(const trace::Train& train, const RayBlock& launched, std::size_t wavelen
     (step.act == trace::Act::bounce ? out.bounce : out.pass) = &block;
     trace::interact(plan.legs[step.leg], plan.ops[step.op], coherency, block, out);
     result.ledger.enter(step.visit, entry);
+    if (meddle)
+      meddle(step.visit, block);
     result.behind.push_back(block);
     ++result.reached;
   }

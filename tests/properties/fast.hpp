@@ -5,6 +5,7 @@
 
 #include <lightledger/trace/tracer.hpp>
 
+#include <functional>
 #include <memory>
 #include <vector>
 
@@ -22,13 +23,16 @@ struct Both {
 /// One ray as a block, with the double-pole basis, unit Jones matrix and weight 1.
 [[nodiscard]] trace::RayBlock block_of(const std::vector<reference::Ray>& rays);
 
-/// The rows of the stations that a block reaches along the intended path, and the block behind each of them.
+/// The rows of the stations that a block reaches along the intended path, and the block behind each of them;
+/// `meddle` may spoil each of these.
 struct Run {
   trace::Ledger ledger;
   std::vector<trace::RayBlock> behind;
   std::size_t reached = 0; ///< stations
 };
-[[nodiscard]] Run run(const trace::Train& train, const trace::RayBlock& launched, std::size_t wavelength = 0);
+using Meddle = std::function<void(std::size_t station, trace::RayBlock& behind)>;
+[[nodiscard]] Run run(const trace::Train& train, const trace::RayBlock& launched, std::size_t wavelength = 0,
+                      const Meddle& meddle = {});
 
 /// The polarization matrix, in bench coordinates, of a block's first ray behind a station.
 [[nodiscard]] reference::PolarizationMatrix polarization_matrix(const trace::Train& train,

@@ -61,6 +61,19 @@ std::array<double, 3> turn_back(const Place& place, Act act) {
   return angles_of(axes.transpose() * place.arriving.axes * about_face());
 }
 
+/// The plane of launch as a detector.
+void add_detector(assembly::Assembly& assembly) {
+  Surface plane;
+  plane.effect = assembly::Sensor{};
+  plane.before = medium_behind(assembly, assembly.stations.back());
+  Station detector;
+  detector.name = "launch";
+  detector.surface = static_cast<assembly::SurfaceId>(assembly.surfaces.size());
+  detector.intended = Act::detect;
+  assembly.surfaces.push_back(plane);
+  assembly.stations.push_back(detector);
+}
+
 } // namespace
 
 std::array<double, 3> angles_of(const Rotation& rotation) {
@@ -86,7 +99,22 @@ Reversed reversed(const assembly::Assembly& assembly, const Bench& bench) {
     }
     result.assembly.stations.push_back(station);
   }
+  add_detector(result.assembly);
   return result;
+}
+
+Ray returning(const RayRecord& there, const Frame& entrance) {
+  const Step& last = there.steps[there.steps.size() - 2];
+  return {entrance.local(last.point + last.direction), -entrance.axes.transpose() * last.direction};
+}
+
+bool same_places(const RayRecord& there, const RayRecord& back, const Frame& entrance) {
+  const std::size_t shared = there.steps.size() - 1; // all but the detectors
+  for (std::size_t i = 0; i < shared; ++i)
+    if (i >= back.steps.size() || !back.steps[i].hit ||
+        (entrance.bench(back.steps[i].point) - there.steps[shared - 1 - i].point).norm() > 1e-6)
+      return false;
+  return true;
 }
 
 } // namespace lightledger::reference

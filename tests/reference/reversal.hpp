@@ -1,6 +1,6 @@
 #pragma once
 
-#include "reference/bench.hpp"
+#include "reference/tracer.hpp"
 
 #include <lightledger/assembly/assembly.hpp>
 
@@ -8,13 +8,22 @@ namespace lightledger::reference {
 
 /// A train met from its other end.
 struct Reversed {
-  assembly::Assembly assembly; ///< the stations before the detector in reverse order, without a detector
+  assembly::Assembly assembly; ///< the stations in reverse order, and a detector where the light was launched
   Frame entrance;              ///< the reversed train's bench, as it lies on the bench of the train
 };
 
 /// Turns a train round so that the same ray runs back through the same places. Shifts must stand where the
 /// axis leaves as it arrived (Variety::reversible), for a station is shifted across the axis that arrives.
 [[nodiscard]] Reversed reversed(const assembly::Assembly& assembly, const Bench& bench);
+
+/// A ray that reached the detector, sent back from behind the last station before it, on the reversed train's
+/// bench.
+[[nodiscard]] Ray returning(const RayRecord& there, const Frame& entrance);
+
+/// Whether a ray that runs back meets the surfaces where it met them on the way there. Behind a strongly
+/// curved mirror it may meet another point of it that is nearer to the tangent plane, and so goes astray by
+/// the rule of the contract.
+[[nodiscard]] bool same_places(const RayRecord& there, const RayRecord& back, const Frame& entrance);
 
 /// The angles a, b, c of a rotation Rx(a) Ry(b) Rz(c), in degrees.
 [[nodiscard]] std::array<double, 3> angles_of(const Rotation& rotation);

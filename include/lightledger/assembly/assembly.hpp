@@ -11,7 +11,8 @@
 #include <variant>
 #include <vector>
 
-/// What the user wrote, as values: mm on the bench, nm for wavelengths, films and roughness, degrees for angles.
+/// What the user wrote, as values: mm on the bench, nm for wavelengths, films and roughness, degrees for
+/// angles.
 namespace lightledger::assembly {
 
 class Document;
@@ -58,7 +59,7 @@ using Sampling = std::variant<ToAccuracy, Rings, Grid, Scattered>;
 struct Light {
   std::vector<Wavelength> wavelengths;
   optics::State polarization;
-  std::optional<double> object_distance; ///< mm before the first station; none: infinity; negative: converging
+  std::optional<double> object_distance; ///< mm before the first station; negative: beyond; none: infinity
   std::vector<Field> fields{Field{}};
   Beam beam;
   Sampling sampling = ToAccuracy{};

@@ -37,12 +37,13 @@ private:
 };
 
 /// The report for a person: per fault the place, what is wrong, the line with a caret, what is accepted, a
-/// suggestion; then the count where there are more than are shown. Always below 40 kB, long lines are cut around
-/// the caret and control characters replaced. `text` is the file's content.
+/// suggestion; then the count where there are more than are shown. Always below 40 kB, long lines are cut
+/// around the caret and control characters replaced. `text` is the file's content.
 [[nodiscard]] std::string describe(const Faults& faults, std::string_view file, std::string_view text);
 
-/// The candidate nearest to `word` by edit distance (case-insensitive, transpositions count once), or empty where
-/// none is near enough to be meant.
-[[nodiscard]] std::string_view nearest(std::string_view word, const std::vector<std::string_view>& candidates);
+/// The candidate nearest to `word` by edit distance (case-insensitive, transpositions count once), or empty
+/// where none is near enough to be meant.
+[[nodiscard]] std::string_view nearest(std::string_view word,
+                                       const std::vector<std::string_view>& candidates);
 
 } // namespace lightledger::assembly

@@ -14,8 +14,9 @@ enum class LegKind : std::uint8_t { along_z, rigid };
 enum class ShapeKind : std::uint8_t { plane, conic, asphere };
 enum class ClearKind : std::uint8_t { unlimited, disc, rectangle, ellipse };
 /// How a meeting changes the field: not at all, by the Fresnel amplitudes of two transparent media, by those
-/// of an absorbing backing, by a stack of layers, or by powers that are the same at every angle.
-enum class AmplitudeKind : std::uint8_t { none, fresnel, metal, stack, ideal };
+/// of an absorbing backing, by a stack of layers, by powers that are the same at every angle, or by fixed
+/// amplitudes along and across an axis in the surface's plane.
+enum class AmplitudeKind : std::uint8_t { none, fresnel, metal, stack, ideal, element };
 
 /// From the frame of one surface to that of the next: p' = rotation · p + shift (row by row, mm).
 struct PlanLeg {
@@ -51,7 +52,11 @@ struct PlanOp {
   std::uint32_t layer_count;
   double reflect_s, reflect_p; ///< powers of an ideal coating
   double transmit_s, transmit_p;
-  bool swallows; ///< what crosses is absorbed: an opaque backing
+  double axis[2];             ///< of an element, in the surface's x, y
+  double along[2], across[2]; ///< its amplitudes, real and imaginary part
+  double blocked[2];          ///< the power it absorbs along and across
+  double turn[2];             ///< cosine and sine of the angle by which it turns the field about the ray
+  bool swallows;              ///< what crosses is absorbed: an opaque backing
 
   double scatter_reflected;   ///< x = this · cosθ1 (Bennett & Porteus 1961)
   double scatter_transmitted; ///< x = this · |n1 cosθ1 − n2 cosθ2|

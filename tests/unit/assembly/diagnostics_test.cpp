@@ -76,7 +76,7 @@ TEST(Describe, KeepsTerminalCommandsOut) {
                                    "\x1b]0;x\x07",
                                    "a\x9b"
                                    "b"},
-                                  "\x1b[2J \xe2\x80\xae");
+                                  "\x1b[2J \xe2\x80\x8b");
   EXPECT_EQ(text,
             "a.yaml:1:1  wrong ?[31m\n    ?[2J ?\n    ^\n    accepted: ?]0;x?\n    did you mean 'a?b'?\n");
 }

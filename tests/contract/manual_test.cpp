@@ -1,0 +1,109 @@
+#include "program.hpp"
+
+#include <gmock/gmock.h>
+#include <gtest/gtest.h>
+
+#include <regex>
+#include <sstream>
+
+/// What README and manual show is what happens.
+namespace lightledger::contract {
+namespace {
+
+using testing::HasSubstr;
+using testing::SizeIs;
+
+/// The contents of all fenced blocks of a language, in order.
+std::vector<std::string> blocks(const std::string& document, const std::string& language) {
+  std::vector<std::string> found;
+  std::istringstream lines(content(project(document)));
+  bool inside = false;
+  for (std::string line; std::getline(lines, line);) {
+    if (!inside && line == "```" + language) {
+      inside = true;
+      found.emplace_back();
+    } else if (inside && line == "```") {
+      inside = false;
+    } else if (inside) {
+      found.back() += line + '\n';
+    }
+  }
+  return found;
+}
+
+/// The lines of README that run the program, without `tools/run`.
+std::vector<std::string> readme_commands() {
+  const std::string tool = "tools/run ";
+  std::vector<std::string> commands;
+  for (const std::string& block : blocks("README.md", "sh")) {
+    std::istringstream lines(block);
+    for (std::string line; std::getline(lines, line);)
+      if (line.starts_with(tool))
+        commands.push_back(line.substr(tool.size()));
+  }
+  return commands;
+}
+
+/// Text of a budget without the figures that differ from run to run and from machine to machine.
+std::string lasting(const std::string& text) {
+  return std::regex_replace(std::regex_replace(text, std::regex("closes to [0-9.e-]+"), "closes to …"),
+                            std::regex("[0-9.]+ m?s\n"), "… ms\n");
+}
+
+TEST(Readme, BeginsWithTheJob) {
+  EXPECT_TRUE(content(project("README.md")).starts_with("# lightledger\n\nWhoever designs the optical path"));
+}
+
+TEST(Readme, HasCommandsThatRun) {
+  ASSERT_THAT(readme_commands(), SizeIs(testing::Ge(2U)));
+  for (const std::string& command : readme_commands()) {
+    const Outcome outcome = run_shell("lightledger " + command);
+    EXPECT_EQ(outcome.code, 0) << command << '\n' << outcome.err;
+    EXPECT_NE(outcome.out, "") << command;
+  }
+}
+
+TEST(Readme, NamesTheCommandThatTests) {
+  EXPECT_THAT(blocks("README.md", "sh").front(), HasSubstr("\ntools/test\n"));
+  EXPECT_NE(content(project("tools/test")), "");
+}
+
+TEST(Readme, ShowsWhatItsFirstCommandPrints) {
+  const std::vector<std::string> shown = blocks("README.md", "text");
+  ASSERT_THAT(shown, SizeIs(1U));
+  EXPECT_EQ(lasting(shown.front()), lasting(run_shell("lightledger " + readme_commands().front()).out));
+}
+
+TEST(Readme, ShowsTheMinimalSystem) {
+  EXPECT_THAT(blocks("README.md", "yaml"), testing::ElementsAre(content(project("systems/minimal.yaml"))));
+}
+
+TEST(Readme, LinksToFilesThatExist) {
+  const std::string text = content(project("README.md"));
+  const std::regex link(R"(\]\(([^)]+)\))");
+  for (std::sregex_iterator it(text.begin(), text.end(), link), end; it != end; ++it)
+    EXPECT_TRUE(std::filesystem::exists(project((*it)[1]))) << (*it)[1];
+}
+
+TEST(Manual, ShowsAssembliesThatAreSoundAndMeetTheirRequirements) {
+  const Scratch scratch;
+  for (const std::string& yaml : blocks("docs/assembly-file.md", "yaml")) {
+    const Outcome outcome = run({"check", scratch.file("example.yaml", yaml)});
+    EXPECT_EQ(outcome.code, 0) << outcome.err << outcome.out;
+  }
+}
+
+TEST(Manual, DefinesEveryKeyOfTheResults) {
+  const std::string results = content(project("docs/results.md"));
+  const Json station = json_of({"budget", "systems/minimal.yaml"})["budget"]["stations"][0];
+  for (const std::string& key : keys_of(station))
+    if (key != "name" && key != "does") {
+      EXPECT_THAT(results, HasSubstr("`" + key + "`"));
+    }
+  const Json row = json_of({"coating", "systems/minimal.yaml", "bare"})["coating"]["rows"][0];
+  for (const std::string& key : keys_of(row))
+    EXPECT_THAT(results, HasSubstr("`" + key + "`"));
+}
+
+} // namespace
+} // namespace lightledger::contract
