@@ -102,10 +102,14 @@ std::vector<std::string> warnings(const Assembly& assembly, const Traced& traced
                     "with the most rays that are traced unasked; --rays traces more",
                     traced.standard_error.value_or(0.0)));
   for (std::size_t i = 0; i < assembly.stations.size(); ++i) {
-    const double share = traced.total.rows[i].backward;
-    if (share > backward_share)
-      all.push_back(fmt::format("{}: {:.2g} % of the power runs backwards to the next surface",
-                                assembly.stations[i].name, 100.0 * share));
+    const Entry& row = traced.total.rows[i];
+    const std::string& name = assembly.stations[i].name;
+    if (row.backward > backward_share)
+      all.push_back(fmt::format("{}: {:.2g} % of the power runs backwards to the next surface", name,
+                                100.0 * row.backward));
+    if (row.extrapolated > 0.0)
+      all.push_back(fmt::format("{}: {:.2g} % of the power falls outside its measured curves; their last row holds",
+                                name, 100.0 * row.extrapolated));
   }
   return all;
 }

@@ -102,9 +102,8 @@ std::optional<BudgetFigure> budget_figure(const Budget& budget, std::string_view
 }
 
 std::vector<std::string> budget_paths(const Budget& budget) {
-  std::vector<std::string> paths;
-  for (const Key<Budget>& key : budget_keys)
-    paths.emplace_back(key.name);
+  std::vector<std::string> paths(budget_keys.size());
+  std::ranges::transform(budget_keys, paths.begin(), &Key<Budget>::name);
   for_each_list(budget, [&](const auto& list) {
     for (std::size_t i = 0; i < list.items.size(); ++i)
       for (const auto& key : list.keys)

@@ -30,9 +30,9 @@ std::optional<std::vector<double>> values(double start, double stop, double step
   const double intervals = std::floor((stop - start) / step + rounding);
   if (!(step > 0.0) || !(stop >= start) || !(intervals < static_cast<double>(most)))
     return std::nullopt;
-  std::vector<double> list;
-  for (double i = 0.0; i <= intervals; ++i)
-    list.push_back(start + i * step);
+  std::vector<double> list(static_cast<std::size_t>(intervals) + 1);
+  for (std::size_t i = 0; i < list.size(); ++i)
+    list[i] = start + static_cast<double>(i) * step;
   if (std::abs(list.back() - stop) <= rounding * step)
     list.back() = stop;
   return list;

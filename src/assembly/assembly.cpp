@@ -3,10 +3,17 @@
 namespace lightledger::assembly {
 
 const char* does(const Assembly& assembly, const Station& station) {
-  if (station.intended == Act::detect)
-    return "detect";
-  if (std::holds_alternative<Opening>(assembly.surfaces[station.surface].effect))
+  const Effect& effect = assembly.surfaces[station.surface].effect;
+  if (std::holds_alternative<Opening>(effect))
     return "stop";
+  if (std::holds_alternative<Sensor>(effect))
+    return "detect";
+  if (std::holds_alternative<Polarizer>(effect))
+    return "polarize";
+  if (std::holds_alternative<Retarder>(effect))
+    return "retard";
+  if (std::holds_alternative<Rotator>(effect))
+    return "rotate";
   return station.intended == Act::bounce ? "reflect" : "refract";
 }
 

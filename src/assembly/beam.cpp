@@ -10,7 +10,7 @@ namespace lightledger::assembly {
 namespace {
 
 constexpr std::string_view beam_forms =
-    "{radius: 12.5} or {gaussian: 6, radius: 12.5}, both with inner: 3, at: [x, y]";
+    "{radius: 12.5} or {gaussian: 6, radius: 12.5}, both with inner: 3, at: [x, y]; or fill_stop";
 constexpr std::string_view sampling_forms =
     "{accuracy: 1e-4}, {pattern: rings, rings: 8, spokes: 24}, "
     "{pattern: grid, across: 64} or {pattern: scattered, count: 4096}";
@@ -77,7 +77,7 @@ Beam read_beam(Reader& reader, Value value) {
   Beam beam;
   const Node& node = reader.node(value);
   if (node.kind == Node::Kind::scalar && node.scalar == "fill_stop") {
-    reader.fault(node.mark, "'fill_stop' is not available in this version", std::string(beam_forms));
+    beam.fill_stop = true;
     return beam;
   }
   auto mapping = Mapping::read(reader, value, "a beam", beam_forms);

@@ -11,7 +11,7 @@ namespace lightledger::assembly {
 
 namespace {
 
-constexpr std::string_view kinds = "{layers: […]} or {ideal: {reflect: R}}";
+constexpr std::string_view kinds = "{layers: […]}, {ideal: {reflect: R}} or {measured: curves.csv}";
 constexpr std::string_view layer_forms =
     "{medium: M, waves: 0.25, at: 532}, {medium: M, thickness: 96.1} or {repeat: 6, layers: […]}";
 constexpr std::string_view layers_example = "a list of layers from the substrate outward";
@@ -48,19 +48,21 @@ std::optional<CoatingId> Coatings::named(Value value) {
   return std::nullopt;
 }
 
-std::variant<Layers, Ideal> Coatings::read_kind(Value value) {
+decltype(Coating::kind) Coatings::read_kind(Value value) {
   auto coating = Mapping::read(m_reader, value, "a coating", kinds);
   if (!coating)
     return Ideal{};
-  std::variant<Layers, Ideal> kind = Ideal{};
-  const auto form = coating->unavailable("measured") ? coating->one_of({"layers", "ideal"}, kinds)
-                                                     : coating->need_one_of({"layers", "ideal"}, kinds);
+  decltype(Coating::kind) kind = Ideal{};
+  const auto form = coating->need_one_of({"layers", "ideal", "measured"}, kinds);
   if (form == "layers") {
     Layers layers;
     read_layers(*coating->take("layers"), fmt::format("coatings.{}.layers", value.label), layers.films);
     kind = std::move(layers);
   } else if (form == "ideal") {
     kind = read_ideal(m_reader, *coating->take("ideal"));
+  } else if (form == "measured") {
+    WrittenCurves& written = m_written_curves[static_cast<CoatingId>(m_coatings.size())];
+    kind = m_curves.read(*coating->take("measured"), value.label, written);
   }
   coating->finish();
   return kind;

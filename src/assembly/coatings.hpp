@@ -1,6 +1,7 @@
 #pragma once
 
 #include "mapping.hpp"
+#include "measured.hpp"
 #include "media.hpp"
 #include "reader.hpp"
 
@@ -25,8 +26,8 @@ class Coatings {
 public:
   static constexpr std::size_t most_films = 10'000; ///< in all coatings of a file, repeats written out
 
-  Coatings(Reader& reader, Media& media, std::vector<Coating>& coatings)
-      : m_reader(reader), m_media(media), m_coatings(coatings) {}
+  Coatings(Reader& reader, Media& media, MeasuredCurves& curves, std::vector<Coating>& coatings)
+      : m_reader(reader), m_media(media), m_curves(curves), m_coatings(coatings) {}
 
   /// Reads the section `coatings`.
   void read(Value section);
@@ -36,13 +37,15 @@ public:
 
   /// Whether a coating was read without fault; nothing that follows from others should be reported.
   [[nodiscard]] bool sound(CoatingId id) const { return m_sound[id]; }
-  [[nodiscard]] bool layered(CoatingId id) const {
-    return std::holds_alternative<Layers>(m_coatings[id].kind);
-  }
+  [[nodiscard]] const decltype(Coating::kind)& kind(CoatingId id) const { return m_coatings[id].kind; }
+  [[nodiscard]] bool layered(CoatingId id) const { return std::holds_alternative<Layers>(kind(id)); }
+  [[nodiscard]] bool ideal(CoatingId id) const { return std::holds_alternative<Ideal>(kind(id)); }
   [[nodiscard]] const std::vector<WrittenFilm>& written(CoatingId id) const { return m_written[id]; }
+  /// How a measured coating is written.
+  [[nodiscard]] const WrittenCurves& written_curves(CoatingId id) const { return m_written_curves.at(id); }
 
 private:
-  std::variant<Layers, Ideal> read_kind(Value value);
+  decltype(Coating::kind) read_kind(Value value);
   void read_layers(Value value, const std::string& address, std::vector<Film>& films);
   void read_layer(Value value, const std::string& address, std::vector<Film>& films);
   void read_repeat(Mapping& layer, Value times, const std::string& address, std::vector<Film>& films);
@@ -52,9 +55,11 @@ private:
 
   Reader& m_reader;
   Media& m_media;
+  MeasuredCurves& m_curves;
   std::vector<Coating>& m_coatings;
   std::vector<bool> m_sound;
   std::vector<std::vector<WrittenFilm>> m_written;
+  std::unordered_map<CoatingId, WrittenCurves> m_written_curves;
   std::unordered_map<std::string, CoatingId> m_ids;
   std::size_t m_films = 0;
   bool m_overfull = false;

@@ -1,5 +1,7 @@
 #include "coverage.hpp"
 
+#include "plain_text.hpp"
+
 #include <lightledger/assembly/films.hpp>
 
 #include <fmt/format.h>
@@ -40,6 +42,16 @@ void Coverage::check_transparent(MediumId id, Mark use) {
     m_reader.fault(use,
                    fmt::format("{} is opaque at {} nm, so no light goes on in it", m_media[id].name, *opaque),
                    "a medium of kappa up to 1e-3; a metal is the backing of a reflecting station");
+}
+
+void Coverage::check_measured(const Measured& measured, std::string_view file, Mark use) {
+  const double from = measured.wavelengths_nm.front();
+  const double to = measured.wavelengths_nm.back();
+  const auto beyond = std::find_if(m_wavelengths.begin(), m_wavelengths.end(),
+                                   [&](const Wavelength& light) { return light.nm < from || light.nm > to; });
+  if (beyond != m_wavelengths.end())
+    m_reader.fault(use, fmt::format("{} reaches from {} to {} nm; the light has {} nm", quoted(file), from,
+                                    to, beyond->nm));
 }
 
 std::optional<bool> Coverage::gas(MediumId id) {

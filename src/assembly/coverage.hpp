@@ -5,6 +5,7 @@
 #include <lightledger/assembly/assembly.hpp>
 
 #include <optional>
+#include <string_view>
 #include <vector>
 
 namespace lightledger::assembly {
@@ -22,6 +23,8 @@ public:
   void check_known_at(MediumId id, double nm, Mark use);
   /// A fault where rays cannot go on in the medium: not known, or opaque.
   void check_transparent(MediumId id, Mark use);
+  /// A fault where measured curves of this file do not reach one of the light's wavelengths.
+  void check_measured(const Measured& measured, std::string_view file, Mark use);
 
   /// Whether the medium is a gas at all wavelengths; none where that is not known.
   [[nodiscard]] std::optional<bool> gas(MediumId id);

@@ -131,8 +131,10 @@ Light read_light(Reader& reader, Value section, Media& media, LightMarks& marks)
   if (const auto fields = mapping->take("fields"))
     light.fields = read_fields(reader, *fields, !light.object_distance);
   const std::size_t before = reader.fault_count();
-  if (const auto beam = mapping->need("beam"))
+  if (const auto beam = mapping->need("beam")) {
     light.beam = read_beam(reader, *beam);
+    marks.beam = reader.mark(*beam);
+  }
   if (const auto rays = mapping->take("rays")) {
     light.sampling = read_sampling(reader, *rays);
     if (reader.fault_count() == before)

@@ -7,9 +7,10 @@
 
 namespace lightledger::assembly {
 
-/// Where the names of media in the section `light` stand.
+/// Where values of the section `light` stand that the train is checked against.
 struct LightMarks {
   Mark medium;
+  Mark beam;
 };
 
 /// Reads the section `light`. Its medium defaults to air.

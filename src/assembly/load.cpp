@@ -2,7 +2,9 @@
 #include "coverage.hpp"
 #include "light.hpp"
 #include "mapping.hpp"
+#include "measured.hpp"
 #include "media.hpp"
+#include "read_file.hpp"
 #include "requirements.hpp"
 #include "train.hpp"
 
@@ -10,44 +12,43 @@
 
 #include <fmt/format.h>
 
-#include <array>
-#include <fstream>
 #include <utility>
 
 namespace lightledger::assembly {
 
 namespace {
 
-constexpr std::size_t largest_file = 64U << 20U;
+constexpr std::size_t largest_file = 8U << 20U;
 
 Fault too_large() {
-  return {{}, "the file is larger than 64 MB", "an assembly, which is far smaller", {}};
+  return {{}, "the file is larger than 8 MB", "an assembly, which is far smaller", {}};
 }
 
-/// The bytes of a file, or why they cannot be had.
-std::variant<std::string, Fault> read_file(const std::filesystem::path& path) {
-  std::error_code error;
-  const auto status = std::filesystem::status(path, error);
-  if (status.type() == std::filesystem::file_type::not_found)
-    return Fault{{}, "there is no such file", {}, {}};
-  if (std::filesystem::is_directory(status))
-    return Fault{{}, "this is a folder", "a YAML file", {}};
-  std::ifstream stream(path, std::ios::binary);
-  std::string text;
-  std::array<char, 1U << 16U> piece;
-  while (stream && text.size() <= largest_file) {
-    stream.read(piece.data(), piece.size());
-    text.append(piece.data(), static_cast<std::size_t>(stream.gcount()));
-  }
-  if (text.size() > largest_file)
+Fault unreadable(Unreadable why) {
+  switch (why) {
+  case Unreadable::missing:
+    return {{}, "there is no such file", {}, {}};
+  case Unreadable::folder:
+    return {{}, "this is a folder", "a YAML file", {}};
+  case Unreadable::too_large:
     return too_large();
-  if (!stream.eof())
-    return Fault{{}, "the file cannot be read", "a file that you may read", {}};
-  return text;
+  case Unreadable::refused:
+    break;
+  }
+  return {{}, "the file cannot be read", "a file that you may read", {}};
+}
+
+/// Measured curves lie beside the assembly file unless something else is said.
+MeasuredFiles beside(MeasuredFiles curves, std::string_view file) {
+  if (curves.folder.empty())
+    curves.folder = std::filesystem::path(file).parent_path();
+  if (curves.folder.empty())
+    curves.folder = ".";
+  return curves;
 }
 
 /// The sections in the order in which they build upon each other.
-Assembly read_assembly(Reader& reader) {
+Assembly read_assembly(Reader& reader, MeasuredFiles curve_files, std::vector<std::string>& warnings) {
   Assembly assembly;
   const Value root{*reader.document().root(), "the file"};
   auto file = Mapping::read(reader, root, "an assembly file", "a mapping with light: and train:");
@@ -58,7 +59,8 @@ Assembly read_assembly(Reader& reader) {
   Media media(reader, assembly.media);
   if (const auto section = file->take("media"))
     media.read(*section);
-  Coatings coatings(reader, media, assembly.coatings);
+  MeasuredCurves curves(reader, media, std::move(curve_files), warnings);
+  Coatings coatings(reader, media, curves, assembly.coatings);
   if (const auto section = file->take("coatings"))
     coatings.read(*section);
   LightMarks marks;
@@ -69,7 +71,7 @@ Assembly read_assembly(Reader& reader) {
   Coverage coverage(reader, assembly.media, assembly.light.wavelengths);
   coverage.check_transparent(assembly.light.medium, marks.medium);
   if (const auto section = file->need("train"))
-    Train(reader, media, coatings, coverage, assembly).read(*section);
+    Train(reader, media, coatings, coverage, assembly).read(*section, marks.beam);
   if (const auto section = file->take("requirements"))
     assembly.requirements = read_requirements(reader, *section);
   file->finish();
@@ -78,7 +80,8 @@ Assembly read_assembly(Reader& reader) {
 
 } // namespace
 
-Loaded load_text(std::string file, std::string text, const std::vector<Change>& changes) {
+Loaded load_text(std::string file, std::string text, const std::vector<Change>& changes,
+                 const MeasuredFiles& curves) {
   Loaded loaded;
   loaded.file = file;
   if (text.size() > largest_file) {
@@ -92,7 +95,7 @@ Loaded load_text(std::string file, std::string text, const std::vector<Change>& 
       document->set(change.address, change.value, loaded.faults);
   if (document->root()) {
     Reader reader(*document, loaded.faults);
-    Assembly assembly = read_assembly(reader);
+    Assembly assembly = read_assembly(reader, beside(curves, loaded.file), loaded.warnings);
     assembly.document = document;
     if (loaded.faults.none())
       loaded.assembly = std::move(assembly);
@@ -101,13 +104,14 @@ Loaded load_text(std::string file, std::string text, const std::vector<Change>& 
   return loaded;
 }
 
-Loaded load(const std::filesystem::path& path, const std::vector<Change>& changes) {
-  auto content = read_file(path);
+Loaded load(const std::filesystem::path& path, const std::vector<Change>& changes,
+            const MeasuredFiles& curves) {
+  auto content = read_file(path, largest_file);
   if (auto* const text = std::get_if<std::string>(&content))
-    return load_text(path.string(), std::move(*text), changes);
+    return load_text(path.string(), std::move(*text), changes, curves);
   Loaded loaded;
   loaded.file = path.string();
-  loaded.faults.add(std::move(std::get<Fault>(content)));
+  loaded.faults.add(unreadable(std::get<Unreadable>(content)));
   return loaded;
 }
 

@@ -66,11 +66,11 @@ double Mapping::number_or(double fallback, std::string_view key, Unit unit, Boun
   return number(key, unit, bound).value_or(fallback);
 }
 
-bool Mapping::unavailable(std::string_view key) {
+bool Mapping::forbid(std::string_view key, std::string_view reason, std::string_view accepted) {
   if (entry(key) == nullptr)
     return false;
   m_asked.push_back(key);
-  m_reader->fault(key_mark(key), fmt::format("'{}' is not available in this version", key));
+  m_reader->fault(key_mark(key), fmt::format("'{}' {}", key, reason), std::string(accepted));
   return true;
 }
 

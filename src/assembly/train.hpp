@@ -7,8 +7,10 @@
 
 #include <lightledger/assembly/assembly.hpp>
 
+#include <map>
+#include <optional>
 #include <string>
-#include <unordered_set>
+#include <string_view>
 #include <vector>
 
 namespace lightledger::assembly {
@@ -20,23 +22,51 @@ public:
       : m_reader(reader), m_media(media), m_coatings(coatings), m_coverage(coverage), m_assembly(assembly),
         m_current(assembly.light.medium), m_coating_used(assembly.coatings.size(), false) {}
 
-  void read(Value section);
+  /// `beam` is the place of the light's beam, for a fault where that has no stop to fill.
+  void read(Value section, Mark beam);
 
 private:
-  enum class Does { refract, reflect, stop, detect, unavailable };
+  enum class Does { refract, reflect, stop, detect, polarize, retard, rotate, unavailable };
+  /// What stands behind a station: its gap depends on it.
+  enum class Next { nothing, station, visit };
   struct CoatingWritten {
     CoatingId id;
     std::optional<Side> substrate;
     Mark mark; ///< of the coating's name
   };
 
-  void read_station(Value value, bool last);
-  void read_name(Mapping& station, Station& result);
+  /// A surface that a later station may meet again. After a fault its media, or those of the light there, may
+  /// not be known; then nothing is concluded from them.
+  struct Met {
+    std::string first_visit;
+    SurfaceId surface = 0;
+    bool interface = false;
+    bool media_known = false;
+    MediumId before = 0;
+    std::optional<MediumId> beyond;
+  };
+
+  void read_station(Value value, Next next);
+  void read_first_visit(Mapping& station, Does does, Next next);
+  void keep(const Mapping& station, Does does, Station result, Next next);
+  std::string read_name(Mapping& station);
+  std::string new_name(Value value, std::string name);
   Does read_does(Mapping& station);
-  Does action(Value value);
-  Gap read_gap(Mapping& station, bool last);
+  Does action(Value value, const std::vector<std::string_view>& accepted);
+  Gap read_gap(Mapping& station, Next next);
+  [[nodiscard]] Next next_of(const std::vector<Value>& stations, std::size_t i) const;
+  void check_stop(const Mapping& station, const Surface& surface);
+
+  void read_again(Mapping& station, Next next);
+  std::string read_again_name(Mapping& station, Value earlier);
+  const Met* find_earlier(Value value);
+  void forbid_surface_keys(Mapping& station, const Met* met);
+  void arrive_again(const Met& met, Mark mark);
+  void refract_again(Mapping& station, const Met* met);
+  [[nodiscard]] std::string between(const Met& met) const;
 
   Surface read_surface(Mapping& station, Does does);
+  Effect read_effect(Mapping& station, Does does);
   void read_refracting(Mapping& station, Surface& surface);
   void read_reflecting(Mapping& station, Surface& surface);
   Sensor read_sensor(Mapping& station);
@@ -45,7 +75,8 @@ private:
   std::optional<CoatingWritten> read_coating_use(Value value);
   CoatingUse placed(const CoatingWritten& coating, const Surface& surface);
   Side side_with_body(const CoatingWritten& coating, MediumId before, MediumId beyond);
-  void check_films(CoatingId id);
+  void check_coating(CoatingId id);
+  void check_curves(CoatingId id);
 
   Reader& m_reader;
   Media& m_media;
@@ -55,7 +86,9 @@ private:
   MediumId m_current;          ///< the medium that the light arrives in at the next station
   bool m_current_known = true; ///< not so after a fault; then nothing is concluded from it
   std::vector<bool> m_coating_used;
-  std::unordered_set<std::string> m_names;
+  bool m_actions_known = true; ///< of all stations so far
+  bool m_stop_met = false;
+  std::map<std::string, Met> m_met; ///< all stations so far, by name
 };
 
 } // namespace lightledger::assembly

@@ -49,7 +49,7 @@ std::optional<Train::CoatingWritten> Train::read_coating(Mapping& station) {
     return std::nullopt;
   const auto coating = read_coating_use(*value);
   if (coating)
-    check_films(coating->id);
+    check_coating(coating->id);
   return coating;
 }
 
@@ -76,18 +76,20 @@ std::optional<Train::CoatingWritten> Train::read_coating_use(Value value) {
 
 CoatingUse Train::placed(const CoatingWritten& coating, const Surface& surface) {
   CoatingUse use{coating.id, coating.substrate.value_or(Side::beyond)};
-  const bool needs_side =
-      m_coatings.sound(coating.id) && m_coatings.layered(coating.id) && !coating.substrate;
-  if (needs_side && m_current_known && surface.beyond)
+  const bool has_side = m_coatings.sound(coating.id) && !m_coatings.ideal(coating.id);
+  if (has_side && !coating.substrate && m_current_known && surface.beyond)
     use.substrate = side_with_body(coating, surface.before, *surface.beyond);
   return use;
 }
 
-/// Layers stand on the side that is not a gas (contract §3).
+/// Layers stand on the side that is not a gas (contract §3). Curves were measured on something like that, but
+/// do without where there is no such side.
 Side Train::side_with_body(const CoatingWritten& coating, MediumId before, MediumId beyond) {
   const auto gas_before = m_coverage.gas(before);
   const auto gas_beyond = m_coverage.gas(beyond);
   if (!gas_before || !gas_beyond)
+    return Side::beyond;
+  if (*gas_before == *gas_beyond && !m_coatings.layered(coating.id))
     return Side::beyond;
   if (*gas_before == *gas_beyond)
     m_reader.fault(coating.mark,
@@ -98,7 +100,7 @@ Side Train::side_with_body(const CoatingWritten& coating, MediumId before, Mediu
   return *gas_before ? Side::beyond : Side::before;
 }
 
-void Train::check_films(CoatingId id) {
+void Train::check_coating(CoatingId id) {
   if (m_coating_used[id])
     return;
   m_coating_used[id] = true;
@@ -107,6 +109,18 @@ void Train::check_films(CoatingId id) {
     if (film.at_nm)
       m_coverage.check_known_at(film.medium, *film.at_nm, film.at_mark);
   }
+  if (m_coatings.sound(id))
+    check_curves(id);
+}
+
+void Train::check_curves(CoatingId id) {
+  const auto* const measured = std::get_if<Measured>(&m_coatings.kind(id));
+  if (measured == nullptr)
+    return;
+  const WrittenCurves& written = m_coatings.written_curves(id);
+  m_coverage.check_measured(*measured, written.file, written.mark);
+  if (measured->from)
+    m_coverage.check_transparent(*measured->from, written.from_mark);
 }
 
 } // namespace lightledger::assembly

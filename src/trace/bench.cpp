@@ -6,6 +6,7 @@
 #include <fmt/format.h>
 
 #include <Eigen/Geometry>
+#include <algorithm>
 #include <cmath>
 #include <numbers>
 #include <utility>
@@ -15,13 +16,16 @@ namespace {
 
 using assembly::Act;
 using assembly::Assembly;
+using assembly::Side;
 using assembly::Station;
 using assembly::StationId;
 using Eigen::Matrix3d;
 using Eigen::Vector3d;
 
-/// Below this cosine between the axis and a mirror's normal the axis runs in the mirror's plane.
-constexpr double least_mirror_cosine = 1e-9;
+/// Below this cosine between the axis and a surface's normal the axis runs in the surface's plane.
+constexpr double least_cosine = 1e-9;
+/// Surfaces nearer than this, in mm, touch.
+constexpr double touching = 1e-9;
 
 std::pair<double, double> sine_cosine(double degrees) {
   const double quarters = std::round(degrees / 90.0);
@@ -66,53 +70,113 @@ Matrix3d reflected(const Matrix3d& axes, const Vector3d& normal) {
 class Surveyor {
 public:
   Surveyor(const Assembly& assembly, assembly::Faults& faults)
-      : m_assembly(assembly), m_faults(faults), m_marginal(assembly) {
+      : m_assembly(assembly), m_faults(faults), m_marginal(assembly), m_medium(assembly.light.medium),
+        m_arrival(assembly.surfaces.size(), 0.0) {
     m_bench.surface.resize(assembly.surfaces.size());
   }
 
   std::optional<Bench> survey() {
     for (StationId visit = 0; visit < m_assembly.stations.size(); ++visit)
-      if (!pass(visit))
+      if (!meet(visit) || !advance(visit))
         return std::nullopt;
     return std::move(m_bench);
   }
 
 private:
-  bool pass(StationId visit) {
+  bool meet(StationId visit) {
     const Station& station = m_assembly.stations[visit];
+    place(station);
+    const Side from = side(station);
+    if (!pass_media(visit, from))
+      return false;
+    m_bench.arriving.push_back(m_axis);
+    m_bench.from.push_back(from);
+    const Vector3d normal = m_bench.surface[station.surface].axes.col(2);
+    if (station.intended == Act::bounce) {
+      if (std::abs(m_axis.axes.col(2).dot(normal)) < least_cosine)
+        return fault(visit, ".tilt", fmt::format("the axis runs in the plane of mirror '{}'", station.name));
+      m_axis.axes = reflected(m_axis.axes, normal);
+    }
+    m_axis.axes = m_axis.axes * rotation(station.turn_deg);
+    m_bench.leaving.push_back(m_axis);
+    m_marginal.meet(station, from);
+    return true;
+  }
+
+  [[nodiscard]] bool seen(assembly::SurfaceId surface) const { return m_arrival[surface] != 0.0; }
+
+  /// On its first visit a surface gets its place.
+  void place(const Station& station) {
+    if (seen(station.surface))
+      return;
     const assembly::Surface& surface = m_assembly.surfaces[station.surface];
     Frame& frame = m_bench.surface[station.surface];
     frame.axes = m_axis.axes * rotation(surface.tilt_deg);
     frame.origin =
         m_axis.origin + m_axis.axes.leftCols<2>() * Eigen::Map<const Eigen::Vector2d>(surface.shift.data());
-    m_bench.arriving.push_back(m_axis);
-    if (station.intended == Act::bounce) {
-      if (std::abs(m_axis.axes.col(2).dot(frame.axes.col(2))) < least_mirror_cosine)
-        return fault(visit, ".tilt", fmt::format("the axis runs in the plane of mirror '{}'", station.name));
-      m_axis.axes = reflected(m_axis.axes, frame.axes.col(2));
-    }
-    m_axis.axes = m_axis.axes * rotation(station.turn_deg);
-    m_bench.leaving.push_back(m_axis);
-    m_marginal.meet(station);
-    return advance(visit);
+    m_arrival[station.surface] = std::copysign(1.0, m_axis.axes.col(2).dot(frame.axes.col(2)));
+  }
+
+  [[nodiscard]] Side side(const Station& station) const {
+    const double cosine = m_axis.axes.col(2).dot(m_bench.surface[station.surface].axes.col(2));
+    return std::copysign(1.0, cosine) == m_arrival[station.surface] ? Side::before : Side::beyond;
+  }
+
+  /// Only a visit that comes again can find itself on the wrong side.
+  bool pass_media(StationId visit, Side from) {
+    const Station& station = m_assembly.stations[visit];
+    const assembly::Surface& surface = m_assembly.surfaces[station.surface];
+    const assembly::MediumId beyond = surface.beyond.value_or(surface.before);
+    const assembly::MediumId here = from == Side::before ? surface.before : beyond;
+    if (here != m_medium)
+      return fault(visit, "",
+                   fmt::format("'{}' is met from its side in {}, but the light arrives in {}", station.name,
+                               m_assembly.media[here].name, m_assembly.media[m_medium].name));
+    if (station.intended == Act::pass)
+      m_medium = from == Side::before ? beyond : surface.before;
+    return true;
   }
 
   bool advance(StationId visit) {
-    const bool last = visit + 1 == m_assembly.stations.size();
     double gap = 0.0;
-    if (!last) {
-      const auto* stated = std::get_if<double>(&m_assembly.stations[visit].gap);
-      const auto length = stated != nullptr ? std::optional(*stated) : m_marginal.image_distance();
+    if (visit + 1 < m_assembly.stations.size()) {
+      const auto length = length_after(visit);
       if (!length)
-        return fault(visit, ".gap",
-                     fmt::format("gap: focus behind '{}' finds no image there: it is {}",
-                                 m_assembly.stations[visit].name, m_marginal.why_no_image()));
+        return false;
       gap = *length;
     }
     m_bench.gap.push_back(gap);
     m_axis.origin += gap * m_axis.axes.col(2);
     m_marginal.advance(gap);
     return true;
+  }
+
+  std::optional<double> length_after(StationId visit) {
+    const Station& station = m_assembly.stations[visit];
+    if (const auto* stated = std::get_if<double>(&station.gap))
+      return *stated;
+    if (std::holds_alternative<assembly::UpToSurface>(station.gap))
+      return up_to_surface(visit + 1);
+    const auto image = m_marginal.image_distance();
+    if (!image)
+      fault(visit, ".gap",
+            fmt::format("gap: focus behind '{}' finds no image there: it is {}", station.name,
+                        m_marginal.why_no_image()));
+    return image;
+  }
+
+  /// Along the axis to the plane tangent to the vertex of a surface that stands already.
+  std::optional<double> up_to_surface(StationId visit) {
+    const Station& station = m_assembly.stations[visit];
+    const Frame& frame = m_bench.surface[station.surface];
+    const double cosine = m_axis.axes.col(2).dot(frame.axes.col(2));
+    const double distance = (frame.origin - m_axis.origin).dot(frame.axes.col(2)) / cosine;
+    const bool meets = std::abs(cosine) >= least_cosine && distance > -touching;
+    if (!meets)
+      fault(visit, "",
+            fmt::format("the axis does not come back to the surface of '{}': it {}", station.name,
+                        std::abs(cosine) < least_cosine ? "runs along it" : "runs away from it"));
+    return meets ? std::optional(std::max(distance, 0.0)) : std::nullopt;
   }
 
   bool fault(StationId visit, const char* key, std::string message) {
@@ -126,6 +190,8 @@ private:
   const Assembly& m_assembly;
   assembly::Faults& m_faults;
   ParaxialRay m_marginal;
+  assembly::MediumId m_medium;
+  std::vector<double> m_arrival; ///< per surface: sign of axis · normal on the first visit, 0 before it
   Frame m_axis;
   Bench m_bench;
 };

@@ -145,10 +145,10 @@ void aim_bounced(const Meeting& m, RayBlock& out) {
 /// Enters what became of the power; sums run over the lanes in order.
 class Bookkeeper {
 public:
-  Bookkeeper(const PlanLeg& leg, const PlanOp& op, const optics::Coherency& phi, const RayBlock& in,
-             const Meeting& meeting, const Field& field, const Lanes& bulk, const Beam& onward)
-      : m_leg(leg), m_op(op), m_phi(phi), m_in(in), m(meeting), m_field(field), m_bulk(bulk),
-        m_onward(onward) {}
+  Bookkeeper(const PlanLeg& leg, const optics::Coherency& phi, const RayBlock& in, const Meeting& meeting,
+             const Field& field, const Lanes& bulk, const Beam& onward, bool bounces)
+      : m_leg(leg), m_phi(phi), m_in(in), m(meeting), m_field(field), m_bulk(bulk), m_onward(onward),
+        m_bounces(bounces) {}
 
   [[nodiscard]] Entry entry() const {
     Entry entry;
@@ -177,7 +177,7 @@ private:
   void meet(int i, double arriving, Entry& entry) const {
     const double power_s = m_field.power_s[i] * (1.0 - m_bulk[i]);
     const double power_p = m_field.power_p[i] * (1.0 - m_bulk[i]);
-    const bool pass = m_op.intended != Act::bounce;
+    const bool pass = !m_bounces;
     const double intended_s = pass ? m.crossed_s[i] : m.reflected_s[i];
     const double intended_p = pass ? m.crossed_p[i] : m.reflected_p[i];
     const double other_s = pass ? m.reflected_s[i] : m.crossed_s[i];
@@ -188,6 +188,8 @@ private:
 
     const double angle = std::atan2(std::sqrt(m.sin1_squared[i]), m.cos1[i]);
     entry.inside += arriving;
+    if (m.extrapolated[i] != 0)
+      entry.extrapolated += arriving;
     entry.pass_s += arriving * intended_s;
     entry.pass_p += arriving * intended_p;
     entry.incidence += arriving * angle;
@@ -209,13 +211,13 @@ private:
   }
 
   const PlanLeg& m_leg;
-  const PlanOp& m_op;
   const optics::Coherency& m_phi;
   const RayBlock& m_in;
   const Meeting& m;
   const Field& m_field;
   const Lanes& m_bulk;
   const Beam& m_onward;
+  bool m_bounces; ///< onward is the reflected beam
 };
 
 void write(const Meeting& m, const Amplitudes& intended, Tape& tape) {
@@ -248,7 +250,7 @@ void interact(const PlanLeg& leg, const PlanOp& op, const optics::Coherency& coh
 
   Beam passed{{m.t_s, m.t_p}, op.loss, {}};
   Beam bounced{{m.r_s, m.r_p}, op.loss, {}};
-  const bool bounces = op.intended == Act::bounce;
+  const bool bounces = out.bounces;
   const Beam& onward = bounces ? bounced : passed;
   if (out.pass != nullptr || !bounces)
     scatter_passed(op, m, passed.scattered);
@@ -256,7 +258,7 @@ void interact(const PlanLeg& leg, const PlanOp& op, const optics::Coherency& coh
     scatter_bounced(op, m, bounced.scattered);
 
   if (out.entry != nullptr)
-    *out.entry = Bookkeeper(leg, op, coherency, in, m, field, bulk, onward).entry();
+    *out.entry = Bookkeeper(leg, coherency, in, m, field, bulk, onward, bounces).entry();
   if (out.tape != nullptr)
     write(m, onward.amplitudes, *out.tape);
   if (out.pass != nullptr) {

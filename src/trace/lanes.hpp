@@ -29,6 +29,7 @@ struct Meeting {
   Lanes cos2;
 
   Lanes r_s[2], r_p[2], t_s[2], t_p[2]; ///< flux-normalised, real and imaginary part
+  Mask extrapolated;                    ///< outside a measured curve, whose last point then holds
   Lanes reflected_s, reflected_p, crossed_s, crossed_p, absorbed_s, absorbed_p; ///< powers
 };
 

@@ -48,8 +48,9 @@ Pupil::Pupil(const assembly::Light& light)
     : m_sampling(light.sampling), m_scattered(std::holds_alternative<Scattered>(light.sampling) ||
                                               std::holds_alternative<ToAccuracy>(light.sampling)),
       m_size(std::visit(ReplicateSize{}, light.sampling)) {
-  const double inner = light.beam.inner / light.beam.radius;
-  const double gaussian = light.beam.gaussian ? light.beam.radius / *light.beam.gaussian : 0.0;
+  const double inner = light.beam.fill_stop ? 0.0 : light.beam.inner / light.beam.radius;
+  const bool decays = light.beam.gaussian && !light.beam.fill_stop;
+  const double gaussian = decays ? light.beam.radius / *light.beam.gaussian : 0.0;
   m_inner_squared = inner * inner;
   m_gaussian_decay = 2.0 * gaussian * gaussian;
   if (const auto* rings = std::get_if<Rings>(&m_sampling))
@@ -92,8 +93,8 @@ PupilPoint Pupil::point(std::uint64_t number, int replicate) const {
   return {x, y, lit ? std::exp(-m_gaussian_decay * r_squared) : 0.0};
 }
 
-Launcher::Launcher(const assembly::Light& light, const Pupil& pupil, const assembly::Field& field)
-    : m_pupil(pupil), m_radius(light.beam.radius), m_at(light.beam.at), m_infinite(!light.object_distance),
+Source::Source(const assembly::Light& light, const assembly::Field& field)
+    : m_infinite(!light.object_distance),
       m_converging(light.object_distance && *light.object_distance < 0.0), m_object{} {
   if (!m_infinite) {
     m_object = {field.at[0], field.at[1], -*light.object_distance};
@@ -116,19 +117,20 @@ std::uint64_t Launcher::fill(RayBlock& block, int replicate, std::uint64_t first
     if (point.weight <= 0.0)
       continue;
     const int lane = block.count++;
-    block.p[0][lane] = m_at[0] + m_radius * point.x;
-    block.p[1][lane] = m_at[1] + m_radius * point.y;
+    for (std::size_t axis = 0; axis < 2; ++axis)
+      block.p[axis][lane] =
+          m_footprint.centre[axis] + m_footprint.first[axis] * point.x + m_footprint.second[axis] * point.y;
     block.p[2][lane] = 0.0;
     block.w[lane] = point.weight;
     block.opl[lane] = 0.0;
     block.alive |= std::uint64_t{1} << lane;
-    aim(block, lane);
+    m_source.aim(block, lane);
   }
   return number;
 }
 
 /// Direction and the double-pole basis: x carried by the smallest rotation of z onto d.
-void Launcher::aim(RayBlock& block, int lane) const {
+void Source::aim(RayBlock& block, int lane) const {
   std::array<double, 3> d = m_object;
   if (!m_infinite) {
     const double side = m_converging ? 1.0 : -1.0;

@@ -9,6 +9,7 @@ namespace {
 
 using assembly::Act;
 using assembly::Assembly;
+using assembly::Side;
 
 double curvature(const assembly::Plane&) {
   return 0.0;
@@ -28,15 +29,16 @@ ParaxialRay::ParaxialRay(const Assembly& assembly)
   m_largest_slope = std::abs(m_slope);
 }
 
-void ParaxialRay::meet(const assembly::Station& station) {
+void ParaxialRay::meet(const assembly::Station& station, Side from) {
   const assembly::Surface& surface = m_assembly.surfaces[station.surface];
-  const double c = std::visit([](const auto& shape) { return curvature(shape); }, surface.shape);
+  const double sign = from == Side::before ? 1.0 : -1.0;
+  const double c = sign * std::visit([](const auto& shape) { return curvature(shape); }, surface.shape);
   double next = m_index;
   double power = 0.0;
   if (station.intended == Act::bounce) {
     power = -2.0 * m_index * c;
   } else if (std::holds_alternative<assembly::Interface>(surface.effect)) {
-    next = index(*surface.beyond);
+    next = index(from == Side::before ? *surface.beyond : surface.before);
     power = (next - m_index) * c;
   }
   m_slope -= m_height * power;

@@ -12,8 +12,8 @@ class ParaxialRay {
 public:
   explicit ParaxialRay(const assembly::Assembly& assembly);
 
-  /// Refraction or reflection by the vertex curvature of a station's surface.
-  void meet(const assembly::Station& station);
+  /// Refraction or reflection by the vertex curvature of a station's surface, met from one of its sides.
+  void meet(const assembly::Station& station, assembly::Side from);
   void advance(double gap) { m_height += gap * m_slope / m_index; }
 
   /// From the last station met to the image, in mm; none where it is virtual or infinitely far.

@@ -1,3 +1,5 @@
+#include "curve.hpp"
+
 #include <lightledger/assembly/films.hpp>
 #include <lightledger/trace/plan.hpp>
 
@@ -82,20 +84,64 @@ private:
   }
 };
 
+/// Fixed amplitudes along and across an axis; nothing for surfaces that leave the field as it is.
+struct ElementCompiler {
+  PlanOp& op;
+  Side met_from;
+  double wavelength_nm;
+
+  void operator()(const assembly::Polarizer& polarizer) const {
+    set(polarizer.axis_deg, std::sqrt(polarizer.pass), std::sqrt(polarizer.block));
+    op.blocked[0] = 1.0 - polarizer.pass;
+    op.blocked[1] = 1.0 - polarizer.block;
+  }
+  void operator()(const assembly::Retarder& retarder) const {
+    const double dispersion = retarder.at_nm ? *retarder.at_nm / wavelength_nm : 1.0;
+    set(retarder.axis_deg, 1.0, std::polar(1.0, retarder.retardance_deg * degree * dispersion));
+  }
+  void operator()(const assembly::Rotator& rotator) const {
+    set(0.0, 1.0, 1.0);
+    // About the ray; light on its way back sees a Faraday rotator turn the other way.
+    const bool reversed = met_from == Side::beyond && rotator.kind == assembly::Rotator::Kind::faraday;
+    const double angle = (reversed ? -1.0 : 1.0) * rotator.angle_deg * degree;
+    op.turn[0] = std::cos(angle);
+    op.turn[1] = std::sin(angle);
+  }
+  template <typename Untouched>
+  void operator()(const Untouched&) const {}
+
+private:
+  static constexpr double degree = std::numbers::pi / 180.0;
+
+  void set(double axis_deg, optics::Complex along, optics::Complex across) const {
+    op.amplitude = AmplitudeKind::element;
+    op.axis[0] = std::cos(axis_deg * degree);
+    op.axis[1] = std::sin(axis_deg * degree);
+    op.along[0] = along.real();
+    op.along[1] = along.imag();
+    op.across[0] = across.real();
+    op.across[1] = across.imag();
+    op.blocked[0] = op.blocked[1] = 0.0;
+    op.turn[0] = 1.0;
+    op.turn[1] = 0.0;
+  }
+};
+
 /// Fills the optical part of an operator: media, coating, what becomes of the light that crosses.
 class BoundaryCompiler {
 public:
   BoundaryCompiler(const Assembly& assembly, const Surface& surface, double wavelength_nm)
       : m_assembly(assembly), m_surface(surface), m_wavelength_nm(wavelength_nm) {}
 
-  void compile(PlanOp& op, Side met_from, Act intended, Plan& plan) const {
-    op.intended = intended;
+  void compile(PlanOp& op, Side met_from, Plan& plan) const {
     op.wavelength_nm = m_wavelength_nm;
     op.n1 = op.n2 = index(m_surface.before).n;
     op.scatter_reflected = op.scatter_transmitted = 0.0;
     op.amplitude = AmplitudeKind::none;
-    if (!std::holds_alternative<assembly::Interface>(m_surface.effect))
+    if (!std::holds_alternative<assembly::Interface>(m_surface.effect)) {
+      std::visit(ElementCompiler{op, met_from, m_wavelength_nm}, m_surface.effect);
       return;
+    }
     media(op, met_from);
     amplitudes(op, met_from, plan);
     const double per_length = 2.0 * std::numbers::pi * m_surface.roughness_nm / m_wavelength_nm;
@@ -121,20 +167,29 @@ private:
     op.amplitude = op.swallows ? AmplitudeKind::metal : AmplitudeKind::fresnel;
     if (!m_surface.coating)
       return;
+    const bool from_substrate = m_surface.coating->substrate == met_from;
     const auto& kind = m_assembly.coatings[m_surface.coating->coating].kind;
-    if (const auto* ideal = std::get_if<assembly::Ideal>(&kind)) {
-      op.amplitude = AmplitudeKind::ideal;
-      op.reflect_s = ideal->s.reflect;
-      op.reflect_p = ideal->p.reflect;
-      op.transmit_s = ideal->s.transmit;
-      op.transmit_p = ideal->p.transmit;
-      return;
-    }
-    const std::vector<optics::Layer> layers =
-        assembly::optical_layers(m_assembly, std::get<assembly::Layers>(kind), m_wavelength_nm);
+    if (const auto* ideal = std::get_if<assembly::Ideal>(&kind))
+      coat(op, *ideal);
+    else if (const auto* measured = std::get_if<assembly::Measured>(&kind))
+      coat(op, *measured, from_substrate, plan);
+    else
+      coat(op, std::get<assembly::Layers>(kind), from_substrate, plan);
+  }
+
+  static void coat(PlanOp& op, const assembly::Ideal& ideal) {
+    op.amplitude = AmplitudeKind::ideal;
+    op.reflect_s = ideal.s.reflect;
+    op.reflect_p = ideal.p.reflect;
+    op.transmit_s = ideal.s.transmit;
+    op.transmit_p = ideal.p.transmit;
+  }
+
+  void coat(PlanOp& op, const assembly::Layers& written, bool from_substrate, Plan& plan) const {
+    const std::vector<optics::Layer> layers = assembly::optical_layers(m_assembly, written, m_wavelength_nm);
     auto& stack = plan.stacks.emplace_back(std::make_unique<optics::Layer[]>(layers.size()));
     // Written from the substrate outward; light that arrives at the outer side meets the last one first.
-    if (m_surface.coating->substrate == met_from)
+    if (from_substrate)
       std::copy(layers.begin(), layers.end(), stack.get());
     else
       std::reverse_copy(layers.begin(), layers.end(), stack.get());
@@ -143,22 +198,35 @@ private:
     op.layer_count = static_cast<std::uint32_t>(layers.size());
   }
 
+  void coat(PlanOp& op, const assembly::Measured& measured, bool from_substrate, Plan& plan) const {
+    const std::vector<CurvePoint> points = curve(measured, m_wavelength_nm, from_substrate);
+    auto& stored = plan.curves.emplace_back(std::make_unique<CurvePoint[]>(points.size()));
+    std::copy(points.begin(), points.end(), stored.get());
+    op.amplitude = AmplitudeKind::measured;
+    op.curve = stored.get();
+    op.curve_count = static_cast<std::uint32_t>(points.size());
+    op.shift_index = measured.shift_index.value_or(0.0);
+    op.curve_index = measured_in(measured);
+  }
+
+  /// The index of the medium that the angles of a measurement are in.
+  [[nodiscard]] double measured_in(const assembly::Measured& measured) const {
+    if (measured.from)
+      return index(*measured.from).n;
+    const auto opposite =
+        m_surface.coating->substrate == Side::beyond ? std::optional(m_surface.before) : m_surface.beyond;
+    return opposite ? index(*opposite).n : 1.0;
+  }
+
   const Assembly& m_assembly;
   const Surface& m_surface;
   double m_wavelength_nm;
 };
 
-Act intended_act(const Assembly& assembly, assembly::SurfaceId surface) {
-  const auto visit =
-      std::find_if(assembly.stations.begin(), assembly.stations.end(),
-                   [&](const assembly::Station& station) { return station.surface == surface; });
-  return visit->intended;
-}
-
 } // namespace
 
 Plan compile(const Assembly& assembly, const Bench& bench, const Routes& routes, double wavelength_nm) {
-  Plan plan{wavelength_nm, {}, {}, {}};
+  Plan plan{wavelength_nm, {}, {}, {}, {}};
   for (const Leg& leg : routes.legs())
     plan.legs.push_back(compile(leg, assembly, bench, wavelength_nm));
   for (assembly::SurfaceId id = 0; id < assembly.surfaces.size(); ++id) {
@@ -170,7 +238,7 @@ Plan compile(const Assembly& assembly, const Bench& bench, const Routes& routes,
     std::copy(surface.clear.at.begin(), surface.clear.at.end(), op.centre);
     op.loss = surface.loss;
     for (const Side side : {Side::before, Side::beyond}) {
-      BoundaryCompiler(assembly, surface, wavelength_nm).compile(op, side, intended_act(assembly, id), plan);
+      BoundaryCompiler(assembly, surface, wavelength_nm).compile(op, side, plan);
       plan.ops.push_back(op);
     }
   }

@@ -61,8 +61,7 @@ double weights(const List& list) {
 class Tracing {
 public:
   Tracing(const Train& train, Sink* sink)
-      : m_light(train.assembly->light), m_pupil(m_light),
-        m_path(intended_path(*train.assembly, train.routes)),
+      : m_light(train.assembly->light), m_pupil(m_light), m_path(train.path),
         m_coherency(optics::coherency(m_light.polarization)), m_stations(train.assembly->stations.size()),
         m_sink(sink) {
     const double all = weights(m_light.wavelengths) * weights(m_light.fields);
@@ -73,7 +72,7 @@ public:
                             f,
                             m_light.wavelengths[w].weight * field.weight / all,
                             &train.plans[w],
-                            Launcher(m_light, m_pupil, field),
+                            Launcher(Source(m_light, field), m_pupil, train.footprints[f]),
                             {}});
         m_groups.back().replicate.resize(replicates);
         for (Tally& tally : m_groups.back().replicate)
@@ -164,7 +163,8 @@ private:
       Entry entry;
       StepOut out;
       out.entry = &entry;
-      (step.act == Act::bounce ? out.bounce : out.pass) = &block;
+      out.bounces = step.act == Act::bounce;
+      (out.bounces ? out.bounce : out.pass) = &block;
       interact(group.plan->legs[step.leg], group.plan->ops[step.op], m_coherency, block, out);
       tally.ledger.enter(step.visit, entry);
     }
@@ -204,7 +204,7 @@ private:
 
   const Light& m_light;
   Pupil m_pupil;
-  Path m_path;
+  const Path& m_path;
   optics::Coherency m_coherency;
   std::size_t m_stations;
   Sink* m_sink;
@@ -217,10 +217,15 @@ std::optional<Train> prepare(const Assembly& assembly, assembly::Faults& faults)
   auto bench = lay_out(assembly, faults);
   if (!bench)
     return std::nullopt;
-  Train train{&assembly, std::move(*bench), Routes(assembly), {}};
+  const Routes routes(assembly, bench->from);
+  std::vector<Plan> plans;
   for (const assembly::Wavelength& wavelength : assembly.light.wavelengths)
-    train.plans.push_back(compile(assembly, train.bench, train.routes, wavelength.nm));
-  return train;
+    plans.push_back(compile(assembly, *bench, routes, wavelength.nm));
+  Path path = intended_path(assembly, routes);
+  auto launches = footprints(assembly, path, plans.front(), faults);
+  if (!launches)
+    return std::nullopt;
+  return Train{&assembly, std::move(*bench), routes, std::move(plans), std::move(path), std::move(*launches)};
 }
 
 Traced trace(const Train& train, const TraceOptions& options) {

@@ -78,7 +78,8 @@ Run run(const trace::Train& train, const RayBlock& launched, std::size_t wavelen
     trace::Entry entry;
     trace::StepOut out;
     out.entry = &entry;
-    (step.act == trace::Act::bounce ? out.bounce : out.pass) = &block;
+    out.bounces = step.act == trace::Act::bounce;
+    (out.bounces ? out.bounce : out.pass) = &block;
     trace::interact(plan.legs[step.leg], plan.ops[step.op], coherency, block, out);
     result.ledger.enter(step.visit, entry);
     if (meddle)

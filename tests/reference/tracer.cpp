@@ -78,7 +78,7 @@ public:
   RayRecord record;
 
 private:
-  [[nodiscard]] const optics::Index medium() const { return index_of(m_assembly, m_medium, m_wavelength_nm); }
+  [[nodiscard]] optics::Index medium() const { return index_of(m_assembly, m_medium, m_wavelength_nm); }
   [[nodiscard]] Eigen::Matrix3cd coherency() const { return m_throughput * m_P * m_launched * m_P.adjoint(); }
   [[nodiscard]] double power() const { return coherency().trace().real(); }
 

@@ -97,7 +97,8 @@ Walk walk(const trace::Train& train, const RayBlock& launched, optics::State sta
     trace::StepOut out;
     out.entry = &entry;
     out.tape = &walk.tapes.emplace_back();
-    (step.act == trace::Act::bounce ? out.bounce : out.pass) = &block;
+    out.bounces = step.act == trace::Act::bounce;
+    (out.bounces ? out.bounce : out.pass) = &block;
     trace::interact(plan.legs[step.leg], plan.ops[step.op], coherency, block, out);
     walk.ledger.enter(step.visit, entry);
     walk.behind.push_back(block);

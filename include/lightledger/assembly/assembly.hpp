@@ -36,6 +36,7 @@ struct Field {
 
 /// The disc of launch in mm; `gaussian` is the 1/e² radius of irradiance.
 struct Beam {
+  bool fill_stop = false; ///< each field's rays fill the first stop; then nothing below applies
   double radius = 1.0;
   std::optional<double> gaussian;
   double inner = 0.0;
@@ -89,9 +90,33 @@ struct Ideal {
   Powers s, p;
 };
 
+/// Curves from a coater: points on a grid of wavelengths and angles, bilinear between them. The front is the side
+/// that the light of the measurement came from.
+struct Measured {
+  struct Powers {
+    double s, p;
+  };
+  /// Radians in our sign (growing with thickness), reflection at the outermost surface.
+  struct Phases {
+    double rs, rp, ts, tp;
+  };
+  struct Point {
+    Powers reflect, transmit;
+    Powers reflect_back; ///< met from the other side; 1 − T − A of the front where the file has no such columns
+    Phases phases;       ///< those of an ideal coating where the file has none
+  };
+
+  std::vector<double> wavelengths_nm; ///< ascending
+  std::vector<double> angles_deg;     ///< ascending, in `from`
+  std::vector<Point> points;          ///< angles within wavelengths
+  std::optional<MediumId> from;       ///< none: the side opposite the substrate, else air
+  bool has_phases = false;
+  std::optional<double> shift_index; ///< one angle only; read at λ/√(1 − sin²θ/n²), θ in air
+};
+
 struct Coating {
   std::string name;
-  std::variant<Layers, Ideal> kind;
+  std::variant<Layers, Ideal, Measured> kind;
 };
 
 enum class Side { before, beyond };
@@ -140,7 +165,23 @@ struct Sensor {
   std::optional<std::array<std::uint32_t, 2>> pixels;
   double reflectance = 0.0;
 };
-using Effect = std::variant<Interface, Opening, Sensor>;
+/// Acts along and across an axis that lies in the station's plane, projected across the ray.
+struct Polarizer {
+  double axis_deg; ///< from the surface's x toward its y
+  double pass = 1.0, block = 0.0;
+};
+/// The field across the (fast) axis is multiplied by exp(+iδ).
+struct Retarder {
+  double axis_deg;
+  double retardance_deg;
+  std::optional<double> at_nm; ///< δ scales as at/λ; none: the same at all wavelengths
+};
+struct Rotator {
+  enum class Kind { active, faraday };
+  double angle_deg; ///< turns x toward y for light along the axis
+  Kind kind;
+};
+using Effect = std::variant<Interface, Opening, Sensor, Polarizer, Retarder, Rotator>;
 
 struct Surface {
   Shape shape;
@@ -159,9 +200,13 @@ struct Surface {
 enum class Act { pass, bounce, detect };
 
 struct Focus {};
-using Gap = std::variant<double, Focus>;
+/// Up to where the axis meets the surface that the next station visits again.
+struct UpToSurface {};
+using Gap = std::variant<double, Focus, UpToSurface>;
 
-/// One visit of the light to a surface, in the order of the train.
+/// One visit of the light to a surface, in the order of the train. The first station of a surface is the visit
+/// that its tilt, shift and media are stated for; later ones (`again`) meet it where the axis meets the plane
+/// tangent to its vertex.
 struct Station {
   std::string name;
   SurfaceId surface;

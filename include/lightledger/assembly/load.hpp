@@ -29,11 +29,19 @@ struct Change {
   std::string value;
 };
 
+/// Where files of measured curves are looked for.
+struct MeasuredFiles {
+  std::filesystem::path folder; ///< that their names start from; empty: that of the assembly file
+  bool allow_outside = false;   ///< whether they may lie outside of it, links followed
+};
+
 /// Reads, checks and completes an assembly file. All faults of the file are found in one run: of syntax, of
 /// names, types, units and senses, of media out of their range at the light's wavelengths.
-[[nodiscard]] Loaded load(const std::filesystem::path& path, const std::vector<Change>& changes = {});
+[[nodiscard]] Loaded load(const std::filesystem::path& path, const std::vector<Change>& changes = {},
+                          const MeasuredFiles& curves = {});
 
 /// The same for text that is already here; `file` is the name used in messages.
-[[nodiscard]] Loaded load_text(std::string file, std::string text, const std::vector<Change>& changes = {});
+[[nodiscard]] Loaded load_text(std::string file, std::string text, const std::vector<Change>& changes = {},
+                               const MeasuredFiles& curves = {});
 
 } // namespace lightledger::assembly

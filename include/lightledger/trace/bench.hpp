@@ -18,17 +18,19 @@ struct Frame {
 /// Where everything stands, by the axis rule of contract §2. The bench's own coordinates are those of the
 /// axis as it arrives at the first station.
 struct Bench {
-  std::vector<Frame> surface;  ///< per surface: vertex, and the surface's own axes after shift and tilt
-  std::vector<Frame> arriving; ///< per station: its point of the axis, and the axes as the light arrives
-  std::vector<Frame> leaving;  ///< per station: the same point, the axes after reflection and turn
-  std::vector<double> gap;     ///< per station, in mm along the leaving axis; 0 after the last
+  std::vector<Frame> surface;       ///< per surface: vertex, and the surface's own axes after shift and tilt
+  std::vector<Frame> arriving;      ///< per station: its point of the axis, and the axes as the light arrives
+  std::vector<assembly::Side> from; ///< per station: the side of the surface that the light arrives at
+  std::vector<Frame> leaving;       ///< per station: the same point, the axes after reflection and turn
+  std::vector<double> gap;          ///< per station, in mm along the leaving axis; 0 after the last
 };
 
 /// Rx(a) Ry(b) Rz(c) for angles in degrees, exact at multiples of 90°.
 [[nodiscard]] Eigen::Matrix3d rotation(const std::array<double, 3>& degrees);
 
-/// Lays the train out. A focus that is virtual or infinitely far, and an axis that runs in a mirror's plane,
-/// are faults, and no bench is returned then.
+/// Lays the train out. A focus that is virtual or infinitely far, an axis that runs in a mirror's plane, and
+/// a surface to be met again that the axis does not come back to, or comes to in another medium, are faults,
+/// and no bench is returned then.
 [[nodiscard]] std::optional<Bench> lay_out(const assembly::Assembly& assembly, assembly::Faults& faults);
 
 } // namespace lightledger::trace

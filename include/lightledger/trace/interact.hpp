@@ -24,7 +24,8 @@ struct StepOut {
   RayBlock* pass = nullptr;   ///< the beam that crosses
   RayBlock* bounce = nullptr; ///< the beam that is reflected
   Tape* tape = nullptr;
-  Entry* entry = nullptr; ///< set, not added to; tells of the operator's intended action
+  Entry* entry = nullptr; ///< set, not added to
+  bool bounces = false;   ///< the beam that goes onward for the tape and the entry is the reflected one
 };
 
 /// The polarized interaction of a block of rays: from the last surface along the leg to the next,

@@ -45,23 +45,40 @@ private:
   std::vector<RingNode> m_rings;
 };
 
+/// Where rays of one field come from: a direction at infinity, or an object point before or behind the launch
+/// plane, in the first station's arriving frame.
+class Source {
+public:
+  Source(const assembly::Light& light, const assembly::Field& field);
+
+  /// Gives the ray of a lane, whose point is set, its direction, double-pole basis and unit Jones matrix.
+  void aim(RayBlock& block, int lane) const;
+
+private:
+  bool m_infinite;
+  bool m_converging;
+  std::array<double, 3> m_object; ///< direction at infinity, else the object point
+};
+
+/// The part of the launch plane that a field's rays cross: centre + x · first + y · second for (x, y) on the
+/// unit disc, in mm.
+struct Footprint {
+  std::array<double, 2> centre, first, second;
+};
+
 /// Fills blocks with the rays of one field, in the first station's arriving frame, at the launch plane z = 0.
 class Launcher {
 public:
-  Launcher(const assembly::Light& light, const Pupil& pupil, const assembly::Field& field);
+  Launcher(const Source& source, const Pupil& pupil, const Footprint& footprint)
+      : m_source(source), m_pupil(pupil), m_footprint(footprint) {}
 
   /// Rays `first` … of a replicate, as many as fit below `end`; returns the number of the next ray.
   std::uint64_t fill(RayBlock& block, int replicate, std::uint64_t first, std::uint64_t end) const;
 
 private:
-  void aim(RayBlock& block, int lane) const;
-
+  Source m_source;
   const Pupil& m_pupil;
-  double m_radius;
-  std::array<double, 2> m_at;
-  bool m_infinite;
-  bool m_converging;
-  std::array<double, 3> m_object; ///< direction at infinity, else the object point
+  Footprint m_footprint;
 };
 
 } // namespace lightledger::trace

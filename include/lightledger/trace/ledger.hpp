@@ -19,8 +19,9 @@ struct Entry {
   double bulk = 0.0;     ///< in the leg that leads here; a Ledger's row: in the gap that follows
   double backward = 0.0; ///< power that ran against its direction on that leg; a row: on the leg that follows
 
-  double inside = 0.0; ///< arriving power inside the clear area
-  double pass_s = 0.0; ///< Σ arriving power · |a_s|² over the same rays
+  double extrapolated = 0.0; ///< arriving power that a measured curve was extended for
+  double inside = 0.0;       ///< arriving power inside the clear area
+  double pass_s = 0.0;       ///< Σ arriving power · |a_s|² over the same rays
   double pass_p = 0.0;
   double incidence = 0.0; ///< Σ arriving power · angle of incidence, rad
   double least_incidence = std::numeric_limits<double>::infinity();

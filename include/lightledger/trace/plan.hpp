@@ -14,9 +14,9 @@ enum class LegKind : std::uint8_t { along_z, rigid };
 enum class ShapeKind : std::uint8_t { plane, conic, asphere };
 enum class ClearKind : std::uint8_t { unlimited, disc, rectangle, ellipse };
 /// How a meeting changes the field: not at all, by the Fresnel amplitudes of two transparent media, by those
-/// of an absorbing backing, by a stack of layers, by powers that are the same at every angle, or by fixed
-/// amplitudes along and across an axis in the surface's plane.
-enum class AmplitudeKind : std::uint8_t { none, fresnel, metal, stack, ideal, element };
+/// of an absorbing backing, by a stack of layers, by powers that are the same at every angle, by measured
+/// curves, or by fixed amplitudes along and across an axis in the surface's plane.
+enum class AmplitudeKind : std::uint8_t { none, fresnel, metal, stack, ideal, measured, element };
 
 /// From the frame of one surface to that of the next: p' = rotation · p + shift (row by row, mm).
 struct PlanLeg {
@@ -27,6 +27,16 @@ struct PlanLeg {
   double alpha; ///< absorption 4πκ/λ in 1/mm
   double index;
 };
+
+/// One point of a measured curve, as seen from the side that the light comes from: powers, and phases in rad.
+struct CurvePoint {
+  double x; ///< angle in degrees, or wavelength in nm for a curve that shifts with the angle
+  double reflect_s, reflect_p, transmit_s, transmit_p;
+  double phase_rs, phase_rp, phase_ts, phase_tp;
+};
+
+/// The point at `low.x` with all its values between those of two points.
+[[nodiscard]] CurvePoint mix(const CurvePoint& low, const CurvePoint& high, double share);
 
 /// A surface met from one side, as plain numbers at one wavelength; its own frame, mm.
 struct PlanOp {
@@ -44,7 +54,6 @@ struct PlanOp {
   double centre[2];
 
   AmplitudeKind amplitude;
-  Act intended;
   double n1, n2;   ///< of incidence and, for light that goes on, beyond
   double n2_kappa; ///< of an absorbing backing
   double wavelength_nm;
@@ -52,6 +61,10 @@ struct PlanOp {
   std::uint32_t layer_count;
   double reflect_s, reflect_p; ///< powers of an ideal coating
   double transmit_s, transmit_p;
+  const CurvePoint* curve; ///< measured, ascending in x
+  std::uint32_t curve_count;
+  double curve_index;         ///< of the medium that its angles are in
+  double shift_index;         ///< the curve is read at λ/√(1 − sin²θ/n²), θ in air; 0: at the angle
   double axis[2];             ///< of an element, in the surface's x, y
   double along[2], across[2]; ///< its amplitudes, real and imaginary part
   double blocked[2];          ///< the power it absorbs along and across
@@ -68,6 +81,7 @@ struct Plan {
   double wavelength_nm;
   std::vector<PlanLeg> legs;
   std::vector<PlanOp> ops;
+  std::vector<std::unique_ptr<CurvePoint[]>> curves;
   std::vector<std::unique_ptr<optics::Layer[]>> stacks; ///< what the operators' `layers` point into
 };
 

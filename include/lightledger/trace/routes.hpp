@@ -3,6 +3,7 @@
 #include <lightledger/assembly/assembly.hpp>
 
 #include <cstdint>
+#include <utility>
 #include <variant>
 #include <vector>
 
@@ -44,27 +45,31 @@ class Routes {
 public:
   static constexpr LegId launch_leg = 0;
 
-  explicit Routes(const assembly::Assembly& assembly);
+  /// `from` tells per station at which side of its surface the light arrives along the train.
+  Routes(const assembly::Assembly& assembly, std::vector<assembly::Side> from);
 
   [[nodiscard]] const std::vector<Leg>& legs() const { return m_legs; }
   [[nodiscard]] State start() const { return {0, Heading::along}; }
   [[nodiscard]] Hop next(State state, Act act) const;
+  /// The operator of a meeting: a surface, met from its side `before` or `beyond`.
+  [[nodiscard]] OpId op(const assembly::Assembly& assembly, State state) const;
 
 private:
   struct Meeting {
     Hop pass, bounce, detect;
   };
   [[nodiscard]] Meeting meeting(const assembly::Assembly& assembly, State state) const;
+  void lay_legs(const assembly::Assembly& assembly);
+  [[nodiscard]] Hop turned_back(const assembly::Assembly& assembly, State state) const;
   [[nodiscard]] Hop forward(StationId visit) const;
   [[nodiscard]] Hop backward(StationId visit) const;
 
   StationId m_stations;
+  std::vector<assembly::Side> m_entry; ///< per visit: where light arrives along the train
+  std::vector<assembly::Side> m_exit;  ///< per visit: where it leaves as intended
   std::vector<Leg> m_legs;
   std::vector<Meeting> m_meetings; ///< two a visit: along, against
 };
-
-/// The operator of a meeting: a surface, met from its side `before` or `beyond`.
-[[nodiscard]] OpId operator_of(const assembly::Assembly& assembly, State state);
 
 /// One way through the train: how the light gets to each meeting, and what it does there.
 struct Path {

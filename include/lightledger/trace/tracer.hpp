@@ -1,5 +1,6 @@
 #pragma once
 
+#include <lightledger/trace/aim.hpp>
 #include <lightledger/trace/bench.hpp>
 #include <lightledger/trace/launch.hpp>
 #include <lightledger/trace/ledger.hpp>
@@ -13,15 +14,17 @@
 
 namespace lightledger::trace {
 
-/// A train made ready: one Plan per wavelength.
+/// A train made ready to be traced.
 struct Train {
   const assembly::Assembly* assembly;
   Bench bench;
   Routes routes;
-  std::vector<Plan> plans;
+  std::vector<Plan> plans;           ///< per wavelength
+  Path path;                         ///< as intended
+  std::vector<Footprint> footprints; ///< per field
 };
 
-/// Lays out and compiles; none where the layout has faults. The assembly must outlive the train.
+/// Lays out, compiles and aims; none where that finds faults. The assembly must outlive the train.
 [[nodiscard]] std::optional<Train> prepare(const assembly::Assembly& assembly, assembly::Faults& faults);
 
 /// The ledger of one wavelength and field, relative to what was launched there, and its replicates' shares.

@@ -9,7 +9,6 @@
 namespace lightledger::analysis {
 namespace {
 
-using assembly::Requirement;
 using assembly::Sense;
 using testing::ElementsAre;
 using testing::HasSubstr;

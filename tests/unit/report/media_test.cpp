@@ -1,6 +1,5 @@
 #include <lightledger/report/media.hpp>
 
-#include <gmock/gmock.h>
 #include <gtest/gtest.h>
 #include <nlohmann/json.hpp>
 
@@ -8,8 +7,6 @@ namespace lightledger::report {
 namespace {
 
 using analysis::MediumEntry;
-using testing::HasSubstr;
-using testing::Not;
 
 const Envelope envelope{"0.1.0", "media", std::nullopt, {}};
 

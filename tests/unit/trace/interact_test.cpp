@@ -230,7 +230,7 @@ TEST(BothBeams, ComeFromOneStepAndShareThePower) {
   RayBlock bounce;
   Entry entry;
   interact(plan.legs[0], plan.ops[0], optics::coherency({}), ray({3, 1, 0}, {0.1, 0, 1}),
-           {&pass, &bounce, nullptr, &entry});
+           {&pass, &bounce, nullptr, &entry, false});
   double reflected = 0.0;
   for (const auto& row : bounce.J)
     reflected += 0.5 * row[0] * row[0];

@@ -45,7 +45,8 @@ double mean_r_power(const std::vector<PupilPoint>& all, int power) {
 RayBlock one_ray(const Light& light, const Field& field) {
   const Pupil pupil(light);
   RayBlock block;
-  Launcher(light, pupil, field).fill(block, 0, 0, 1);
+  const Footprint disc{light.beam.at, {light.beam.radius, 0.0}, {0.0, light.beam.radius}};
+  Launcher(Source(light, field), pupil, disc).fill(block, 0, 0, 1);
   EXPECT_EQ(block.count, 1);
   return block;
 }

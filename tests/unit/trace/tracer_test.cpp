@@ -126,7 +126,8 @@ TEST(Closure, SeesAnAmplitudeThatIsWrongByOnePartInTenToTheNine) {
     RayBlock block = support::ray({1, 2, 0}, {0, 0, 1});
     for (StationId visit = 0; visit < 3; ++visit) {
       Entry entry;
-      interact(plan.legs[visit], plan.ops[2 * visit], unpolarized, block, {&block, nullptr, nullptr, &entry});
+      interact(plan.legs[visit], plan.ops[2 * visit], unpolarized, block,
+               {&block, nullptr, nullptr, &entry, false});
       ledger.enter(visit, entry);
       if (visit == 1)
         for (auto& row : block.J)
