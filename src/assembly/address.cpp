@@ -41,20 +41,25 @@ std::optional<std::size_t> longest_leading(std::size_t count, Names name, std::s
   return longest;
 }
 
+std::string station_name(const Document& document, const Node& station) {
+  const auto text = [&](std::size_t slot) { return document.node(station.entries[slot].value).scalar; };
+  if (const auto name = slot_of(station, "name"))
+    return text(*name);
+  if (const auto again = slot_of(station, "again"))
+    return text(*again) + " again";
+  return {};
+}
+
 } // namespace
 
-std::vector<std::string_view> station_names(const Document& document) {
+std::vector<std::string> station_names(const Document& document) {
   const Node& root = document.node(*document.root());
   const auto train = slot_of(root, "train");
-  std::vector<std::string_view> names;
+  std::vector<std::string> names;
   if (!train)
     return names;
-  for (const NodeId id : document.node(root.entries[*train].value).items) {
-    const Node& station = document.node(id);
-    const auto name = slot_of(station, "name");
-    names.push_back(name ? std::string_view(document.node(station.entries[*name].value).scalar)
-                         : std::string_view());
-  }
+  for (const NodeId id : document.node(root.entries[*train].value).items)
+    names.push_back(station_name(document, document.node(id)));
   return names;
 }
 
@@ -93,7 +98,7 @@ bool AddressWalk::step_to_key() {
 bool AddressWalk::step_to_station() {
   const auto names = station_names(m_document);
   const auto station = longest_leading(
-      names.size(), [&names](std::size_t i) { return names[i]; }, m_rest);
+      names.size(), [&names](std::size_t i) { return std::string_view(names[i]); }, m_rest);
   if (!station || slot_of(here(), names[*station]))
     return false;
   const std::size_t train = *slot_of(here(), "train");

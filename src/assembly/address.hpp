@@ -3,6 +3,7 @@
 #include <lightledger/assembly/document.hpp>
 
 #include <cstddef>
+#include <string>
 #include <string_view>
 #include <vector>
 
@@ -14,9 +15,9 @@ struct AddressStep {
   std::size_t slot = 0;
 };
 
-/// The names of the train's stations, by their place; empty for those without. Nothing where there is no
-/// train.
-[[nodiscard]] std::vector<std::string_view> station_names(const Document& document);
+/// The names of the train's stations, by their place, those included that `again` gives; empty for stations
+/// without. Nothing where there is no train.
+[[nodiscard]] std::vector<std::string> station_names(const Document& document);
 
 /// The way from the root along an address, as far as there is one. Names may hold dots, blanks and brackets:
 /// of all that fit, the longest is taken.

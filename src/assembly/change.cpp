@@ -19,14 +19,14 @@ constexpr std::array<std::string_view, 6> sections{"title",    "light", "media",
                                                    "coatings", "train", "requirements"};
 
 /// What may follow the part of an address that was found: keys, and at the root the stations.
-std::vector<std::string_view> continuations(const Document& document, const AddressWalk& walk) {
+std::vector<std::string_view> continuations(const AddressWalk& walk,
+                                            const std::vector<std::string>& stations) {
   std::vector<std::string_view> words;
   for (const Node::Entry& entry : walk.here().entries)
     words.emplace_back(entry.key);
   if (walk.path().size() == 1) {
     words.insert(words.end(), sections.begin(), sections.end());
-    const auto names = station_names(document);
-    words.insert(words.end(), names.begin(), names.end());
+    words.insert(words.end(), stations.begin(), stations.end());
   }
   return words;
 }
@@ -40,7 +40,8 @@ std::string nearest_address(const Document& document, std::string_view address, 
     word.remove_prefix(1);
   const std::string_view before = address.substr(0, address.size() - word.size());
   const std::size_t end = std::min(word.find_first_of(".["), word.size());
-  const std::string_view better = nearest(word.substr(0, end), continuations(document, walk));
+  const auto stations = station_names(document);
+  const std::string_view better = nearest(word.substr(0, end), continuations(walk, stations));
   if (better.empty())
     return {};
   return fmt::format("{}{}{}", before, better, word.substr(end));

@@ -29,6 +29,10 @@ struct Character {
 
 /// A name or value of the user's in single quotes, printable and cut to a length that fits a sentence.
 [[nodiscard]] std::string quoted(std::string_view text);
+/// The same, so that std::quoted is not taken for strings.
+[[nodiscard]] inline std::string quoted(const std::string& text) {
+  return quoted(std::string_view(text));
+}
 
 /// Line and column (in bytes) of a place in the text.
 [[nodiscard]] Mark mark_at(std::string_view text, std::size_t offset);

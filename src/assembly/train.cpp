@@ -9,6 +9,7 @@
 
 #include <algorithm>
 #include <array>
+#include <iterator>
 #include <utility>
 
 namespace lightledger::assembly {
@@ -70,8 +71,9 @@ void Train::read_first_visit(Mapping& station, Does does, Next next) {
   result.surface = static_cast<SurfaceId>(m_assembly.surfaces.size());
   Met met{result.name, result.surface, does == Does::refract || does == Does::reflect, false, 0, {}};
   const bool arriving_known = m_current_known;
+  const std::size_t faults = m_reader.fault_count();
   const Surface surface = read_surface(station, does);
-  met.media_known = arriving_known && (m_current_known || does != Does::refract);
+  met.media_known = arriving_known && m_reader.fault_count() == faults;
   met.before = surface.before;
   met.beyond = surface.beyond;
   if (does == Does::stop)
@@ -104,7 +106,7 @@ std::string Train::read_name(Mapping& station) {
   return name ? new_name(*value, *name) : std::string();
 }
 
-std::string Train::new_name(Value value, std::string name) {
+std::string Train::new_name(Value value, const std::string& name) {
   if (!m_met.try_emplace(name).second)
     m_reader.fault_from([&] {
       return Fault{m_reader.mark(value),
@@ -120,20 +122,25 @@ Train::Does Train::read_does(Mapping& station) {
   station.unavailable("rear");
   const auto value = station.take("does");
   const Does does = value ? action(*value, actions) : Does::refract;
-  const bool any_effect = std::any_of(effects.begin(), effects.end(),
-                                      [&station](std::string_view effect) { return station.has(effect); });
-  if (value && !any_effect)
+  std::vector<std::string_view> written;
+  std::copy_if(effects.begin(), effects.end(), std::back_inserter(written),
+               [&station](std::string_view effect) { return station.has(effect); });
+  if (written.empty() && !value)
+    for (const std::string_view key : {"again", "polarize", "retard", "rotate"})
+      station.take(key); // where nothing is said, each of these could have been meant
+  if (written.empty())
     return does;
-  station.take("again");
-  const auto effect = station.one_of(effects, "one of polarize, retard, rotate");
-  if (!effect)
-    return any_effect ? Does::unavailable : does;
-  const auto meant = static_cast<Does>(std::find(actions.begin(), actions.end(), *effect) - actions.begin());
+  if (written.size() > 1) {
+    station.one_of(written, "one effect at a station");
+    return Does::unavailable;
+  }
+  const auto meant =
+      static_cast<Does>(std::find(actions.begin(), actions.end(), written[0]) - actions.begin());
   if (value && does != meant && does != Does::unavailable)
-    m_reader.fault(station.key_mark(*effect),
-                   fmt::format("'{}' stands at a station that does: {}", *effect,
+    m_reader.fault(station.key_mark(written[0]),
+                   fmt::format("'{}' stands at a station that does: {}", written[0],
                                actions[static_cast<std::size_t>(does)]),
-                   fmt::format("does: {}, which may be left out", *effect));
+                   fmt::format("does: {}, which may be left out", written[0]));
   return meant;
 }
 

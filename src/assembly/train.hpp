@@ -50,7 +50,7 @@ private:
   void read_first_visit(Mapping& station, Does does, Next next);
   void keep(const Mapping& station, Does does, Station result, Next next);
   std::string read_name(Mapping& station);
-  std::string new_name(Value value, std::string name);
+  std::string new_name(Value value, const std::string& name);
   Does read_does(Mapping& station);
   Does action(Value value, const std::vector<std::string_view>& accepted);
   Gap read_gap(Mapping& station, Next next);

@@ -10,6 +10,7 @@
 #include <algorithm>
 #include <cmath>
 #include <numbers>
+#include <stdexcept>
 
 namespace lightledger::reference {
 namespace {
@@ -84,7 +85,8 @@ private:
 
   bool arrive(const Surface& surface, const Place& place, Step& step);
   void travel(double distance, Step& step);
-  void pass_interface(const Station& station, const Surface& surface, Step& step);
+  void meet_interface(const Station& station, const Surface& surface, Step& step);
+  void divide(Act act, const PlaneOfIncidence& plane, const Interface& interface, Step& step) const;
   void go_on(Act act, const PlaneOfIncidence& plane, const Interface& interface);
   void thin_out(const Surface& surface, double scatter, Step& step);
 
@@ -92,13 +94,21 @@ private:
   double m_wavelength_nm;
   Ray m_ray;
   assembly::MediumId m_medium;
-  Eigen::Matrix3cd m_launched; ///< ⟨E E†⟩ at launch
+  Eigen::Matrix3cd m_launched = Eigen::Matrix3cd::Zero(); ///< ⟨E E†⟩ at launch
   PolarizationMatrix m_P = PolarizationMatrix::Identity();
   double m_throughput = 1.0; ///< of scatter, loss and bulk
   double m_optical_path = 0.0;
   bool m_ended = false;
-  Vector m_normal;
+  Vector m_normal = Vector::Zero(); ///< of the surface met last
 };
+
+/// Throws where a surface acts on the field in a way that is not in this book.
+void require_known(const Surface& surface) {
+  if (!std::holds_alternative<assembly::Interface>(surface.effect) &&
+      !std::holds_alternative<assembly::Opening>(surface.effect) &&
+      !std::holds_alternative<assembly::Sensor>(surface.effect))
+    throw std::invalid_argument("an effect that the textbook tracer does not know");
+}
 
 /// Along the ray to the surface. The way from the launch to the first one, and ways back, absorb nothing.
 void Walk::travel(double distance, Step& step) {
@@ -165,46 +175,53 @@ void Walk::thin_out(const Surface& surface, double scatter, Step& step) {
   step.onward = power();
 }
 
-void Walk::pass_interface(const Station& station, const Surface& surface, Step& step) {
+/// What leaves the intended way at an interface: reflected by a lens, leaked through a mirror, or absorbed,
+/// also in an opaque backing.
+void Walk::divide(Act act, const PlaneOfIncidence& plane, const Interface& interface, Step& step) const {
+  const Eigen::Matrix3cd arriving = coherency();
+  const auto power_along = [&](const Vector& axis) {
+    return (axis.transpose() * arriving * axis).value().real();
+  };
+  const double in_s = power_along(plane.s);
+  const double in_p = power_along(m_ray.direction.cross(plane.s));
+  const auto& [s, p] = interface.boundary;
+  const double reflected = s.reflected * in_s + p.reflected * in_p;
+  const double transmitted = s.transmitted * in_s + p.transmitted * in_p;
+  const bool opaque = optics::opaque(interface.exit);
+  step.absorbed = s.absorbed * in_s + p.absorbed * in_p + (opaque ? transmitted : 0.0);
+  if (act == Act::pass)
+    step.aside = reflected;
+  else
+    step.aside = opaque ? 0.0 : transmitted;
+}
+
+void Walk::meet_interface(const Station& station, const Surface& surface, Step& step) {
   const Act act = station.intended;
   const PlaneOfIncidence plane = plane_of_incidence(m_ray.direction, m_normal);
   const Interface interface = interface_at(m_assembly, surface, plane.angle, m_wavelength_nm);
-  const auto& [s, p] = interface.boundary;
   record.doubtful |= interface.doubtful;
-
-  const Eigen::Matrix3cd arriving = coherency();
-  const Eigen::Matrix3d axes = triple(plane.s, m_ray.direction);
-  const double arriving_s = (axes.col(0).transpose() * arriving * axes.col(0)).value().real();
-  const double arriving_p = (axes.col(1).transpose() * arriving * axes.col(1)).value().real();
-  const double reflected_power = s.reflected * arriving_s + p.reflected * arriving_p;
-  const double transmitted_power = s.transmitted * arriving_s + p.transmitted * arriving_p;
-  const bool opaque = optics::opaque(interface.exit);
-  step.absorbed = s.absorbed * arriving_s + p.absorbed * arriving_p + (opaque ? transmitted_power : 0.0);
-  if (act == Act::bounce)
-    step.aside = opaque ? 0.0 : transmitted_power;
-  else
-    step.aside = reflected_power;
-
-  const bool ends = act == Act::pass && interface.total_reflection;
-  if (!ends) {
-    step.pass_s = act == Act::bounce ? s.reflected : s.transmitted;
-    step.pass_p = act == Act::bounce ? p.reflected : p.transmitted;
-    go_on(act, plane, interface);
-    const double cosine_behind = std::abs(m_ray.direction.dot(plane.normal));
-    const double x =
-        roughness_phase(surface, act, interface, plane.angle.cosine, cosine_behind, m_wavelength_nm);
-    thin_out(surface, scattered_share(x), step);
-  }
-  m_ended = ends;
+  divide(act, plane, interface, step);
+  m_ended = act == Act::pass && interface.total_reflection;
+  if (m_ended)
+    return;
+  const auto& [s, p] = interface.boundary;
+  step.pass_s = act == Act::bounce ? s.reflected : s.transmitted;
+  step.pass_p = act == Act::bounce ? p.reflected : p.transmitted;
+  go_on(act, plane, interface);
+  const double cosine_behind = std::abs(m_ray.direction.dot(plane.normal));
+  const double x =
+      roughness_phase(surface, act, interface, plane.angle.cosine, cosine_behind, m_wavelength_nm);
+  thin_out(surface, scattered_share(x), step);
 }
 
 bool Walk::visit(const Station& station, const Place& place) {
   const Surface& surface = m_assembly.surfaces.at(station.surface);
+  require_known(surface);
   Step step;
   step.incident = power();
   const bool arrived = arrive(surface, place, step);
   if (arrived && std::holds_alternative<assembly::Interface>(surface.effect))
-    pass_interface(station, surface, step);
+    meet_interface(station, surface, step);
   else if (arrived)
     thin_out(surface, 0.0, step);
   m_medium = medium_behind(m_assembly, station);
