@@ -60,6 +60,8 @@ public:
   Headings(const std::vector<std::string>& line, CurveFaults& faults) : m_faults(faults) {
     for (const std::string& name : line)
       add(name);
+    if (m_headings.size() != line.size())
+      return; // what is missing may stand there in other words
     for (const Column column : {wavelength, angle, rs, rp, ts, tp})
       if (!has(column))
         m_faults.add(fmt::format(" has no column '{}'", column_name(column)), std::string(columns_text));

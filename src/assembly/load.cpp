@@ -18,10 +18,10 @@ namespace lightledger::assembly {
 
 namespace {
 
-constexpr std::size_t largest_file = 8U << 20U;
+constexpr std::size_t largest_file = 4U << 20U;
 
 Fault too_large() {
-  return {{}, "the file is larger than 8 MB", "an assembly, which is far smaller", {}};
+  return {{}, "the file is larger than 4 MB", "an assembly, which is far smaller", {}};
 }
 
 Fault unreadable(Unreadable why) {

@@ -69,7 +69,7 @@ double Mapping::number_or(double fallback, std::string_view key, Unit unit, Boun
 bool Mapping::forbid(std::string_view key, std::string_view reason, std::string_view accepted) {
   if (entry(key) == nullptr)
     return false;
-  m_asked.push_back(key);
+  m_forbidden.push_back(key);
   m_reader->fault(key_mark(key), fmt::format("'{}' {}", key, reason), std::string(accepted));
   return true;
 }
@@ -96,13 +96,14 @@ std::optional<std::string_view> Mapping::need_one_of(const Keys& keys, std::stri
   return one_of(keys, accepted);
 }
 
-bool Mapping::asked_for(std::string_view key) const {
-  return std::find(m_asked.begin(), m_asked.end(), key) != m_asked.end();
+bool Mapping::settled(std::string_view key) const {
+  return std::find(m_asked.begin(), m_asked.end(), key) != m_asked.end() ||
+         std::find(m_forbidden.begin(), m_forbidden.end(), key) != m_forbidden.end();
 }
 
 void Mapping::finish() {
   for (const Node::Entry& candidate : m_reader->node(m_value).entries) {
-    if (asked_for(candidate.key))
+    if (settled(candidate.key))
       continue;
     const std::string& meant = m_reader->meant_key(candidate.key, m_what, m_asked);
     refuse(candidate, meant);

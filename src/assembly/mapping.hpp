@@ -60,7 +60,7 @@ private:
   };
 
   [[nodiscard]] const Node::Entry* entry(std::string_view key) const;
-  [[nodiscard]] bool asked_for(std::string_view key) const;
+  [[nodiscard]] bool settled(std::string_view key) const;
   void refuse(const Node::Entry& unknown, const std::string& meant);
   void report(const Missing& missing);
 
@@ -68,6 +68,7 @@ private:
   Value m_value;
   std::string_view m_what;
   Keys m_asked;
+  Keys m_forbidden;
   std::vector<Missing> m_missing;
 };
 

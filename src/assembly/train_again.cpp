@@ -25,6 +25,8 @@ void Train::read_again(Mapping& station, Next next) {
   const Does does = value ? action(*value, actions) : Does::refract;
   if (met != nullptr)
     arrive_again(*met, m_reader.mark(earlier));
+  if (does == Does::reflect)
+    station.call("a reflecting station with 'again'");
   if (does == Does::refract)
     refract_again(station, met);
   forbid_surface_keys(station, met);

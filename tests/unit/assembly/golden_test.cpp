@@ -33,7 +33,8 @@ class BadFile : public testing::TestWithParam<std::string> {};
 
 /// Each file has one class of faults, and beside it the whole report that a person gets.
 TEST_P(BadFile, IsReportedInTheseWords) {
-  const Loaded loaded = load_text(GetParam() + ".yaml", content(folder / (GetParam() + ".yaml")));
+  const Loaded loaded =
+      load_text(GetParam() + ".yaml", content(folder / (GetParam() + ".yaml")), {}, {folder});
   EXPECT_FALSE(loaded.assembly);
   EXPECT_EQ(loaded.report(), content(folder / (GetParam() + ".txt")));
 }

@@ -105,8 +105,10 @@ coatings:
   neutral: {ideal: {reflect: {s: 0.1, p: 5 %}}}
 train:
   - &window {name: window, into: fused-silica, coating: ar, clear: {diameter: 28}, gap: 4}
+  - {name: plate, retard: {axis: 45, waves: 0.25, at: 532}, gap: 0}
   - {name: lens, radius: -41.2, conic: -0.4, asphere: {A4: 1.0e-6}, into: air, gap: focus}
-  - {name: fold, does: reflect, tilt: [45, 0, 0], backing: Al, coating: neutral, clear: {width: 40, height: 30}, gap: 20}
+  - {name: fold, does: reflect, tilt: [45, 0, 0], backing: Al, coating: neutral, clear: {width: 40, height: 30}}
+  - {again: window, into: fused-silica, gap: 3}
   - {name: sensor, does: detect, clear: {width: 8, height: 6}, pixels: [800, 600]}
 requirements: [{quantity: delivered, at_least: 80 %}]
 )";
