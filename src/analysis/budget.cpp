@@ -121,7 +121,7 @@ BudgetResult budget(const Assembly& assembly, const BudgetOptions& options) {
   const auto train = trace::prepare(assembly, result.faults);
   if (!train)
     return result;
-  const Traced traced = trace::trace(*train, {options.threads, nullptr});
+  const Traced traced = trace::trace(*train, {.threads = options.threads});
   Budget budget;
   budget.delivered = traced.total.delivered();
   budget.uncertainty = traced.standard_error;

@@ -153,6 +153,13 @@ std::optional<CoatingSetting> coating_setting(const Assembly& assembly, const Co
     return std::nullopt;
   }
   const Coating* coating = id ? &assembly.coatings[*id] : nullptr;
+  if (coating && std::holds_alternative<assembly::Measured>(coating->kind)) {
+    faults.add({{},
+                fmt::format("'{}' is measured: its curve is not available in this version", request.name),
+                "a coating of layers, an ideal one, or bare",
+                {}});
+    return std::nullopt;
+  }
   std::optional<Medium> incident = named_medium(assembly, request.incident, "--incident", faults);
   std::optional<Medium> substrate = substrate_of(assembly, coating, request, faults);
   if (!incident || !substrate)

@@ -27,7 +27,7 @@ struct Abandoned {};
 class DocumentBuilder final : public YAML::EventHandler {
 public:
   static constexpr int deepest = 64;
-  static constexpr std::uint64_t most_nodes = 2'000'000; ///< of the tree, with every alias written out
+  static constexpr std::uint64_t most_nodes = 1'000'000; ///< of the tree, with every alias written out
 
   DocumentBuilder(Document& document, Faults& faults, Origin origin);
 

@@ -18,7 +18,7 @@ namespace lightledger::assembly {
 
 namespace {
 
-constexpr std::size_t largest_file = 4U << 20U;
+constexpr std::size_t largest_file = 10U << 20U;
 
 Fault too_large() {
   return {{}, "the file is larger than 4 MB", "an assembly, which is far smaller", {}};

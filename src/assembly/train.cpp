@@ -73,7 +73,8 @@ void Train::read_first_visit(Mapping& station, Does does, Next next) {
   const bool arriving_known = m_current_known;
   const std::size_t faults = m_reader.fault_count();
   const Surface surface = read_surface(station, does);
-  met.media_known = arriving_known && m_reader.fault_count() == faults;
+  met.media_known =
+      arriving_known && m_reader.fault_count() == faults && (does != Does::refract || surface.beyond);
   met.before = surface.before;
   met.beyond = surface.beyond;
   if (does == Does::stop)

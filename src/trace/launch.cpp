@@ -44,9 +44,10 @@ struct ReplicateSize {
 
 } // namespace
 
-Pupil::Pupil(const assembly::Light& light)
-    : m_sampling(light.sampling), m_scattered(std::holds_alternative<Scattered>(light.sampling) ||
-                                              std::holds_alternative<ToAccuracy>(light.sampling)),
+Pupil::Pupil(const assembly::Light& light, std::uint64_t shifts)
+    : m_sampling(light.sampling), m_first_shift(2 * replicates * shifts),
+      m_scattered(std::holds_alternative<Scattered>(light.sampling) ||
+                  std::holds_alternative<ToAccuracy>(light.sampling)),
       m_size(std::visit(ReplicateSize{}, light.sampling)) {
   const double inner = light.beam.fill_stop ? 0.0 : light.beam.inner / light.beam.radius;
   const bool decays = light.beam.gaussian && !light.beam.fill_stop;
@@ -67,7 +68,7 @@ PupilPoint Pupil::on_disc(double fraction_of_area, double azimuth_turns, double 
 
 PupilPoint Pupil::point(std::uint64_t number, int replicate) const {
   if (m_scattered) {
-    const auto dimension = 2 * static_cast<std::uint64_t>(replicate);
+    const auto dimension = m_first_shift + 2 * static_cast<std::uint64_t>(replicate);
     return on_disc(fraction(number * radial_stride + shift(dimension)),
                    fraction(number * azimuthal_stride + shift(dimension + 1)), 1.0);
   }

@@ -60,10 +60,10 @@ double weights(const List& list) {
 
 class Tracing {
 public:
-  Tracing(const Train& train, Sink* sink)
-      : m_light(train.assembly->light), m_pupil(m_light), m_path(train.path),
+  Tracing(const Train& train, const TraceOptions& options)
+      : m_light(train.assembly->light), m_pupil(m_light, options.shifts), m_path(train.path),
         m_coherency(optics::coherency(m_light.polarization)), m_stations(train.assembly->stations.size()),
-        m_sink(sink) {
+        m_sink(options.sink) {
     const double all = weights(m_light.wavelengths) * weights(m_light.fields);
     for (std::size_t w = 0; w < m_light.wavelengths.size(); ++w)
       for (std::size_t f = 0; f < m_light.fields.size(); ++f) {
@@ -229,7 +229,7 @@ std::optional<Train> prepare(const Assembly& assembly, assembly::Faults& faults)
 }
 
 Traced trace(const Train& train, const TraceOptions& options) {
-  Tracing tracing(train, options.sink);
+  Tracing tracing(train, options);
   bool accurate = true;
   with_threads(options.threads, [&] { accurate = tracing.run(); });
   return tracing.collect(accurate);

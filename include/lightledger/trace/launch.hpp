@@ -22,7 +22,8 @@ struct PupilPoint {
 /// (Forbes, J. Opt. Soc. Am. A 5, 1943 (1988)); a grid takes the cells whose centres lie on the disc.
 class Pupil {
 public:
-  explicit Pupil(const assembly::Light& light);
+  /// `shifts` numbers independent sets of shifts; results are those of 0.
+  explicit Pupil(const assembly::Light& light, std::uint64_t shifts = 0);
 
   /// Points a replicate holds in a pattern of fixed size; for scattered sets a sixteenth of the count,
   /// rounded up.
@@ -38,6 +39,7 @@ private:
   [[nodiscard]] PupilPoint on_disc(double fraction_of_area, double azimuth_turns, double weight) const;
 
   assembly::Sampling m_sampling;
+  std::uint64_t m_first_shift;
   bool m_scattered;
   std::uint64_t m_size;
   double m_inner_squared;  ///< of the hole, relative to the radius

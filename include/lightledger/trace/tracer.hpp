@@ -43,8 +43,9 @@ struct Traced {
 };
 
 struct TraceOptions {
-  int threads = 0;      ///< 0: as many as the machine has
-  Sink* sink = nullptr; ///< told of what arrives by each path's end, in the raw weights of the rays
+  int threads = 0;          ///< 0: as many as the machine has
+  std::uint64_t shifts = 0; ///< which set of shifts scatters the rays
+  Sink* sink = nullptr;     ///< told of what arrives by each path's end, in the raw weights of the rays
 };
 
 /// Traces the intended path with the light's own sampling. Rays are cut into a fixed list of chunks (16

@@ -200,6 +200,14 @@ TEST(CoatingCurve, RefusesLightThroughAnOpaqueMedium) {
               HasSubstr("tin is opaque at 500 nm (kappa 4): no light arrives through it"));
 }
 
+TEST(CoatingCurve, RefusesMeasuredCurvesRatherThanTakingThemForBare) {
+  assembly::Assembly measured = assembly();
+  measured.coatings.push_back({"vendor", assembly::Measured{}});
+  const CoatingCurveResult result = coating_curve(measured, {.name = "vendor", .substrate = "glass"});
+  EXPECT_FALSE(result.curve);
+  EXPECT_THAT(assembly::describe(result.faults, "file", ""), HasSubstr("'vendor' is measured"));
+}
+
 TEST(CoatingCurve, RefusesAnglesThatAreNoIncidence) {
   EXPECT_THAT(fault({.name = "quarter", .angles_deg = {0.0, 91.0}}),
               HasSubstr("91 deg is no angle of incidence"));

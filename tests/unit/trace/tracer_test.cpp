@@ -35,9 +35,9 @@ bool same(const Ledger& a, const Ledger& b) {
 
 TEST(Tracer, GivesTheSameBitsOnAnyNumberOfThreads) {
   const Ready r = ready(train(two_by_two + "beam: {radius: 5}, rays: {pattern: scattered, count: 4096}"));
-  const Traced one = trace(r.train, {1, nullptr});
+  const Traced one = trace(r.train, {.threads = 1});
   for (const int threads : {2, 3, 7})
-    EXPECT_TRUE(same(one.total, trace(r.train, {threads, nullptr}).total)) << threads;
+    EXPECT_TRUE(same(one.total, trace(r.train, {.threads = threads}).total)) << threads;
 }
 
 TEST(Tracer, CountsTheRaysOfAllWavelengthsAndFields) {
@@ -112,7 +112,7 @@ TEST(Tracer, HandsEveryArrivalToTheSink) {
   const Ready r =
       ready(train("wavelengths: [550], beam: {radius: 5}, rays: {pattern: scattered, count: 1024}"));
   Counter counter;
-  const Traced traced = trace(r.train, {0, &counter});
+  const Traced traced = trace(r.train, {.sink = &counter});
   EXPECT_NEAR(counter.power / 1024.0, traced.total.delivered(), 1e-14);
 }
 
