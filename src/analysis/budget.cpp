@@ -108,8 +108,9 @@ std::vector<std::string> warnings(const Assembly& assembly, const Traced& traced
       all.push_back(fmt::format("{}: {:.2g} % of the power runs backwards to the next surface", name,
                                 100.0 * row.backward));
     if (row.extrapolated > 0.0)
-      all.push_back(fmt::format("{}: {:.2g} % of the power falls outside its measured curves; their last row holds",
-                                name, 100.0 * row.extrapolated));
+      all.push_back(
+          fmt::format("{}: {:.2g} % of the power falls outside its measured curves; their last row holds",
+                      name, 100.0 * row.extrapolated));
   }
   return all;
 }

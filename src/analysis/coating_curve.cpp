@@ -3,6 +3,7 @@
 #include <lightledger/analysis/coating_curve.hpp>
 #include <lightledger/assembly/films.hpp>
 #include <lightledger/optics/boundary.hpp>
+#include <lightledger/trace/curve.hpp>
 
 #include <fmt/format.h>
 
@@ -46,24 +47,46 @@ CoatingComponent ideal_component(const Ideal::Powers& powers, double sign, bool 
   return result;
 }
 
+/// Measured powers from the front, with phases where the file has them.
+CoatingComponent measured_component(double reflect, double transmit, double phase_r, double phase_t,
+                                    bool phases, bool total, bool opaque) {
+  const double absorptance = std::max(0.0, 1.0 - reflect - transmit);
+  const double reflected = total ? 1.0 - absorptance : reflect;
+  const double transmitted = total ? 0.0 : transmit;
+  CoatingComponent result = component(std::polar(std::sqrt(reflected), phase_r),
+                                      std::polar(std::sqrt(transmitted), phase_t), absorptance, opaque);
+  result.reflectance = reflected;
+  result.transmittance = transmitted;
+  if (!phases)
+    result.phase_r_deg = result.phase_t_deg = std::nullopt;
+  return result;
+}
+
 /// The coating at one wavelength, met at any angle.
 class Monochromatic {
 public:
   Monochromatic(const assembly::Assembly& assembly, const CoatingSetting& setting, double wavelength_nm)
       : m_wavelength_nm(wavelength_nm), m_incident(optics::index_at(setting.incident, wavelength_nm)->n),
-        m_ideal(setting.ideal()) {
+        m_ideal(setting.ideal()), m_measured(setting.measured()) {
     const optics::Index substrate = *optics::index_at(setting.substrate, wavelength_nm);
     m_opaque = optics::opaque(substrate);
     m_substrate = m_opaque ? substrate.complex() : Complex(substrate.n);
     if (setting.layers())
       m_layers = assembly::optical_layers(assembly, *setting.layers(), wavelength_nm);
     std::ranges::reverse(m_layers);
+    if (m_measured) {
+      m_curve = trace::curve(*m_measured, wavelength_nm, false);
+      m_measured_in = m_measured->from ? optics::index_at(assembly.media[*m_measured->from], wavelength_nm)->n
+                                       : m_incident;
+    }
   }
 
   [[nodiscard]] CoatingRow row(double angle_deg) const {
     const double cosine = std::cos(angle_deg * (std::numbers::pi / 180.0));
+    const bool total = optics::normal_component(m_incident, m_substrate, cosine).real() == 0.0;
+    if (m_measured)
+      return measured_row(angle_deg, total);
     if (m_ideal) {
-      const bool total = optics::normal_component(m_incident, m_substrate, cosine).real() == 0.0;
       return {m_wavelength_nm, angle_deg, ideal_component(m_ideal->s, -1.0, total, m_opaque),
               ideal_component(m_ideal->p, 1.0, total, m_opaque)};
     }
@@ -74,6 +97,20 @@ public:
   }
 
 private:
+  [[nodiscard]] CoatingRow measured_row(double angle_deg, bool total) const {
+    const double alpha = m_incident * std::sin(angle_deg * (std::numbers::pi / 180.0));
+    const double x =
+        m_measured->shift_index
+            ? trace::wavelength_on_curve(alpha * alpha, *m_measured->shift_index, m_wavelength_nm)
+            : trace::angle_on_curve(alpha * alpha, m_measured_in);
+    const trace::CurvePoint at = trace::interpolate(m_curve, x);
+    const bool phases = m_measured->has_phases;
+    return {
+        m_wavelength_nm, angle_deg,
+        measured_component(at.reflect_s, at.transmit_s, at.phase_rs, at.phase_ts, phases, total, m_opaque),
+        measured_component(at.reflect_p, at.transmit_p, at.phase_rp, at.phase_tp, phases, total, m_opaque)};
+  }
+
   [[nodiscard]] optics::Response respond(double cosine) const {
     return m_layers.empty()
                ? optics::bare_boundary(m_incident, m_substrate, cosine)
@@ -85,6 +122,9 @@ private:
   Complex m_substrate;
   bool m_opaque;
   const Ideal* m_ideal;
+  const assembly::Measured* m_measured;
+  std::vector<trace::CurvePoint> m_curve;
+  double m_measured_in = 1.0;          ///< index of the medium that the measured angles are in
   std::vector<optics::Layer> m_layers; ///< in the order in which the light meets them
 };
 

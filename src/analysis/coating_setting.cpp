@@ -128,12 +128,27 @@ void check_incident(const CoatingSetting& setting, Faults& faults) {
   }
 }
 
+void check_curves(const CoatingSetting& setting, Faults& faults) {
+  const auto& known = setting.measured()->wavelengths_nm;
+  const auto fails = std::ranges::find_if(setting.wavelengths_nm, [&](double wavelength) {
+    return wavelength < known.front() || wavelength > known.back();
+  });
+  if (fails != setting.wavelengths_nm.end())
+    faults.add({{},
+                fmt::format("'{}' was measured from {} to {} nm; {} nm lies outside", setting.coating->name,
+                            known.front(), known.back(), *fails),
+                {},
+                {}});
+}
+
 /// Each medium is told of once, at the first wavelength where it fails.
 void check_media(const Assembly& assembly, const CoatingSetting& setting, Faults& faults) {
   check_incident(setting, faults);
   if (setting.substrate.name != setting.incident.name)
     if (auto fault = outside_range(setting.substrate, setting.wavelengths_nm))
       faults.add(std::move(*fault));
+  if (setting.measured())
+    check_curves(setting, faults);
   if (!setting.layers())
     return;
   for (const double wavelength : setting.wavelengths_nm)
@@ -153,13 +168,6 @@ std::optional<CoatingSetting> coating_setting(const Assembly& assembly, const Co
     return std::nullopt;
   }
   const Coating* coating = id ? &assembly.coatings[*id] : nullptr;
-  if (coating && std::holds_alternative<assembly::Measured>(coating->kind)) {
-    faults.add({{},
-                fmt::format("'{}' is measured: its curve is not available in this version", request.name),
-                "a coating of layers, an ideal one, or bare",
-                {}});
-    return std::nullopt;
-  }
   std::optional<Medium> incident = named_medium(assembly, request.incident, "--incident", faults);
   std::optional<Medium> substrate = substrate_of(assembly, coating, request, faults);
   if (!incident || !substrate)

@@ -17,6 +17,10 @@ struct CoatingSetting {
   [[nodiscard]] const assembly::Layers* layers() const {
     return coating ? std::get_if<assembly::Layers>(&coating->kind) : nullptr;
   }
+  /// The curves, null where it is not measured.
+  [[nodiscard]] const assembly::Measured* measured() const {
+    return coating ? std::get_if<assembly::Measured>(&coating->kind) : nullptr;
+  }
   /// Its powers, null where it is not ideal.
   [[nodiscard]] const assembly::Ideal* ideal() const {
     return coating ? std::get_if<assembly::Ideal>(&coating->kind) : nullptr;

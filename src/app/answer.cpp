@@ -135,7 +135,7 @@ Answer answer_media(const Options& options, const Input& input) {
 Input read_input(const Options& options) {
   if (options.command == Command::media)
     return {};
-  assembly::Loaded loaded = assembly::load(options.file, options.changes);
+  assembly::Loaded loaded = assembly::load(options.file, options.changes, {{}, options.allow_outside});
   if (!loaded.faults.none())
     throw InputError(loaded.report());
   return {std::move(loaded.assembly), std::move(loaded.warnings), std::move(loaded.file),

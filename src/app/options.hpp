@@ -22,6 +22,7 @@ struct Options {
   int threads = 0;
   bool decibels = false;
   bool quiet = false;
+  bool allow_outside = false; ///< measured curves may lie outside the assembly file's folder
 
   analysis::Split split = analysis::Split::none;
   std::optional<std::string> incident, substrate;

@@ -94,6 +94,7 @@ Options Reader::read(const Words& words) {
   read_isa(words.isa);
   m_options.decibels = words.decibels;
   m_options.quiet = words.quiet;
+  m_options.allow_outside = words.allow_outside;
   read_split(words.split);
   m_options.incident = single("--incident", words.incident);
   m_options.substrate = single("--substrate", words.substrate);
@@ -239,7 +240,8 @@ std::variant<std::string, Options> parse(const std::vector<std::string>& argumen
   try {
     options = reader.read(sort_words(command.command, {arguments.begin() + 1, arguments.end()}));
   } catch (const CLI::ParseError&) {
-    refuse({{}, "a switch takes no value", "--db or --quiet alone", {}}, command_usage(command));
+    refuse({{}, "a switch takes no value", "--db, --quiet or --allow-outside alone", {}},
+           command_usage(command));
   }
   if (!reader.faults().none())
     refuse(reader.faults(), command_usage(command));

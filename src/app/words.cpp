@@ -29,7 +29,9 @@ const std::vector<OptionInfo>& common_options() {
       {"--isa", "NAME", "instruction set of the tracer: portable", &Words::isa},
       {"--set", "PATH=VALUE", "a change of the file, as fold.tilt=[44,0,0]; repeatable", &Words::set},
       {"--db", nullptr, "fractions in dB in the text", nullptr, &Words::decibels},
-      {"--quiet", nullptr, "no text on stdout", nullptr, &Words::quiet}};
+      {"--quiet", nullptr, "no text on stdout", nullptr, &Words::quiet},
+      {"--allow-outside", nullptr, "measured curves may lie outside the file's folder", nullptr,
+       &Words::allow_outside}};
   return options;
 }
 

@@ -15,6 +15,7 @@ struct Words {
   std::vector<std::string> split, incident, substrate, wavelengths, angles;
   bool decibels = false;
   bool quiet = false;
+  bool allow_outside = false;
 };
 
 /// An option of a command: it fills either a list of values or a switch.

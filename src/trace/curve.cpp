@@ -1,7 +1,8 @@
-#include "curve.hpp"
+#include <lightledger/trace/curve.hpp>
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
 #include <numbers>
 
 namespace lightledger::trace {
@@ -26,6 +27,16 @@ void unwrap(const CurvePoint& neighbour, CurvePoint& point) {
   for (const auto phase :
        {&CurvePoint::phase_rs, &CurvePoint::phase_rp, &CurvePoint::phase_ts, &CurvePoint::phase_tp})
     point.*phase = neighbour.*phase + std::remainder(point.*phase - neighbour.*phase, 2.0 * std::numbers::pi);
+}
+
+/// The point at `low.x` with all its values between those of two points.
+CurvePoint mix(const CurvePoint& low, const CurvePoint& high, double share) {
+  CurvePoint mixed = low;
+  for (const auto value :
+       {&CurvePoint::reflect_s, &CurvePoint::reflect_p, &CurvePoint::transmit_s, &CurvePoint::transmit_p,
+        &CurvePoint::phase_rs, &CurvePoint::phase_rp, &CurvePoint::phase_ts, &CurvePoint::phase_tp})
+    mixed.*value = std::lerp(low.*value, high.*value, share);
+  return mixed;
 }
 
 CurvePoint between(const CurvePoint& low, CurvePoint high, double share) {
@@ -62,13 +73,29 @@ std::vector<CurvePoint> over_wavelength(const Measured& measured, bool from_back
 
 } // namespace
 
-CurvePoint mix(const CurvePoint& low, const CurvePoint& high, double share) {
-  CurvePoint mixed = low;
-  for (const auto value :
-       {&CurvePoint::reflect_s, &CurvePoint::reflect_p, &CurvePoint::transmit_s, &CurvePoint::transmit_p,
-        &CurvePoint::phase_rs, &CurvePoint::phase_rp, &CurvePoint::phase_ts, &CurvePoint::phase_tp})
-    mixed.*value = std::lerp(low.*value, high.*value, share);
-  return mixed;
+double angle_on_curve(double alpha_squared, double index) {
+  const double sine = std::sqrt(alpha_squared) / index;
+  return sine < 1.0 ? std::asin(sine) * (180.0 / std::numbers::pi) : std::numeric_limits<double>::max();
+}
+
+double wavelength_on_curve(double alpha_squared, double shift_index, double wavelength_nm) {
+  const double cos_squared = 1.0 - alpha_squared / (shift_index * shift_index);
+  return cos_squared > 0.0 ? wavelength_nm / std::sqrt(cos_squared) : std::numeric_limits<double>::max();
+}
+
+bool outside(std::span<const CurvePoint> points, double x) {
+  constexpr double rounding = 1e-9; // degrees or nm
+  return x < points.front().x - rounding || x > points.back().x + rounding;
+}
+
+CurvePoint interpolate(std::span<const CurvePoint> points, double x) {
+  const auto above = std::ranges::upper_bound(points, x, {}, &CurvePoint::x);
+  if (above == points.begin())
+    return points.front();
+  if (above == points.end())
+    return points.back();
+  const CurvePoint& low = *std::prev(above);
+  return mix(low, *above, (x - low.x) / (above->x - low.x));
 }
 
 std::vector<CurvePoint> curve(const Measured& measured, double wavelength_nm, bool from_back) {

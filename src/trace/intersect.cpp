@@ -1,3 +1,4 @@
+#include "asphere.hpp"
 #include "lanes.hpp"
 
 #include <algorithm>
@@ -5,12 +6,6 @@
 
 namespace lightledger::trace {
 namespace {
-
-/// Newton stops at this many units in the last place of the largest coordinate; if rounding keeps it from
-/// there, the cap ends it and the looser bound decides whether it had arrived.
-constexpr double newton_ulps = 4.0 * std::numeric_limits<double>::epsilon();
-constexpr double newton_arrived = 1e-12;
-constexpr int newton_cap = 40;
 
 /// The point of each ray nearest to the vertex, from which distances along the ray are small and accurate.
 struct Nearest {
@@ -111,53 +106,6 @@ void conic_normal(const PlanOp& op, Meeting& m) {
   }
 }
 
-/// Sag of ISO 10110-12 and its slope over r at a distance from the axis.
-struct Sag {
-  double z, slope_over_r;
-  bool before_equator;
-};
-
-Sag sag(const PlanOp& op, double r_squared) {
-  const double c = op.curvature;
-  const double e = 1.0 - (1.0 + op.conic) * c * c * r_squared;
-  const double root = std::sqrt(std::max(e, std::numeric_limits<double>::min()));
-  const double r = std::sqrt(r_squared);
-  double terms = 0.0;  // Σ A_i r^(i−3)
-  double slopes = 0.0; // Σ i A_i r^(i−3)
-  for (int k = PlanOp::terms - 1; k >= 0; --k) {
-    terms = terms * r + op.a[k];
-    slopes = slopes * r + (k + PlanOp::lowest_power) * op.a[k];
-  }
-  return {c * r_squared / (1.0 + root) + terms * r_squared * r, c / root + slopes * r, e > 0.0};
-}
-
-struct NewtonEnd {
-  double t;
-  bool arrived;
-};
-
-NewtonEnd newton(const PlanOp& op, const double o[3], const double d[3], double t) {
-  double step = std::numeric_limits<double>::infinity();
-  double size = 0.0;
-  bool inside = true;
-  for (int round = 0; round < newton_cap; ++round) {
-    const double x = o[0] + t * d[0];
-    const double y = o[1] + t * d[1];
-    const double z = o[2] + t * d[2];
-    const Sag surface = sag(op, x * x + y * y);
-    const double slope = d[2] - surface.slope_over_r * (x * d[0] + y * d[1]);
-    step = (surface.z - z) / slope;
-    size = std::max({std::abs(x), std::abs(y), std::abs(z), std::abs(t)});
-    inside = surface.before_equator;
-    if (!(std::abs(step) < std::numeric_limits<double>::max()))
-      return {0.0, false};
-    t += step;
-    if (std::abs(step) <= newton_ulps * size)
-      break;
-  }
-  return {t, inside && std::abs(step) <= newton_arrived * size};
-}
-
 void meet_asphere(const PlanOp& op, Meeting& m) {
   Nearest nearest;
   Lanes t;
@@ -165,11 +113,11 @@ void meet_asphere(const PlanOp& op, Meeting& m) {
   find_nearest(m, nearest);
   meet_conic(op, m, nearest, t, found);
   for (int i = 0; i < m.count; ++i) {
-    const double o[3] = {nearest.o[0][i], nearest.o[1][i], nearest.o[2][i]};
-    const double d[3] = {m.d[0][i], m.d[1][i], m.d[2][i]};
-    const NewtonEnd end = newton(op, o, d, found[i] != 0 ? t[i] : -o[2] / d[2]);
-    t[i] = end.arrived ? end.t : 0.0;
-    m.hit[i] = m.alive[i] & mask_of(end.arrived);
+    const AsphereRay ray{{nearest.o[0][i], nearest.o[1][i], nearest.o[2][i]},
+                         {m.d[0][i], m.d[1][i], m.d[2][i]}};
+    const AsphereHit end = meet(op, ray, found[i] != 0 ? t[i] : -ray.o[2] / ray.d[2]);
+    t[i] = end.found ? end.t : 0.0;
+    m.hit[i] = m.alive[i] & mask_of(end.found);
   }
   advance(m, nearest, t);
   for (int i = 0; i < m.count; ++i) {

@@ -1,5 +1,3 @@
-#include "curve.hpp"
-
 #include <lightledger/assembly/films.hpp>
 #include <lightledger/trace/plan.hpp>
 

@@ -3,15 +3,10 @@
 #include <lightledger/optics/boundary.hpp>
 
 #include <algorithm>
-#include <limits>
-#include <numbers>
 #include <span>
 
 namespace lightledger::trace {
 namespace {
-
-/// Places this far outside a measured curve, in degrees or nm, are rounding.
-constexpr double curve_rounding = 1e-9;
 
 double square(const Lanes (&amplitude)[2], int i) {
   return amplitude[0][i] * amplitude[0][i] + amplitude[1][i] * amplitude[1][i];
@@ -41,29 +36,10 @@ void untouched(Meeting& m) {
   }
 }
 
-/// Where a ray reads a measured curve: its angle in the medium of the measurement, or the shifted wavelength.
 double place_on_curve(const PlanOp& op, double sin1_squared) {
   const double alpha_squared = op.n1 * op.n1 * sin1_squared;
-  if (op.shift_index > 0.0) {
-    const double cos_squared = 1.0 - alpha_squared / (op.shift_index * op.shift_index);
-    return cos_squared > 0.0 ? op.wavelength_nm / std::sqrt(cos_squared) : std::numeric_limits<double>::max();
-  }
-  constexpr double degrees = 180.0 / std::numbers::pi;
-  const double sine = std::sqrt(alpha_squared) / op.curve_index;
-  return sine < 1.0 ? std::asin(sine) * degrees : std::numeric_limits<double>::max();
-}
-
-/// Between the two points around a place; beyond the ends of the curve its last point holds.
-CurvePoint interpolate(const PlanOp& op, double x) {
-  const CurvePoint* const end = op.curve + op.curve_count;
-  const CurvePoint* above = std::upper_bound(
-      op.curve, end, x, [](double place, const CurvePoint& point) { return place < point.x; });
-  if (above == op.curve)
-    return *op.curve;
-  const CurvePoint& low = above[-1];
-  if (above == end)
-    return low;
-  return mix(low, *above, (x - low.x) / (above->x - low.x));
+  return op.shift_index > 0.0 ? wavelength_on_curve(alpha_squared, op.shift_index, op.wavelength_nm)
+                              : angle_on_curve(alpha_squared, op.curve_index);
 }
 
 void set_polar(Lanes (&amplitude)[2], int i, double power, double phase) {
@@ -73,9 +49,10 @@ void set_polar(Lanes (&amplitude)[2], int i, double power, double phase) {
 
 /// Beyond the critical angle what is not absorbed is reflected.
 void measured(const PlanOp& op, Meeting& m) {
+  const std::span points(op.curve, op.curve_count);
   for (int i = 0; i < m.count; ++i) {
     const double x = place_on_curve(op, m.sin1_squared[i]);
-    const CurvePoint point = interpolate(op, x);
+    const CurvePoint point = interpolate(points, x);
     const bool crosses = m.crosses[i] != 0 || op.swallows;
     m.absorbed_s[i] = std::max(1.0 - point.reflect_s - point.transmit_s, 0.0);
     m.absorbed_p[i] = std::max(1.0 - point.reflect_p - point.transmit_p, 0.0);
@@ -83,8 +60,7 @@ void measured(const PlanOp& op, Meeting& m) {
     set_polar(m.r_p, i, crosses ? point.reflect_p : 1.0 - m.absorbed_p[i], point.phase_rp);
     set_polar(m.t_s, i, crosses ? point.transmit_s : 0.0, point.phase_ts);
     set_polar(m.t_p, i, crosses ? point.transmit_p : 0.0, point.phase_tp);
-    m.extrapolated[i] =
-        mask_of(x < op.curve->x - curve_rounding || x > op.curve[op.curve_count - 1].x + curve_rounding);
+    m.extrapolated[i] = mask_of(outside(points, x));
   }
 }
 

@@ -2,6 +2,7 @@
 
 #include <lightledger/optics/boundary.hpp>
 #include <lightledger/trace/bench.hpp>
+#include <lightledger/trace/curve.hpp>
 #include <lightledger/trace/routes.hpp>
 
 #include <cstdint>
@@ -27,16 +28,6 @@ struct PlanLeg {
   double alpha; ///< absorption 4πκ/λ in 1/mm
   double index;
 };
-
-/// One point of a measured curve, as seen from the side that the light comes from: powers, and phases in rad.
-struct CurvePoint {
-  double x; ///< angle in degrees, or wavelength in nm for a curve that shifts with the angle
-  double reflect_s, reflect_p, transmit_s, transmit_p;
-  double phase_rs, phase_rp, phase_ts, phase_tp;
-};
-
-/// The point at `low.x` with all its values between those of two points.
-[[nodiscard]] CurvePoint mix(const CurvePoint& low, const CurvePoint& high, double share);
 
 /// A surface met from one side, as plain numbers at one wavelength; its own frame, mm.
 struct PlanOp {

@@ -200,12 +200,46 @@ TEST(CoatingCurve, RefusesLightThroughAnOpaqueMedium) {
               HasSubstr("tin is opaque at 500 nm (kappa 4): no light arrives through it"));
 }
 
-TEST(CoatingCurve, RefusesMeasuredCurvesRatherThanTakingThemForBare) {
+/// 0.1 and 0.3 reflected, 0.8 and 0.5 transmitted at 0 and 40 degrees in air, the same at both wavelengths.
+assembly::Assembly with_measured(bool phases) {
   assembly::Assembly measured = assembly();
-  measured.coatings.push_back({"vendor", assembly::Measured{}});
-  const CoatingCurveResult result = coating_curve(measured, {.name = "vendor", .substrate = "glass"});
+  const auto point = [](double reflect, double transmit) {
+    return assembly::Measured::Point{
+        {reflect, reflect}, {transmit, transmit}, {reflect, reflect}, {std::numbers::pi, 0.0, 0.5, 0.5}};
+  };
+  measured.coatings.push_back(
+      {"vendor", assembly::Measured{{500, 600},
+                                    {0, 40},
+                                    {point(0.1, 0.8), point(0.3, 0.5), point(0.1, 0.8), point(0.3, 0.5)},
+                                    {},
+                                    phases,
+                                    {}}});
+  return measured;
+}
+
+TEST(CoatingCurve, ReadsMeasuredCurvesBetweenTheirAngles) {
+  const auto result =
+      coating_curve(with_measured(true), {.name = "vendor", .substrate = "glass", .angles_deg = {20}});
+  ASSERT_TRUE(result.curve);
+  const CoatingComponent& s = result.curve->rows.front().s;
+  EXPECT_NEAR(s.reflectance, 0.2, 1e-14);
+  EXPECT_NEAR(s.transmittance, 0.65, 1e-14);
+  EXPECT_NEAR(s.absorptance, 0.15, 1e-14);
+  EXPECT_NEAR(s.phase_t_deg.value(), 0.5 * 180.0 / std::numbers::pi, 1e-12);
+}
+
+TEST(CoatingCurve, KnowsNoPhasesWhereNoneWereMeasured) {
+  const auto result = coating_curve(with_measured(false), {.name = "vendor", .substrate = "glass"});
+  ASSERT_TRUE(result.curve);
+  EXPECT_FALSE(result.curve->rows.front().p.phase_r_deg);
+}
+
+TEST(CoatingCurve, RefusesWavelengthsThatWereNotMeasured) {
+  const auto result =
+      coating_curve(with_measured(true), {.name = "vendor", .substrate = "glass", .wavelengths_nm = {650}});
   EXPECT_FALSE(result.curve);
-  EXPECT_THAT(assembly::describe(result.faults, "file", ""), HasSubstr("'vendor' is measured"));
+  EXPECT_THAT(assembly::describe(result.faults, "file", ""),
+              HasSubstr("'vendor' was measured from 500 to 600 nm"));
 }
 
 TEST(CoatingCurve, RefusesAnglesThatAreNoIncidence) {

@@ -1,4 +1,4 @@
-#include "trace/curve.hpp"
+#include <lightledger/trace/curve.hpp>
 
 #include <gtest/gtest.h>
 

@@ -72,6 +72,17 @@ TEST(Intersection, ANewtonThatDoesNotArriveIsMissedAndNeverNaN) {
   EXPECT_EQ(w.ledger.rows[0].missed, 1.0);
 }
 
+TEST(Intersection, OfASteepAsphereIsTheNearestToTheTangentPlane) {
+  // z = r⁴/100 met by a ray that falls toward the axis: it crosses one wall, then the other.
+  const Walk w = walked("- {name: face, asphere: {A4: 1.0e-2}, into: glass, gap: 5}\n" + end,
+                        ray({0, 6, 3}, {0, -3, -1}));
+  const auto hit = w.hit(0);
+  EXPECT_NEAR(hit[2], 1e-2 * std::pow(hit[1], 4), 1e-13);
+  // Along the ray z = 1 + y/3; of its crossings, at y = 3.893 and y = −2.243, the second is nearer to z = 0.
+  EXPECT_NEAR(hit[2], 1.0 + hit[1] / 3.0, 1e-13);
+  EXPECT_NEAR(hit[1], -2.243, 1e-3);
+}
+
 TEST(Intersection, ARayMayRunBackwardsAndIsToldOf) {
   const Walk w =
       walked("- {name: deep, radius: 10, into: glass, gap: 1}\n- {name: back, into: air, gap: 1}\n" + end,

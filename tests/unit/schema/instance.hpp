@@ -1,0 +1,12 @@
+#pragma once
+
+#include "validator.hpp"
+
+#include <lightledger/assembly/document.hpp>
+
+namespace lightledger::schema {
+
+/// The document as JSON, its scalars read in the core schema of YAML 1.2; null where JSON has no such number.
+[[nodiscard]] Json instance(const assembly::Document& document);
+
+} // namespace lightledger::schema
