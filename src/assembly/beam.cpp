@@ -14,6 +14,10 @@ constexpr std::string_view beam_forms =
 constexpr std::string_view sampling_forms =
     "{accuracy: 1e-4}, {pattern: rings, rings: 8, spokes: 24}, "
     "{pattern: grid, across: 64} or {pattern: scattered, count: 4096}";
+/// In 1/e² radii: what the hole may reach, for exp(−2 · 18²) is about the least number there is; and the beam,
+/// for most rays would carry nothing.
+constexpr double farthest_hole = 18.0;
+constexpr double farthest_edge = 100.0;
 constexpr std::uint64_t most_rings = 10'000;
 constexpr std::uint64_t most_across = 65'536;
 
@@ -71,6 +75,17 @@ bool grid_meets_ring(std::uint64_t across, const Beam& beam) {
   return false;
 }
 
+void check_gaussian(Reader& reader, Mapping& mapping, const Beam& beam) {
+  if (beam.inner > farthest_hole * *beam.gaussian)
+    reader.fault(mapping.key_mark("gaussian"),
+                 fmt::format("'inner' leaves no light: it is more than {} times 'gaussian'", farthest_hole));
+  else if (beam.radius > farthest_edge * *beam.gaussian)
+    reader.fault(mapping.key_mark("gaussian"),
+                 fmt::format("'radius' is more than {} times 'gaussian'; hardly a ray would carry light",
+                             farthest_edge),
+                 "a smaller 'radius', where the beam is cut; beyond 3 times 'gaussian' there is 1e-8 of it");
+}
+
 } // namespace
 
 Beam read_beam(Reader& reader, Value value) {
@@ -90,6 +105,8 @@ Beam read_beam(Reader& reader, Value value) {
   beam.radius = radius.value_or(beam.radius);
   beam.inner = inner.value_or(beam.inner);
   beam.gaussian = mapping->number("gaussian", Unit::millimetres, Bound::positive);
+  if (beam.gaussian)
+    check_gaussian(reader, *mapping, beam);
   beam.at = mapping->tuple_or_zero<2>("at", Unit::millimetres);
   mapping->finish();
   return beam;

@@ -97,12 +97,12 @@ void Coatings::read_repeat(Mapping& layer, Value times, const std::string& addre
   if (inner)
     read_layers(*inner, address + ".layers", films);
   const std::size_t group = films.size() - first;
-  if (!count || !room_for((*count - 1) * std::min(group, most_films), layer.key_mark("repeat")))
+  const std::uint64_t more = count ? (*count - 1) * std::min(group, most_films) : 0;
+  if (!room_for(more, layer.key_mark("repeat")))
     return;
-  films.reserve(first + group * *count);
-  for (std::uint64_t i = 1; i < *count; ++i)
-    for (std::size_t k = 0; k < group; ++k)
-      films.push_back(Film(films[first + k]));
+  films.reserve(films.size() + more);
+  for (std::uint64_t i = 0; i < more; ++i)
+    films.push_back(Film(films[films.size() - group]));
 }
 
 void Coatings::read_film(Mapping& layer, const std::string& address, std::vector<Film>& films) {

@@ -10,6 +10,18 @@
 
 namespace lightledger::assembly {
 
+namespace {
+
+/// What is found from X rays to millimetre waves is well within; beyond, rounding breaks the energy balance.
+constexpr double least_index = 1e-3;
+constexpr double largest_index = 1e3;
+
+bool strange(optics::Index index) {
+  return index.n < least_index || index.n > largest_index || index.kappa > largest_index;
+}
+
+} // namespace
+
 const Coverage::Known& Coverage::known(MediumId id) {
   m_known.resize(std::max<std::size_t>(m_known.size(), m_media.size()));
   if (m_known[id])
@@ -19,6 +31,8 @@ const Coverage::Known& Coverage::known(MediumId id) {
     const auto index = optics::index_at(m_media[id], wavelength.nm);
     if (!index && !known.missing_nm)
       known.missing_nm = wavelength.nm;
+    if (index && strange(*index) && !known.strange_nm)
+      known.strange_nm = wavelength.nm;
     if (index && optics::opaque(*index) && !known.opaque_nm)
       known.opaque_nm = wavelength.nm;
     known.gas = known.gas && index && optics::gas(*index);
@@ -29,11 +43,23 @@ const Coverage::Known& Coverage::known(MediumId id) {
 void Coverage::check_known(MediumId id, Mark use) {
   if (const auto missing = known(id).missing_nm)
     m_reader.fault(use, fmt::format("{}; the light has {} nm", known_range(m_media[id]), *missing));
+  if (const auto strange = known(id).strange_nm)
+    refuse_strange(id, *strange, use);
 }
 
 void Coverage::check_known_at(MediumId id, double nm, Mark use) {
-  if (!optics::index_at(m_media[id], nm))
+  const auto index = optics::index_at(m_media[id], nm);
+  if (!index)
     m_reader.fault(use, fmt::format("{}; the layer is given at {} nm", known_range(m_media[id]), nm));
+  else if (strange(*index))
+    refuse_strange(id, nm, use);
+}
+
+void Coverage::refuse_strange(MediumId id, double nm, Mark use) {
+  const optics::Index index = optics::index_at(m_media[id], nm).value();
+  m_reader.fault(
+      use, fmt::format("{} has the index {:.6g} + {:.6g}i at {} nm", m_media[id].name, index.n, index.kappa, nm),
+      fmt::format("an index from {} to {}, kappa up to {}", least_index, largest_index, largest_index));
 }
 
 void Coverage::check_transparent(MediumId id, Mark use) {

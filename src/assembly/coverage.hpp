@@ -17,7 +17,8 @@ public:
            const std::vector<Wavelength>& wavelengths)
       : m_reader(reader), m_media(media), m_wavelengths(wavelengths) {}
 
-  /// A fault at the place of use where the medium is not known at one of the light's wavelengths.
+  /// A fault at the place of use where the medium is not known at one of the light's wavelengths, or has an
+  /// index there that no medium has.
   void check_known(MediumId id, Mark use);
   /// The same at the wavelength at which a layer's waves are counted.
   void check_known_at(MediumId id, double nm, Mark use);
@@ -32,10 +33,12 @@ public:
 private:
   struct Known {
     std::optional<double> missing_nm; ///< the first wavelength at which nothing is known
+    std::optional<double> strange_nm; ///< the first at which the index is one that no medium has
     std::optional<double> opaque_nm;  ///< the first at which the medium is opaque
     bool gas = true;
   };
   const Known& known(MediumId id);
+  void refuse_strange(MediumId id, double nm, Mark use);
 
   Reader& m_reader;
   const std::vector<optics::Medium>& m_media;

@@ -36,6 +36,8 @@ Retarder read_retarder(Reader& reader, Value value) {
     retarder.retardance_deg = degrees_in_wave * mapping->number_or(0.0, "waves", Unit::none, Bound::any);
   else if (form == "degrees")
     retarder.retardance_deg = mapping->number_or(0.0, "degrees", Unit::degrees, Bound::any);
+  if (!std::isfinite(retarder.retardance_deg))
+    reader.fault(mapping->key_mark("waves"), "'waves' is more than any plate retards", "waves, as 0.25");
   retarder.at_nm = mapping->number("at", Unit::nanometres, Bound::positive);
   mapping->finish();
   return retarder;

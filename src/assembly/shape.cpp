@@ -10,6 +10,9 @@ namespace lightledger::assembly {
 
 namespace {
 
+/// A picometre in mm: below it there are no surfaces, and curvatures overflow.
+constexpr double least_radius = 1e-9;
+
 using Terms = decltype(Asphere::terms);
 
 constexpr std::array<std::string_view, std::tuple_size_v<Terms>> term_keys{
@@ -37,6 +40,8 @@ Shape read_shape(Reader& reader, Mapping& station) {
   const Terms terms = asphere ? read_terms(reader, *asphere) : Terms{};
   if (radius == 0.0)
     reader.fault(station.key_mark("radius"), "'radius' is 0; a plane has no 'radius' at all");
+  else if (radius && std::abs(*radius) < least_radius)
+    reader.fault(station.key_mark("radius"), "'radius' is less than a picometre");
   if (conic && !station.has("radius"))
     reader.fault(station.key_mark("conic"), "'conic' says nothing without 'radius'");
   if (std::any_of(terms.begin(), terms.end(), [](double term) { return term != 0.0; }))

@@ -185,7 +185,8 @@ std::string budget_text(const assembly::Assembly& assembly, const Budget& budget
                         const std::vector<std::string>& warnings, std::chrono::duration<double> elapsed,
                         const TextStyle& style) {
   const std::string tables = further_tables(assembly.light, budget, style);
-  return fmt::format("{}\n{}{}\n{}{}{}{}", heading(assembly, style.width),
+  const char* const unit = style.decibels ? "Fractions in dB\n" : "";
+  return fmt::format("{}{}\n{}{}\n{}{}{}{}", heading(assembly, style.width), unit,
                      stations_table(budget.stations, style), delivered_line(budget, elapsed, style),
                      wrapped(describe_losses(budget.stations, style.emphasis), style.width), tables,
                      tables.empty() || warnings.empty() ? "" : "\n",

@@ -39,7 +39,7 @@ std::optional<Vector2d> half_lengths(const Clear& clear) {
 class Aimer {
 public:
   Aimer(const Assembly& assembly, const Path& path, const Plan& plan, std::size_t stop)
-      : m_assembly(assembly), m_stop(stop), m_clear(clear_of(stop)) {
+      : m_assembly(assembly), m_clear(clear_of(stop)) {
     for (std::size_t i = 0; i <= stop; ++i) {
       const Path::Step& step = path.steps[i];
       PlanOp op = plan.ops[step.op];
@@ -185,7 +185,6 @@ private:
   }
 
   const Assembly& m_assembly;
-  std::size_t m_stop;
   Clear m_clear;
   std::vector<Step> m_steps;
   std::string m_failure;

@@ -45,7 +45,7 @@ struct ReplicateSize {
 } // namespace
 
 Pupil::Pupil(const assembly::Light& light, std::uint64_t shifts)
-    : m_sampling(light.sampling), m_first_shift(2 * replicates * shifts),
+    : m_sampling(light.sampling), m_first_shift(std::uint64_t{2} * replicates * shifts),
       m_scattered(std::holds_alternative<Scattered>(light.sampling) ||
                   std::holds_alternative<ToAccuracy>(light.sampling)),
       m_size(std::visit(ReplicateSize{}, light.sampling)) {

@@ -96,7 +96,8 @@ RC_GTEST_PROP(LedgerProperty, DoesNotDependOnTheOrderOfFieldsAndWavelengths, ())
 assembly::Assembly with_a_stop_behind(assembly::Assembly assembly, std::size_t station) {
   assembly::Surface stop;
   stop.effect = assembly::Opening{};
-  stop.before = reference::medium_behind(assembly, assembly.stations[station]);
+  stop.before = reference::medium_behind(assembly, assembly.stations[station],
+                                         reference::lay_out(assembly).stations[station].from);
   assembly::Station visit;
   visit.name = "added";
   visit.surface = static_cast<assembly::SurfaceId>(assembly.surfaces.size());

@@ -41,10 +41,13 @@ void turn_light(assembly::Light& light, double degrees) {
 assembly::Assembly rotated(assembly::Assembly assembly, double degrees) {
   turn_light(assembly.light, degrees);
   double lag = degrees;
-  for (assembly::Station& station : assembly.stations) {
+  for (std::size_t i = 0; i < assembly.stations.size(); ++i) {
+    assembly::Station& station = assembly.stations[i];
     assembly::Surface& surface = assembly.surfaces[station.surface];
-    surface.shift = turned(surface.shift, lag);
-    surface.tilt_deg = angles_of(rotation({0.0, 0.0, lag}) * rotation(surface.tilt_deg));
+    if (reference::first_visit(assembly, i) == i) {
+      surface.shift = turned(surface.shift, lag);
+      surface.tilt_deg = angles_of(rotation({0.0, 0.0, lag}) * rotation(surface.tilt_deg));
+    }
     if (station.intended == assembly::Act::bounce)
       lag = -lag;
     station.turn_deg =

@@ -13,7 +13,8 @@ namespace lightledger::reference {
 /// z is the axis before and behind it; the origin of `surface` is the vertex.
 struct Place {
   Frame arriving, surface, leaving;
-  double gap; ///< in mm along the leaving axis, a focus found
+  assembly::Side from; ///< the side of the surface that the axis arrives at; `before` on its first visit
+  double gap;          ///< in mm along the leaving axis; a focus, or a surface met again, found
 };
 
 struct Bench {
@@ -24,8 +25,11 @@ struct Bench {
 [[nodiscard]] Rotation rotation(const std::array<double, 3>& degrees);
 
 /// Places all stations along the axis (contract §2, "The axis"). Throws std::domain_error where a gap to the
-/// focus leads to no real image.
+/// focus leads to no real image, or the axis does not come back, in the right medium, to a surface met again.
 [[nodiscard]] Bench lay_out(const assembly::Assembly& assembly);
+
+/// The first of the stations that visit the surface of this one.
+[[nodiscard]] std::size_t first_visit(const assembly::Assembly& assembly, std::size_t station);
 
 /// The whole bench carried elsewhere: every point x becomes motion.bench(x).
 [[nodiscard]] Bench moved(const Bench& bench, const Frame& motion);

@@ -44,6 +44,22 @@ struct Incidence {
 /// An ideal coating; beyond the critical angle it reflects all that it does not absorb.
 [[nodiscard]] Boundary ideal(const assembly::Ideal& coating, bool total_reflection);
 
+/// Where light meets a measured coating.
+struct MeasuredAt {
+  double wavelength_nm;
+  double sine_in_air;    ///< n sinθ, the same in all media
+  double index;          ///< of the medium that the file's angles are in
+  bool from_behind;      ///< not from the side that the light of the measurement came from
+  bool total_reflection; ///< then all that it does not absorb is reflected
+};
+
+/// A measured coating, bilinear in wavelength and angle; beyond the last of either that one holds. From
+/// behind, reflected phases are those of Stokes' reversal, π + 2 φ_t − φ_r, where phases were measured.
+[[nodiscard]] Boundary measured(const assembly::Measured& coating, const MeasuredAt& at);
+
+/// A surface as light from one of its sides sees it: what lies there comes before it.
+[[nodiscard]] assembly::Surface seen_from(assembly::Side side, assembly::Surface surface);
+
 /// Everything about an interface of the assembly that a ray meets from its `before` side.
 struct Interface {
   double incident;    ///< real index of the medium of incidence

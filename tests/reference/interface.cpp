@@ -5,6 +5,7 @@
 #include <algorithm>
 #include <cmath>
 #include <stdexcept>
+#include <utility>
 
 namespace lightledger::reference {
 namespace {
@@ -36,7 +37,29 @@ optics::Index exit_index(const assembly::Assembly& assembly, const assembly::Sur
   return optics::opaque(index) ? index : optics::Index{index.n, 0.0};
 }
 
+/// Of the medium of the measurement: `from`, else the side opposite the substrate, else air.
+double index_of_angles(const assembly::Assembly& assembly, const assembly::Surface& surface,
+                       const assembly::Measured& coating, double wavelength_nm) {
+  if (coating.from)
+    return index_of(assembly, *coating.from, wavelength_nm).n;
+  if (surface.coating->substrate == assembly::Side::beyond)
+    return index_of(assembly, surface.before, wavelength_nm).n;
+  return surface.beyond ? index_of(assembly, *surface.beyond, wavelength_nm).n : 1.0;
+}
+
 } // namespace
+
+assembly::Surface seen_from(assembly::Side side, assembly::Surface surface) {
+  if (side == assembly::Side::before)
+    return surface;
+  if (surface.beyond)
+    std::swap(surface.before, *surface.beyond);
+  if (surface.coating)
+    surface.coating->substrate = surface.coating->substrate == assembly::Side::before
+                                     ? assembly::Side::beyond
+                                     : assembly::Side::before;
+  return surface;
+}
 
 Interface interface_at(const assembly::Assembly& assembly, const assembly::Surface& surface, Incidence angle,
                        double wavelength_nm) {
@@ -58,6 +81,11 @@ Interface interface_at(const assembly::Assembly& assembly, const assembly::Surfa
   const assembly::Coating& coating = assembly.coatings.at(surface.coating->coating);
   if (const auto* powers = std::get_if<assembly::Ideal>(&coating.kind))
     here.boundary = ideal(*powers, here.total_reflection);
+  else if (const auto* curves = std::get_if<assembly::Measured>(&coating.kind))
+    here.boundary =
+        measured(*curves, {wavelength_nm, here.incident * angle.sine,
+                           index_of_angles(assembly, surface, *curves, wavelength_nm),
+                           surface.coating->substrate == assembly::Side::before, here.total_reflection});
   else
     here.boundary = stack(here.incident,
                           films_met(assembly, std::get<assembly::Layers>(coating.kind),

@@ -12,9 +12,12 @@ optics::Index index_of(const assembly::Assembly& assembly, assembly::MediumId me
   return *index;
 }
 
-assembly::MediumId medium_behind(const assembly::Assembly& assembly, const assembly::Station& station) {
+assembly::MediumId medium_behind(const assembly::Assembly& assembly, const assembly::Station& station,
+                                 assembly::Side from) {
   const assembly::Surface& surface = assembly.surfaces.at(station.surface);
-  return station.intended == assembly::Act::pass ? surface.beyond.value_or(surface.before) : surface.before;
+  const bool passes = station.intended == assembly::Act::pass;
+  const bool ends_before = (from == assembly::Side::before) != passes;
+  return ends_before ? surface.before : surface.beyond.value_or(surface.before);
 }
 
 } // namespace lightledger::reference

@@ -8,8 +8,8 @@ namespace lightledger::reference {
 [[nodiscard]] optics::Index index_of(const assembly::Assembly& assembly, assembly::MediumId medium,
                                      double wavelength_nm);
 
-/// The medium in which the intended light leaves a station.
+/// The medium in which the intended light leaves a station that it meets from this side.
 [[nodiscard]] assembly::MediumId medium_behind(const assembly::Assembly& assembly,
-                                               const assembly::Station& station);
+                                               const assembly::Station& station, assembly::Side from);
 
 } // namespace lightledger::reference

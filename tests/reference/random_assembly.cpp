@@ -1,6 +1,7 @@
 #include "reference/random_assembly.hpp"
 
 #include "reference/bench.hpp"
+#include "reference/media.hpp"
 #include "reference/random_parts.hpp"
 
 #include <algorithm>
@@ -101,12 +102,92 @@ private:
 
   void station() {
     const double kind = m_dice.between(0.0, 1.0);
-    if (kind < 0.15)
+    if (kind < 0.12)
       stop();
-    else if (kind < 0.32)
+    else if (kind < 0.24)
+      element();
+    else if (kind < 0.38)
       mirror();
+    else if (kind < 0.44 && !m_variety.reversible)
+      way_back();
     else
       lens_face();
+  }
+
+  void way_back() {
+    switch (m_dice.whole(0, 2)) {
+    case 0:
+      second_surface_mirror();
+      break;
+    case 1:
+      double_pass();
+      break;
+    default:
+      mirror_met_twice();
+    }
+  }
+
+  void second_surface_mirror() {
+    lens_face();
+    const std::size_t front = m_result.stations.size() - 1;
+    mirror(20.0);
+    again(front, Act::pass);
+  }
+
+  /// Through some of the stations before to a mirror, and back through them.
+  void double_pass() {
+    const std::size_t mirror_at = m_result.stations.size();
+    mirror(6.0);
+    const std::size_t most = std::min<std::size_t>(mirror_at, static_cast<std::size_t>(m_dice.whole(1, 3)));
+    for (std::size_t back = 1; back <= most; ++back)
+      if (m_result.stations[mirror_at - back].intended != Act::pass || !again(mirror_at - back, Act::pass))
+        return;
+  }
+
+  /// Two mirrors that see each other; on the way back the first one reflects once more, or lets through.
+  void mirror_met_twice() {
+    mirror(25.0);
+    const std::size_t first = m_result.stations.size() - 1;
+    mirror(8.0);
+    const auto& beyond = m_result.surfaces[m_result.stations[first].surface].beyond;
+    const bool transparent = beyond && !contains(m_shelf.metals, *beyond);
+    again(first, transparent && m_dice.chance(0.5) ? Act::pass : Act::bounce);
+  }
+
+  /// Meets the surface of an earlier station again; false, and nothing happens, where the axis does not come
+  /// back to it.
+  bool again(std::size_t earlier, Act act) {
+    Station station = m_result.stations[earlier];
+    station.name += " again " + std::to_string(m_result.stations.size());
+    station.intended = act;
+    station.gap = way(m_medium);
+    station.turn_deg = {};
+    const assembly::Gap written = m_result.stations.back().gap;
+    m_result.stations.back().gap = assembly::UpToSurface{};
+    m_result.stations.push_back(station);
+    try {
+      m_medium = medium_behind(m_result, station, lay_out(m_result).stations.back().from);
+      m_result.stations.back().gap = way(m_medium);
+      return true;
+    } catch (const std::domain_error&) {
+      m_result.stations.pop_back();
+      m_result.stations.back().gap = written;
+      return false;
+    }
+  }
+
+  /// A length of the way in a medium.
+  double way(MediumId medium) {
+    return m_size * (contains(m_shelf.glasses, medium) ? m_dice.between(0.2, 1.5) : m_dice.between(0.5, 8.0));
+  }
+
+  void element() {
+    Surface surface;
+    surface.effect = random_element(m_dice, m_variety.lossless);
+    surface.shape = assembly::Plane{};
+    if (m_dice.chance(0.5))
+      surface.tilt_deg = {m_dice.around_zero(40.0), m_dice.around_zero(20.0), m_dice.around_zero(90.0)};
+    add(surface, Act::pass);
   }
 
   void stop() {
@@ -127,11 +208,14 @@ private:
     m_medium = *surface.beyond;
   }
 
-  void mirror() {
+  void mirror(double most_tilt = 50.0) {
     Surface surface = interface();
-    surface.tilt_deg = {m_dice.around_zero(50.0), m_dice.around_zero(20.0), m_dice.around_zero(45.0)};
+    surface.tilt_deg = {m_dice.around_zero(most_tilt), m_dice.around_zero(0.4 * most_tilt),
+                        m_dice.around_zero(45.0)};
     if (m_dice.chance(0.15)) { // held by nothing but its coating
-      surface.coating = coating(random_ideal(m_dice, m_variety.lossless), assembly::Side::beyond);
+      surface.coating = coating(m_dice.chance(0.5) ? random_ideal(m_dice, m_variety.lossless)
+                                                   : random_measured(m_dice, m_shelf, m_variety.lossless),
+                                m_dice.one_of({assembly::Side::before, assembly::Side::beyond}));
     } else {
       const bool metallic = !m_shelf.metals.empty() && m_dice.chance(0.7);
       surface.beyond = m_dice.one_of(metallic ? m_shelf.metals : m_shelf.glasses);
@@ -165,9 +249,16 @@ private:
     if (!m_dice.chance(probability))
       return;
     const bool on_the_near_side = contains(m_shelf.glasses, m_medium) && m_dice.chance(0.5);
-    surface.coating = coating(m_dice.chance(0.75) ? random_layers(m_dice, m_shelf)
-                                                  : random_ideal(m_dice, m_variety.lossless),
-                              on_the_near_side ? assembly::Side::before : assembly::Side::beyond);
+    surface.coating =
+        coating(any_coating(), on_the_near_side ? assembly::Side::before : assembly::Side::beyond);
+  }
+
+  assembly::Coating any_coating() {
+    const double kind = m_dice.between(0.0, 1.0);
+    if (kind < 0.6)
+      return random_layers(m_dice, m_shelf);
+    return kind < 0.8 ? random_ideal(m_dice, m_variety.lossless)
+                      : random_measured(m_dice, m_shelf, m_variety.lossless);
   }
 
   assembly::CoatingUse coating(assembly::Coating coating, assembly::Side substrate) {
@@ -183,9 +274,7 @@ private:
     station.name = "station " + std::to_string(m_result.stations.size());
     station.surface = static_cast<assembly::SurfaceId>(m_result.surfaces.size());
     station.intended = act;
-    const MediumId behind = act == Act::pass ? surface.beyond.value_or(m_medium) : m_medium;
-    station.gap =
-        m_size * (contains(m_shelf.glasses, behind) ? m_dice.between(0.2, 1.5) : m_dice.between(0.5, 8.0));
+    station.gap = way(act == Act::pass ? surface.beyond.value_or(m_medium) : m_medium);
     if (m_dice.chance(0.1))
       station.turn_deg = {m_dice.around_zero(8.0), m_dice.around_zero(8.0), m_dice.around_zero(90.0)};
     const bool axis_goes_on = act != Act::bounce && station.turn_deg == std::array<double, 3>{};
@@ -206,6 +295,8 @@ private:
     Station& station = m_result.stations[static_cast<std::size_t>(
         m_dice.whole(0, static_cast<int>(m_result.stations.size()) - 2))];
     const assembly::Gap written = station.gap;
+    if (std::holds_alternative<assembly::UpToSurface>(written))
+      return;
     station.gap = assembly::Focus{};
     try {
       const Bench bench = lay_out(m_result);

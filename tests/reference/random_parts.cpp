@@ -1,6 +1,10 @@
 #include "reference/random_parts.hpp"
 
+#include <algorithm>
+#include <cmath>
 #include <limits>
+#include <numbers>
+#include <optional>
 #include <string>
 #include <utility>
 
@@ -73,6 +77,32 @@ void add_films(std::vector<assembly::Film>& films, Dice& dice, const Shelf& shel
   else
     film.thickness = dice.between(10.0, 300.0);
   films.push_back(film);
+}
+
+/// Ascending places on a grid from `first` to about `last`.
+std::vector<double> random_grid(Dice& dice, double first, double last, int count) {
+  std::vector<double> grid;
+  for (int i = 0; i < count; ++i)
+    grid.push_back(first +
+                   (last - first) * (i + (i > 0 ? dice.around_zero(0.3) : 0.0)) / std::max(count - 1, 1));
+  return grid;
+}
+
+/// A phase in (−π, π], near a common one so that the nearest turn of every neighbour is never in question.
+double phase_near(Dice& dice, double common) {
+  return std::remainder(common + dice.around_zero(0.45), 2.0 * std::numbers::pi);
+}
+
+/// One polarization of a point.
+struct MeasuredChannel {
+  double reflect, transmit, reflect_back, phase_r, phase_t;
+};
+
+MeasuredChannel random_channel(Dice& dice, double phase_r, double phase_t, bool lossless) {
+  const double reflect = dice.between(0.0, 1.0);
+  const double transmit = (1.0 - reflect) * (lossless ? 1.0 : dice.between(0.3, 1.0));
+  const double back = lossless || dice.chance(0.5) ? reflect : dice.between(0.0, 1.0 - transmit);
+  return {reflect, transmit, back, phase_near(dice, phase_r), phase_near(dice, phase_t)};
 }
 
 } // namespace
@@ -151,6 +181,49 @@ assembly::Coating random_ideal(Dice& dice, bool lossless) {
   if (dice.chance(0.5))
     coating.p = coating.s;
   return {"ideal", coating};
+}
+
+assembly::Coating random_measured(Dice& dice, const Shelf& shelf, bool lossless) {
+  constexpr double pi = std::numbers::pi;
+  assembly::Measured curves;
+  curves.wavelengths_nm = random_grid(dice, 430.0, 1120.0, dice.whole(1, 4));
+  curves.angles_deg = random_grid(dice, 0.0, dice.between(20.0, 80.0), dice.whole(1, 4));
+  if (curves.angles_deg.size() == 1)
+    curves.shift_index = dice.between(1.4, 2.2);
+  if (dice.chance(0.4))
+    curves.from = dice.one_of(dice.chance(0.5) ? shelf.gases : shelf.glasses);
+  curves.has_phases = dice.chance(0.5);
+  const double phase_r = dice.around_zero(pi);
+  const double phase_t = dice.around_zero(pi);
+  for (std::size_t i = 0; i < curves.wavelengths_nm.size() * curves.angles_deg.size(); ++i) {
+    const MeasuredChannel s = random_channel(dice, phase_r, phase_t, lossless);
+    MeasuredChannel p = random_channel(dice, phase_r + pi, phase_t, lossless);
+    const bool at_normal_incidence = i % curves.angles_deg.size() == 0;
+    if (at_normal_incidence)
+      p = {s.reflect, s.transmit, s.reflect_back, std::remainder(s.phase_r + pi, 2.0 * pi), s.phase_t};
+    assembly::Measured::Phases phases{pi, 0.0, 0.0, 0.0};
+    if (curves.has_phases)
+      phases = {s.phase_r, p.phase_r, s.phase_t, p.phase_t};
+    curves.points.push_back(
+        {{s.reflect, p.reflect}, {s.transmit, p.transmit}, {s.reflect_back, p.reflect_back}, phases});
+  }
+  return {"measured", curves};
+}
+
+assembly::Effect random_element(Dice& dice, bool lossless) {
+  const double axis = dice.around_zero(90.0);
+  const int kind = dice.whole(lossless ? 1 : 0, 2);
+  if (kind == 0) {
+    const double block = dice.chance(0.5) ? 0.0 : dice.magnitude(1e-6, 0.1);
+    return assembly::Polarizer{axis, dice.chance(0.3) ? 1.0 : dice.between(0.5, 1.0), block};
+  }
+  if (kind == 1) {
+    const double retardance = dice.one_of({90.0, 180.0, dice.around_zero(400.0)});
+    return assembly::Retarder{axis, retardance,
+                              dice.chance(0.5) ? std::optional(dice.between(400.0, 1200.0)) : std::nullopt};
+  }
+  return assembly::Rotator{dice.around_zero(180.0), dice.chance(0.5) ? assembly::Rotator::Kind::faraday
+                                                                     : assembly::Rotator::Kind::active};
 }
 
 } // namespace lightledger::reference

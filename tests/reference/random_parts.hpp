@@ -21,5 +21,11 @@ struct Shelf {
 [[nodiscard]] assembly::Clear random_clear(Dice& dice, double size);
 [[nodiscard]] assembly::Coating random_layers(Dice& dice, const Shelf& shelf);
 [[nodiscard]] assembly::Coating random_ideal(Dice& dice, bool lossless);
+/// Curves on a grid about wavelengths from 450 to 1100 nm, the same for s and p at normal incidence;
+/// sometimes with phases that go through many turns.
+[[nodiscard]] assembly::Coating random_measured(Dice& dice, const Shelf& shelf, bool lossless);
+
+/// A polarizer (not where all must be lossless), a retarder or a rotator.
+[[nodiscard]] assembly::Effect random_element(Dice& dice, bool lossless);
 
 } // namespace lightledger::reference

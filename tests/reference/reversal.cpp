@@ -1,5 +1,6 @@
 #include "reference/reversal.hpp"
 
+#include "reference/boundary.hpp"
 #include "reference/media.hpp"
 
 #include <cmath>
@@ -12,11 +13,6 @@ namespace {
 using assembly::Act;
 using assembly::Station;
 using assembly::Surface;
-
-/// Half a turn about x: y and z change their sign.
-Rotation about_face() {
-  return Eigen::Vector3d(1.0, -1.0, -1.0).asDiagonal();
-}
 
 struct FromBehind {
   assembly::Shape operator()(const assembly::Plane& shape) const { return shape; }
@@ -32,22 +28,29 @@ struct FromBehind {
   }
 };
 
-assembly::Side other(assembly::Side side) {
-  return side == assembly::Side::before ? assembly::Side::beyond : assembly::Side::before;
+void reverse_magnet(assembly::Effect& effect) {
+  if (auto* rotator = std::get_if<assembly::Rotator>(&effect);
+      rotator != nullptr && rotator->kind == assembly::Rotator::Kind::faraday)
+    rotator->angle_deg = -rotator->angle_deg;
 }
 
-Surface turned_round(Surface surface, const Place& place, Act act) {
-  surface.shape = std::visit(FromBehind{}, surface.shape);
-  surface.clear.at[1] = -surface.clear.at[1];
-  surface.shift[1] = -surface.shift[1];
-  surface.tilt_deg =
+/// An axis is seen from behind at the opposite angle, and a Faraday rotator turns the other way.
+void turn_element_round(assembly::Effect& effect) {
+  if (auto* polarizer = std::get_if<assembly::Polarizer>(&effect))
+    polarizer->axis_deg = -polarizer->axis_deg;
+  if (auto* retarder = std::get_if<assembly::Retarder>(&effect))
+    retarder->axis_deg = -retarder->axis_deg;
+  reverse_magnet(effect);
+}
+
+Surface on_the_way_back(const Surface& surface, const Place& place, Act act) {
+  const Surface round = turned_round(surface);
+  Surface result = act == Act::pass ? seen_from(assembly::Side::beyond, round) : round;
+  reverse_magnet(result.effect);
+  result.shift[1] = -result.shift[1];
+  result.tilt_deg =
       angles_of(about_face() * place.leaving.axes.transpose() * place.surface.axes * about_face());
-  if (act == Act::pass && surface.beyond) {
-    std::swap(surface.before, *surface.beyond);
-    if (surface.coating)
-      surface.coating->substrate = other(surface.coating->substrate);
-  }
-  return surface;
+  return result;
 }
 
 /// What turns the axis behind a station met from its other side onto the axis that arrived there.
@@ -65,7 +68,7 @@ std::array<double, 3> turn_back(const Place& place, Act act) {
 void add_detector(assembly::Assembly& assembly) {
   Surface plane;
   plane.effect = assembly::Sensor{};
-  plane.before = medium_behind(assembly, assembly.stations.back());
+  plane.before = medium_behind(assembly, assembly.stations.back(), assembly::Side::before);
   Station detector;
   detector.name = "launch";
   detector.surface = static_cast<assembly::SurfaceId>(assembly.surfaces.size());
@@ -75,6 +78,17 @@ void add_detector(assembly::Assembly& assembly) {
 }
 
 } // namespace
+
+Rotation about_face() {
+  return Eigen::Vector3d(1.0, -1.0, -1.0).asDiagonal();
+}
+
+Surface turned_round(Surface surface) {
+  surface.shape = std::visit(FromBehind{}, surface.shape);
+  surface.clear.at[1] = -surface.clear.at[1];
+  turn_element_round(surface.effect);
+  return surface;
+}
 
 std::array<double, 3> angles_of(const Rotation& rotation) {
   constexpr double degree = std::numbers::pi / 180.0;
@@ -90,12 +104,12 @@ Reversed reversed(const assembly::Assembly& assembly, const Bench& bench) {
     Station station = assembly.stations[i];
     const Place& place = bench.stations[i];
     Surface& surface = result.assembly.surfaces[station.surface];
-    surface = turned_round(surface, place, station.intended);
+    surface = on_the_way_back(surface, place, station.intended);
     station.turn_deg = turn_back(place, station.intended);
     station.gap = i > 0 ? bench.stations[i - 1].gap : 0.0;
     if (result.assembly.stations.empty()) {
       result.entrance = {place.leaving.origin, place.leaving.axes * about_face()};
-      result.assembly.light.medium = medium_behind(assembly, assembly.stations[i]);
+      result.assembly.light.medium = medium_behind(assembly, assembly.stations[i], place.from);
     }
     result.assembly.stations.push_back(station);
   }

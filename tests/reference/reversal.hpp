@@ -6,6 +6,12 @@
 
 namespace lightledger::reference {
 
+/// Half a turn about x: y and z change their sign.
+[[nodiscard]] Rotation about_face();
+
+/// The same surface described in its own axes after half a turn about x; media and coating stay as they are.
+[[nodiscard]] assembly::Surface turned_round(assembly::Surface surface);
+
 /// A train met from its other end.
 struct Reversed {
   assembly::Assembly assembly; ///< the stations in reverse order, and a detector where the light was launched
@@ -13,7 +19,9 @@ struct Reversed {
 };
 
 /// Turns a train round so that the same ray runs back through the same places. Shifts must stand where the
-/// axis leaves as it arrived (Variety::reversible), for a station is shifted across the axis that arrives.
+/// axis leaves as it arrived (Variety::reversible), for a station is shifted across the axis that arrives,
+/// and no surface may be met again. The magnets of Faraday rotators are reversed: only so do matrices
+/// transpose.
 [[nodiscard]] Reversed reversed(const assembly::Assembly& assembly, const Bench& bench);
 
 /// A ray that reached the detector, sent back from behind the last station before it, on the reversed train's

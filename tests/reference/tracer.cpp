@@ -2,6 +2,7 @@
 
 #include "reference/boundary.hpp"
 #include "reference/clear.hpp"
+#include "reference/element.hpp"
 #include "reference/launch.hpp"
 #include "reference/media.hpp"
 #include "reference/shape.hpp"
@@ -10,7 +11,6 @@
 #include <algorithm>
 #include <cmath>
 #include <numbers>
-#include <stdexcept>
 
 namespace lightledger::reference {
 namespace {
@@ -86,6 +86,7 @@ private:
   bool arrive(const Surface& surface, const Place& place, Step& step);
   void travel(double distance, Step& step);
   void meet_interface(const Station& station, const Surface& surface, Step& step);
+  void meet_element(const Element& element, Step& step);
   void divide(Act act, const PlaneOfIncidence& plane, const Interface& interface, Step& step) const;
   void go_on(Act act, const PlaneOfIncidence& plane, const Interface& interface);
   void thin_out(const Surface& surface, double scatter, Step& step);
@@ -101,14 +102,6 @@ private:
   bool m_ended = false;
   Vector m_normal = Vector::Zero(); ///< of the surface met last
 };
-
-/// Throws where a surface acts on the field in a way that is not in this book.
-void require_known(const Surface& surface) {
-  if (!std::holds_alternative<assembly::Interface>(surface.effect) &&
-      !std::holds_alternative<assembly::Opening>(surface.effect) &&
-      !std::holds_alternative<assembly::Sensor>(surface.effect))
-    throw std::invalid_argument("an effect that the textbook tracer does not know");
-}
 
 /// Along the ray to the surface. The way from the launch to the first one, and ways back, absorb nothing.
 void Walk::travel(double distance, Step& step) {
@@ -214,17 +207,26 @@ void Walk::meet_interface(const Station& station, const Surface& surface, Step& 
   thin_out(surface, scattered_share(x), step);
 }
 
+void Walk::meet_element(const Element& element, Step& step) {
+  step.absorbed = (element.absorption.cast<Complex>() * coherency()).trace().real();
+  m_P = element.field * m_P;
+}
+
 bool Walk::visit(const Station& station, const Place& place) {
-  const Surface& surface = m_assembly.surfaces.at(station.surface);
-  require_known(surface);
+  const Surface surface = seen_from(place.from, m_assembly.surfaces.at(station.surface));
   Step step;
   step.incident = power();
   const bool arrived = arrive(surface, place, step);
   if (arrived && std::holds_alternative<assembly::Interface>(surface.effect))
     meet_interface(station, surface, step);
-  else if (arrived)
+  else if (arrived) {
+    const bool on_the_way_back = place.from == assembly::Side::beyond;
+    if (const auto acts =
+            element(surface.effect, place.surface.axes, m_ray.direction, on_the_way_back, m_wavelength_nm))
+      meet_element(*acts, step);
     thin_out(surface, 0.0, step);
-  m_medium = medium_behind(m_assembly, station);
+  }
+  m_medium = medium_behind(m_assembly, station, place.from);
   step.direction = m_ray.direction;
   step.P = m_P;
   record.steps.push_back(step);

@@ -107,6 +107,7 @@ TEST(BudgetText, GivesFractionsInDecibelsOnRequest) {
   const std::string text = text_of(sample::budget(), {.decibels = true});
   EXPECT_THAT(text,
               HasSubstr("  2  fold      -0.006   -0.410        -   -10.521        -          -        -\n"));
+  EXPECT_THAT(text, HasSubstr("\nFractions in dB\n"));
   EXPECT_THAT(text, HasSubstr("delivered  -0.5066 dB +- 0.0005 dB    "));
 }
 

@@ -16,7 +16,7 @@ Json scalar(const Node& node) {
   if (node.quoted)
     return node.scalar;
   if (const auto number = assembly::core_number(node.scalar))
-    return std::isfinite(*number) ? Json(*number) : Json();
+    return std::isfinite(*number) ? Json(*number) : Json(node.scalar);
   if (assembly::core_boolean(node.scalar))
     return node.scalar[0] == 't' || node.scalar[0] == 'T';
   return node.scalar;

@@ -42,12 +42,19 @@ assembly::Loaded load(const Sample& sample, const std::vector<assembly::Change>&
   return assembly::load_text(sample.name, sample.text, changes, {sample.folder, false});
 }
 
-Json instance_of(const Sample& sample, const std::vector<assembly::Change>& changes) {
+assembly::Document parse(const Sample& sample) {
   assembly::Faults faults;
-  auto document = assembly::Document::parse(sample.name, sample.text, faults);
-  for (const assembly::Change& change : changes)
-    document.set(change.address, change.value, faults);
+  return assembly::Document::parse(sample.name, sample.text, faults);
+}
+
+Json changed(assembly::Document document, const assembly::Change& change) {
+  assembly::Faults faults;
+  document.set(change.address, change.value, faults);
   return instance(document);
+}
+
+Json instance_of(const Sample& sample) {
+  return instance(parse(sample));
 }
 
 const Json& assembly_schema() {

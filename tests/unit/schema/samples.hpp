@@ -31,8 +31,14 @@ struct Sample {
 
 [[nodiscard]] assembly::Loaded load(const Sample& sample, const std::vector<assembly::Change>& changes = {});
 
-/// The sample as JSON, with changes; null where it cannot be parsed.
-[[nodiscard]] Json instance_of(const Sample& sample, const std::vector<assembly::Change>& changes = {});
+/// As a tree, without a root where it cannot be parsed.
+[[nodiscard]] assembly::Document parse(const Sample& sample);
+
+/// A document as JSON, with a change.
+[[nodiscard]] Json changed(assembly::Document document, const assembly::Change& change);
+
+/// The sample as JSON; null where it cannot be parsed.
+[[nodiscard]] Json instance_of(const Sample& sample);
 
 /// docs/assembly.schema.json
 [[nodiscard]] const Json& assembly_schema();

@@ -1,10 +1,9 @@
 #include "instance.hpp"
-#include "manual.hpp"
 #include "samples.hpp"
 
 #include <lightledger/optics/medium.hpp>
 
-#include <fmt/ranges.h>
+#include <fmt/format.h>
 #include <gmock/gmock.h>
 #include <gtest/gtest.h>
 
@@ -71,9 +70,9 @@ std::string place_of(const std::string& address, const Json& instance) {
 
 /// The keys that the loader names where one is not known.
 Keys keys_of_loader(const Sample& sample, const std::string& address) {
-  const assembly::Loaded loaded =
-      address.empty() ? load({sample.name, sample.text + "\n" + unheard + ": 0\n", sample.folder})
-                      : load(sample, {{address + '.' + unheard, "0"}});
+  const std::vector<assembly::Change> change{{fmt::format("{}.{}", address, unheard), "0"}};
+  const Sample at_the_top{sample.name, fmt::format("{}\n{}: 0\n", sample.text, unheard), sample.folder};
+  const assembly::Loaded loaded = address.empty() ? load(at_the_top) : load(sample, change);
   Keys keys;
   for (const assembly::Fault& fault : loaded.faults.kept()) {
     if (!fault.message.starts_with(fmt::format("'{}' is not a key of", unheard)))
@@ -88,7 +87,7 @@ Keys keys_of_loader(const Sample& sample, const std::string& address) {
 }
 
 Keys keys_of_schema(const Sample& sample, const std::string& address) {
-  Json instance = instance_of(sample, {{address + '.' + unheard, "0"}});
+  Json instance = changed(parse(sample), {address + '.' + unheard, "0"});
   if (address.empty())
     instance[unheard] = 0;
   Keys keys;
@@ -108,7 +107,7 @@ TEST(Schema, AcceptsEverySoundFile) {
 
 TEST(Schema, HasExactlyTheKeysOfTheLoaderAtEveryPlace) {
   std::map<std::string, Keys> of_loader, of_schema;
-  for (const Sample& sample : sound_samples()) {
+  for (const Sample& sample : forms()) {
     const Json instance = instance_of(sample);
     for (const std::string& address : addresses_of(instance)) {
       const Keys keys = keys_of_loader(sample, address);
@@ -119,15 +118,16 @@ TEST(Schema, HasExactlyTheKeysOfTheLoaderAtEveryPlace) {
   }
   // A station that says nothing of its kind could have become one of these by a key more.
   of_schema["train[]unsaid"].insert({"again", "polarize", "retard", "rotate"});
-  ASSERT_GT(of_loader.size(), 40U);
+  const auto has_keys = [](const auto& entry) { return !entry.second.empty(); };
+  ASSERT_GE(std::ranges::count_if(of_loader, has_keys), 35);
   for (const auto& [place, keys] : of_loader)
     EXPECT_EQ(of_schema[place], keys) << "at '" << place << "'";
 }
 
 /// Values that are wrong at most places, and right at some.
-const std::vector<std::string> strangers{"[]",   "{}",   "~",    "true",   "word",  "''",     "-1",
-                                         "0",    "1.5",  "2",    "1e99",   "\"2\"", "3 mrad", "-5 mm",
-                                         "-2 %", "40 %", ".inf", "[1, 1]", "{a: 1}"};
+const std::vector<std::string> strangers{"[]",    "{}",   "~",    "true", "word",  "''",
+                                         "-1",    "0",    "1.5",  "1e99", "\"2\"", "3 mrad",
+                                         "-5 mm", "-2 %", "40 %", ".inf", "[1, 1]"};
 
 /// The kinds of faults for which a schema needs to see nothing but the value itself.
 bool is_of_value(const assembly::Fault& fault) {
@@ -157,13 +157,14 @@ class Stranger : public testing::TestWithParam<std::string> {};
 /// In place of every value of the forms.
 TEST_P(Stranger, IsJudgedAlikeByLoaderAndSchema) {
   const Validator validator(assembly_schema());
-  for (const Sample& sample : forms())
-    for (const std::string& address : addresses_of(instance_of(sample))) {
+  for (const Sample& sample : forms()) {
+    const assembly::Document document = parse(sample);
+    for (const std::string& address : addresses_of(instance(document))) {
       if (address.empty())
         continue;
-      const std::vector<assembly::Change> change{{address, GetParam()}};
-      const assembly::Loaded loaded = load(sample, change);
-      const auto violations = validator.check(instance_of(sample, change));
+      const assembly::Change change{address, GetParam()};
+      const assembly::Loaded loaded = load(sample, {change});
+      const auto violations = validator.check(changed(document, change));
       if (loaded.assembly) {
         EXPECT_EQ(described(violations), "") << sample.name << ' ' << address;
       }
@@ -171,6 +172,7 @@ TEST_P(Stranger, IsJudgedAlikeByLoaderAndSchema) {
         EXPECT_FALSE(violations.empty()) << address << '\n' << loaded.report();
       }
     }
+  }
 }
 
 INSTANTIATE_TEST_SUITE_P(All, Stranger, testing::ValuesIn(strangers),
