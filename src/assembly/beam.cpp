@@ -14,8 +14,8 @@ constexpr std::string_view beam_forms =
 constexpr std::string_view sampling_forms =
     "{accuracy: 1e-4}, {pattern: rings, rings: 8, spokes: 24}, "
     "{pattern: grid, across: 64} or {pattern: scattered, count: 4096}";
-/// In 1/e² radii: what the hole may reach, for exp(−2 · 18²) is about the least number there is; and the beam,
-/// for most rays would carry nothing.
+/// In 1/e² radii: what the hole may reach, for exp(−2 · 18²) is about the least number there is; and the
+/// beam, for most rays would carry nothing.
 constexpr double farthest_hole = 18.0;
 constexpr double farthest_edge = 100.0;
 constexpr std::uint64_t most_rings = 10'000;
@@ -105,7 +105,7 @@ Beam read_beam(Reader& reader, Value value) {
   beam.radius = radius.value_or(beam.radius);
   beam.inner = inner.value_or(beam.inner);
   beam.gaussian = mapping->number("gaussian", Unit::millimetres, Bound::positive);
-  if (beam.gaussian)
+  if (radius && beam.gaussian)
     check_gaussian(reader, *mapping, beam);
   beam.at = mapping->tuple_or_zero<2>("at", Unit::millimetres);
   mapping->finish();

@@ -58,7 +58,8 @@ void Coverage::check_known_at(MediumId id, double nm, Mark use) {
 void Coverage::refuse_strange(MediumId id, double nm, Mark use) {
   const optics::Index index = optics::index_at(m_media[id], nm).value();
   m_reader.fault(
-      use, fmt::format("{} has the index {:.6g} + {:.6g}i at {} nm", m_media[id].name, index.n, index.kappa, nm),
+      use,
+      fmt::format("{} has the index {:.6g} + {:.6g}i at {} nm", m_media[id].name, index.n, index.kappa, nm),
       fmt::format("an index from {} to {}, kappa up to {}", least_index, largest_index, largest_index));
 }
 

@@ -2,6 +2,8 @@
 
 #include "mapping.hpp"
 
+#include <cmath>
+
 namespace lightledger::assembly {
 
 namespace {

@@ -35,7 +35,7 @@ void gather(const Json& value, const std::string& address, std::vector<std::stri
       gather(value[i], fmt::format("{}[{}]", address, i), addresses);
   if (value.is_object())
     for (const auto& [key, inner] : value.items())
-      gather(inner, address.empty() ? key : address + '.' + key, addresses);
+      gather(inner, address.empty() ? key : fmt::format("{}.{}", address, key), addresses);
 }
 
 std::vector<std::string> addresses_of(const Json& instance) {
@@ -209,7 +209,7 @@ void gather_open(const Json& schema, const std::string& path, std::vector<std::s
     open.push_back(path);
   if (schema.is_structured())
     for (const auto& [key, inner] : schema.items())
-      gather_open(inner, path + '/' + key, open);
+      gather_open(inner, fmt::format("{}/{}", path, key), open);
 }
 
 TEST(Schema, LeavesNoMappingOpenToOtherKeys) {

@@ -56,8 +56,9 @@ TEST(Validator, JudgesAsEachKeywordSays) {
 }
 
 TEST(Validator, NamesThePlaceAndTheKeysThatAreKnownThere) {
-  const Validator validator(Json::parse(
-      R"({"properties": {"a": {"items": {"properties": {"x": true, "y": true}, "additionalProperties": false}}}})"));
+  const Validator validator(
+      Json::parse(R"({"properties": {"a": {"items": {"properties": {"x": true, "y": true}, )"
+                  R"("additionalProperties": false}}}})"));
   const auto violations = validator.check(Json::parse(R"({"a": [{"x": 1}, {"z": 1}]})"));
   ASSERT_EQ(violations.size(), 1U);
   EXPECT_EQ(violations[0].address, "a[1]");
