@@ -182,7 +182,7 @@ TEST(PublishedRays, ThickLensesHaveTheirPrintedFocalLengths) {
   a.printed("focal length", "-47.619", focal_length(singlet(-50, 50, 15, 1.5), 1e-5, 1),
             {.computed = "-47.619048", .relative = 1e-7});
   Sheet b{"RT-08b", "Bi-convex lens, thick",
-          "University of Arizona, OPTI 201R lecture notes (2010), ch. 7, p. 20-2"};
+          "University of Arizona, OPTI 201R course notes (2010), ch. 7, p. 20-2"};
   b.printed("focal length (mm)", "75.57", focal_length(singlet(77.265, -77.265, 5.102, 1.517), 1e-5, 1),
             {.computed = "75.574745", .relative = 1e-7});
   Sheet c{"RT-08c", "Bi-convex lens with a near object", "E. Hecht, Optics, §6.1, example"};
