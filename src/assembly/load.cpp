@@ -21,7 +21,7 @@ namespace {
 constexpr std::size_t largest_file = 10U << 20U;
 
 Fault too_large() {
-  return {{}, "the file is larger than 4 MB", "an assembly, which is far smaller", {}};
+  return {{}, "the file is larger than 10 MB", "an assembly, which is far smaller", {}};
 }
 
 Fault unreadable(Unreadable why) {

@@ -40,6 +40,19 @@ double total_weight(const List& list) {
   return sum;
 }
 
+/// The points where a field's rays start: on the disc, or with `fill_stop` on the ellipse that it is mapped
+/// to.
+std::vector<reference::DiscPoint> launch_points(const Both& both, std::size_t field) {
+  const assembly::Light& light = both.assembly->light;
+  if (!light.beam.fill_stop)
+    return reference::disc_points(light.beam, light.sampling);
+  const auto& [centre, first, second] = both.train.footprints.at(field);
+  std::vector<reference::DiscPoint> points = reference::disc_points(assembly::Beam{}, light.sampling);
+  for (auto& [at, share] : points)
+    at = {centre[0] + at[0] * first[0] + at[1] * second[0], centre[1] + at[0] * first[1] + at[1] * second[1]};
+  return points;
+}
+
 } // namespace
 
 Both prepare(const assembly::Assembly& assembly) {
@@ -105,12 +118,12 @@ reference::PolarizationMatrix polarization_matrix(const trace::Train& train, con
 
 Textbook textbook(const Both& both) {
   const assembly::Light& light = both.assembly->light;
-  const auto points = reference::disc_points(light.beam, light.sampling);
   const double all = total_weight(light.wavelengths) * total_weight(light.fields);
   Textbook result;
   for (const assembly::Wavelength& wavelength : light.wavelengths)
-    for (const assembly::Field& field : light.fields)
-      for (const reference::DiscPoint& point : points) {
+    for (std::size_t f = 0; f < light.fields.size(); ++f)
+      for (const reference::DiscPoint& point : launch_points(both, f)) {
+        const assembly::Field& field = light.fields[f];
         const auto record = reference::trace(both.bench, *both.assembly, wavelength.nm,
                                              reference::launch(light, field, point.at));
         result.ledger.enter(record, wavelength.weight * field.weight / all * point.share);

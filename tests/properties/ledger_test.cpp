@@ -2,6 +2,7 @@
 #include "properties/rotated.hpp"
 #include "reference/media.hpp"
 #include "reference/reversal.hpp"
+#include "reference/unfolded.hpp"
 
 #include <gtest/gtest.h>
 #include <rapidcheck/gtest.h>
@@ -135,6 +136,15 @@ RC_GTEST_PROP(LedgerProperty, IsUnchangedWhenAGapIsSplit, ()) {
   RC_ASSERT(alike(whole, split, 1e-11));
 }
 
+RC_GTEST_PROP(LedgerProperty, IsUnchangedWhenSurfacesMetAgainAreWrittenOut, ()) {
+  assembly::Assembly assembly = reference::random_assembly(reference::any_seed(), {.returning = true});
+  assembly.light.sampling = assembly::Rings{3, 8};
+  const Both both = prepare(assembly);
+  const auto written_out = reference::unfolded(*both.assembly, both.bench);
+  RC_PRE(written_out.has_value() && textbook(both).left_out == 0);
+  RC_ASSERT(alike(total(both), total(prepare(*written_out)), 1e-11));
+}
+
 RC_GTEST_PROP(LedgerProperty, IsUnchangedWhenTheBenchIsRotated, ()) {
   const std::uint64_t seed = reference::any_seed();
   assembly::Assembly assembly = reference::random_assembly(seed);
@@ -146,7 +156,7 @@ RC_GTEST_PROP(LedgerProperty, IsUnchangedWhenTheBenchIsRotated, ()) {
   RC_ASSERT(alike(total(both), total(prepare(rotated(assembly, by))), 1e-11));
 }
 
-/// Helmholtz reciprocity: the reversed path has the transposed matrix.
+/// Helmholtz reciprocity: the reversed path has the transposed matrix, magnets reversed.
 RC_GTEST_PROP(Kernel, TransposesTheMatrixOnTheWayBack, ()) {
   const std::uint64_t seed = reference::any_seed();
   const Both both = prepare(reference::random_assembly(seed, {.reversible = true}));

@@ -51,6 +51,8 @@ public:
     m_medium = m_result.light.medium;
     for (int rest = m_dice.whole(1, 11); rest > 0; --rest)
       station();
+    if (m_variety.returning)
+      way_back();
     detector();
     focus_where_there_is_one();
     return m_result;

@@ -9,6 +9,7 @@ namespace lightledger::reference {
 /// What a random assembly may hold.
 struct Variety {
   bool lossless = false;   ///< no absorption, scatter or loss, no opaque backing, nothing that clips
+  bool returning = false;  ///< surfaces are met again for certain, if the axis comes back to them
   bool reversible = false; ///< no shift where the axis does not leave as it arrived, and no surface met
                            ///< again, so that the train can be reversed
 };

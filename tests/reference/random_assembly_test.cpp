@@ -59,6 +59,52 @@ TEST(RandomAssembly, LetsMostRaysThroughAndLosesSomeInEveryWay) {
     EXPECT_GT(sum(column), 0.001 * all.launched);
 }
 
+/// How many of the assemblies of many seeds hold something.
+template <typename Holds>
+int count_of(Holds holds) {
+  int count = 0;
+  for (std::uint64_t seed = 0; seed < 400; ++seed)
+    count += holds(random_assembly(seed)) ? 1 : 0;
+  return count;
+}
+
+template <typename Effect>
+bool holds_effect(const assembly::Assembly& assembly) {
+  return std::any_of(
+      assembly.surfaces.begin(), assembly.surfaces.end(),
+      [](const assembly::Surface& surface) { return std::holds_alternative<Effect>(surface.effect); });
+}
+
+TEST(RandomAssembly, HoldsAllElementsOften) {
+  EXPECT_GT(count_of(holds_effect<assembly::Polarizer>), 40);
+  EXPECT_GT(count_of(holds_effect<assembly::Retarder>), 40);
+  EXPECT_GT(count_of(holds_effect<assembly::Rotator>), 40);
+}
+
+TEST(RandomAssembly, HoldsMeasuredCoatingsOften) {
+  EXPECT_GT(count_of([](const assembly::Assembly& assembly) {
+              return std::any_of(assembly.coatings.begin(), assembly.coatings.end(),
+                                 [](const assembly::Coating& coating) {
+                                   return std::holds_alternative<assembly::Measured>(coating.kind);
+                                 });
+            }),
+            80);
+}
+
+TEST(RandomAssembly, MeetsSurfacesAgainFromBothSides) {
+  const auto from = [](assembly::Side side) {
+    return count_of([side](const assembly::Assembly& assembly) {
+      const Bench bench = lay_out(assembly);
+      for (std::size_t i = 0; i < bench.stations.size(); ++i)
+        if (first_visit(assembly, i) != i && bench.stations[i].from == side)
+          return true;
+      return false;
+    });
+  };
+  EXPECT_GT(from(assembly::Side::before), 20);
+  EXPECT_GT(from(assembly::Side::beyond), 40);
+}
+
 RC_GTEST_PROP(ReferenceProperty, EveryRayIsAccountedFor, ()) {
   const Case sample(any_seed());
   for (const Ray& ray : sample.rays) {
@@ -100,7 +146,7 @@ RC_GTEST_PROP(ReferenceProperty, AMovedBenchMovesTheResult, ()) {
   }
 }
 
-/// Helmholtz reciprocity: the ray that runs back has the transposed matrix.
+/// Helmholtz reciprocity: the ray that runs back has the transposed matrix, magnets reversed.
 RC_GTEST_PROP(ReferenceProperty, TheWayBackHasTheTransposedMatrix, ()) {
   const Case sample(any_seed(), {.reversible = true});
   const Reversed reverse = reversed(sample.assembly, sample.bench);

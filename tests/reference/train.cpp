@@ -1,5 +1,8 @@
 #include "reference/train.hpp"
 
+#include "reference/bench.hpp"
+#include "reference/media.hpp"
+
 namespace lightledger::reference {
 
 using assembly::Act;
@@ -55,6 +58,24 @@ Train& Train::stop(Gap gap) {
   Surface surface;
   surface.effect = assembly::Opening{};
   return add(surface, Act::pass, gap);
+}
+
+Train& Train::element(const assembly::Effect& effect, Gap gap) {
+  Surface surface;
+  surface.effect = effect;
+  return add(surface, Act::pass, gap);
+}
+
+Train& Train::again(std::size_t station, Act act, Gap gap) {
+  assembly::Station visit = assembly.stations.at(station);
+  visit.name += " again";
+  visit.intended = act;
+  visit.gap = gap;
+  visit.turn_deg = {};
+  assembly.stations.back().gap = assembly::UpToSurface{};
+  assembly.stations.push_back(visit);
+  m_current = medium_behind(assembly, visit, lay_out(assembly).stations.back().from);
+  return *this;
 }
 
 Train& Train::detect() {

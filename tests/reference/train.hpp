@@ -17,6 +17,9 @@ public:
   Train& refract(const assembly::Shape& shape, assembly::MediumId into, assembly::Gap gap = 0.0);
   Train& reflect(const assembly::Shape& shape, assembly::MediumId backing, assembly::Gap gap = 0.0);
   Train& stop(assembly::Gap gap = 0.0);
+  Train& element(const assembly::Effect& effect, assembly::Gap gap = 0.0);
+  /// Meets the surface of an earlier station again, where the axis comes back to it.
+  Train& again(std::size_t station, assembly::Act act, assembly::Gap gap = 0.0);
   Train& detect();
 
   /// The surface and the station written last.

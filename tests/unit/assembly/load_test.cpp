@@ -334,7 +334,7 @@ TEST(Load, SaysWhyAFileCannotBeHad) {
 
 TEST(Load, RefusesWhatIsFarTooLarge) {
   EXPECT_EQ(load("/dev/zero").report(),
-            "/dev/zero  the file is larger than 4 MB\n    accepted: an assembly, which is far smaller\n");
+            "/dev/zero  the file is larger than 10 MB\n    accepted: an assembly, which is far smaller\n");
 }
 
 } // namespace
