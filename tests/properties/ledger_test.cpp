@@ -138,7 +138,7 @@ RC_GTEST_PROP(LedgerProperty, IsUnchangedWhenAGapIsSplit, ()) {
 
 RC_GTEST_PROP(LedgerProperty, IsUnchangedWhenSurfacesMetAgainAreWrittenOut, ()) {
   assembly::Assembly assembly = reference::random_assembly(reference::any_seed(), {.returning = true});
-  assembly.light.sampling = assembly::Rings{3, 8};
+  assembly.light.sampling = assembly::Rings{2, 6};
   const Both both = prepare(assembly);
   const auto written_out = reference::unfolded(*both.assembly, both.bench);
   RC_PRE(written_out.has_value() && textbook(both).left_out == 0);

@@ -82,6 +82,7 @@ void add_films(std::vector<assembly::Film>& films, Dice& dice, const Shelf& shel
 /// Ascending places on a grid from `first` to about `last`.
 std::vector<double> random_grid(Dice& dice, double first, double last, int count) {
   std::vector<double> grid;
+  grid.reserve(static_cast<std::size_t>(count));
   for (int i = 0; i < count; ++i)
     grid.push_back(first +
                    (last - first) * (i + (i > 0 ? dice.around_zero(0.3) : 0.0)) / std::max(count - 1, 1));
@@ -187,7 +188,7 @@ assembly::Coating random_measured(Dice& dice, const Shelf& shelf, bool lossless)
   constexpr double pi = std::numbers::pi;
   assembly::Measured curves;
   curves.wavelengths_nm = random_grid(dice, 430.0, 1120.0, dice.whole(1, 4));
-  curves.angles_deg = random_grid(dice, 0.0, dice.between(20.0, 80.0), dice.whole(1, 4));
+  curves.angles_deg = random_grid(dice, 0.0, dice.between(20.0, 65.0), dice.whole(1, 4));
   if (curves.angles_deg.size() == 1)
     curves.shift_index = dice.between(1.4, 2.2);
   if (dice.chance(0.4))

@@ -85,6 +85,46 @@ TEST(Hostile, ANameOfAMillionCharactersIsCutInTheReport) {
   EXPECT_LT(loaded.report().size(), 2'000U);
 }
 
+TEST(Hostile, AFaultyGroupIsNotRepeated) {
+  const Loaded loaded = load_quickly(
+      light +
+      std::string("coatings: {a: {layers: [{repeat: 4294967296, layers: [{medium: no, thickness: 9}]}]}}\n"
+                  "train: [{name: eye, does: detect}]\n"));
+  EXPECT_EQ(loaded.faults.count(), 1U);
+}
+
+/// A number that nothing in an instrument has; each broke the budget of a file that was otherwise sound.
+struct Senseless {
+  const char *address, *value, *message;
+};
+class HostileNumber : public testing::TestWithParam<Senseless> {};
+
+TEST_P(HostileNumber, IsAFault) {
+  const std::string file = "light: {wavelengths: [532], beam: {radius: 5, inner: 2, gaussian: 4}}\n"
+                           "media: {resin: {index: 1.5}, oil: {cauchy: {A: [1.5]}}}\n"
+                           "train:\n"
+                           "  - {name: lens, into: resin, radius: 40, gap: 3}\n"
+                           "  - {name: film, into: oil, gap: 3}\n"
+                           "  - {name: rear, into: air, gap: 3}\n"
+                           "  - {name: plate, retard: {axis: 0, waves: 0.5}, gap: 3}\n"
+                           "  - {name: eye, does: detect}\n";
+  ASSERT_EQ(load_text("sound.yaml", file).report(), "");
+  const Loaded loaded = load_text("hostile.yaml", file, {{GetParam().address, GetParam().value}});
+  ASSERT_EQ(loaded.faults.count(), 1U) << loaded.report();
+  EXPECT_EQ(loaded.faults.kept()[0].message, GetParam().message);
+}
+
+INSTANTIATE_TEST_SUITE_P(
+    Finds, HostileNumber,
+    testing::Values(Senseless{"lens.radius", "-5e-324", "'radius' is less than a picometre"},
+                    Senseless{"media.resin.index", "1e8", "resin has the index 1e+08 + 0i at 532 nm"},
+                    Senseless{"media.oil.cauchy.A", "[1e-8]", "oil has the index 1e-08 + 0i at 532 nm"},
+                    Senseless{"light.beam.gaussian", "0.1",
+                              "'inner' leaves no light: it is more than 18 times 'gaussian'"},
+                    Senseless{"light.beam.radius", "500",
+                              "'radius' is more than 100 times 'gaussian'; hardly a ray would carry light"},
+                    Senseless{"plate.retard.waves", "1e308", "'waves' is more than any plate retards"}));
+
 TEST(Hostile, ManyWavelengthsFromFewWordsAreRefused) {
   const Loaded loaded =
       load_quickly("light: {wavelengths: {from: 400, to: 700, count: 4294967296}, beam: {radius: 5}}\n"
