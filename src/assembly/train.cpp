@@ -64,12 +64,16 @@ void Train::read_station(Value value, Next next) {
     read_first_visit(*station, does, next);
 }
 
+std::string_view Train::word(Does does) {
+  return actions[static_cast<std::size_t>(does)];
+}
+
 void Train::read_first_visit(Mapping& station, Does does, Next next) {
   station.call(kinds[static_cast<std::size_t>(does)]);
   Station result{};
   result.name = read_name(station);
   result.surface = static_cast<SurfaceId>(m_assembly.surfaces.size());
-  Met met{result.name, result.surface, does == Does::refract || does == Does::reflect, false, 0, {}};
+  Met met{result.name, result.surface, does, false, 0, {}};
   const bool arriving_known = m_current_known;
   const std::size_t faults = m_reader.fault_count();
   const Surface surface = read_surface(station, does);

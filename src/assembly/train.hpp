@@ -40,12 +40,17 @@ private:
   struct Met {
     std::string first_visit;
     SurfaceId surface = 0;
-    bool interface = false;
+    Does does = Does::unavailable; ///< on the first visit
     bool media_known = false;
     MediumId before = 0;
     std::optional<MediumId> beyond;
+
+    /// Between two media; else light only passes, as through an element or a stop.
+    [[nodiscard]] bool interface() const { return does == Does::refract || does == Does::reflect; }
   };
 
+  /// What a station writes for `does`.
+  static std::string_view word(Does does);
   void read_station(Value value, Next next);
   void read_first_visit(Mapping& station, Does does, Next next);
   void keep(const Mapping& station, Does does, Station result, Next next);
@@ -58,6 +63,7 @@ private:
   void check_stop(const Mapping& station, const Surface& surface);
 
   void read_again(Mapping& station, Next next);
+  Does read_does_again(Mapping& station, const Met* met);
   std::string read_again_name(Mapping& station, Value earlier);
   const Met* find_earlier(Value value);
   void forbid_surface_keys(Mapping& station, const Met* met);

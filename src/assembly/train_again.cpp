@@ -21,8 +21,7 @@ void Train::read_again(Mapping& station, Next next) {
   station.call("a station with 'again'");
   const Value earlier = *station.take("again");
   const Met* const met = find_earlier(earlier);
-  const auto value = station.take("does");
-  const Does does = value ? action(*value, actions) : Does::refract;
+  const Does does = read_does_again(station, met);
   if (met != nullptr)
     arrive_again(*met, m_reader.mark(earlier));
   if (does == Does::reflect)
@@ -43,6 +42,16 @@ void Train::read_again(Mapping& station, Next next) {
   keep(station, does, std::move(result), next);
 }
 
+/// An element or a stop does again what it did; a boundary may refract on one visit and reflect on another.
+Train::Does Train::read_does_again(Mapping& station, const Met* met) {
+  const auto value = station.take("does");
+  if (met == nullptr || met->interface())
+    return value ? action(*value, actions) : Does::refract;
+  if (value)
+    action(*value, {word(met->does)});
+  return met->does;
+}
+
 std::string Train::read_again_name(Mapping& station, Value earlier) {
   if (station.has("name"))
     return read_name(station);
@@ -52,7 +61,7 @@ std::string Train::read_again_name(Mapping& station, Value earlier) {
 }
 
 const Train::Met* Train::find_earlier(Value value) {
-  constexpr std::string_view accepted = "the name of a refracting or reflecting station that stands before";
+  constexpr std::string_view accepted = "the name of a station that stands before";
   const auto name = m_reader.name(value);
   if (!name)
     return nullptr;
@@ -61,19 +70,14 @@ const Train::Met* Train::find_earlier(Value value) {
     m_reader.fault_from([&] {
       std::vector<std::string_view> names;
       for (const auto& [known, met] : m_met)
-        if (met.interface)
-          names.emplace_back(known);
+        names.emplace_back(known);
       return Fault{m_reader.mark(value), fmt::format("no station called {} stands before", quoted(*name)),
                    std::string(accepted), m_reader.suggest(*name, names)};
     });
     return nullptr;
   }
-  if (found->second.interface)
-    return &found->second;
-  if (!found->second.first_visit.empty()) // else what it is has not become known
-    m_reader.fault(m_reader.mark(value), fmt::format("{} neither refracts nor reflects", quoted(*name)),
-                   std::string(accepted));
-  return nullptr;
+  // What a station is that has faults of its own has not become known.
+  return found->second.first_visit.empty() ? nullptr : &found->second;
 }
 
 void Train::forbid_surface_keys(Mapping& station, const Met* met) {
@@ -84,6 +88,8 @@ void Train::forbid_surface_keys(Mapping& station, const Met* met) {
 
 std::string Train::between(const Met& met) const {
   const auto& media = m_assembly.media;
+  if (!met.interface())
+    return fmt::format("{} stands in {}", quoted(met.first_visit), media[met.before].name);
   if (!met.beyond)
     return fmt::format("{} has {} before it and nothing given behind it", quoted(met.first_visit),
                        media[met.before].name);

@@ -77,6 +77,24 @@ TEST(Again, GivesTheBudgetOfTheSameTrainWrittenOut) {
   EXPECT_NEAR(a.behind[3].opl[0], b.behind[3].opl[0], 1e-13);
 }
 
+/// What passes an analyzer along x after linear light along x went through a rotator to a mirror and back.
+double passed_after_two_turns(const std::string& kind) {
+  const Ready r = ready(head + "- {name: rotator, rotate: {angle: 45, kind: " + kind + "}, gap: 5}\n" +
+                        "- {name: turn, does: reflect, coating: mirror}\n"
+                        "- {again: rotator, gap: 3}\n"
+                        "- {name: analyzer, polarize: {axis: 0}, gap: 1}\n"
+                        "- {name: end, does: detect}\n");
+  return walk(r.train, ray({0, 0, 0}, {0, 0, 1}), optics::linear(0)).ledger.delivered();
+}
+
+TEST(Again, AFaradayRotatorTurnsTwiceAsFarOnADoublePass) {
+  EXPECT_NEAR(passed_after_two_turns("faraday"), 0.0, 1e-15);
+}
+
+TEST(Again, AnActiveRotatorUndoesItselfOnADoublePass) {
+  EXPECT_NEAR(passed_after_two_turns("active"), 0.9, 1e-15);
+}
+
 TEST(Again, LightReflectedAtTheFrontJoinsTheLegThatLeavesTheSameSide) {
   const Ready r = ready(mangin);
   const Hop hop = r.train.routes.next({0, Heading::along}, Act::bounce);
