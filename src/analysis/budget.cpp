@@ -1,4 +1,5 @@
 #include <lightledger/analysis/budget.hpp>
+#include <lightledger/assembly/document.hpp>
 #include <lightledger/trace/tracer.hpp>
 
 #include <fmt/format.h>
@@ -123,6 +124,11 @@ BudgetResult budget(const Assembly& assembly, const BudgetOptions& options) {
   if (!train)
     return result;
   const Traced traced = trace::trace(*train, {.threads = options.threads});
+  if (traced.total.launched <= 0.0) {
+    const assembly::Mark mark = assembly.document ? assembly.document->locate("light.rays") : assembly::Mark{};
+    result.faults.add({mark, "the pattern of rays puts no light on the beam", "a finer pattern", ""});
+    return result;
+  }
   Budget budget;
   budget.delivered = traced.total.delivered();
   budget.uncertainty = traced.standard_error;

@@ -67,8 +67,8 @@ TEST(BadInput, OfManyFaultsTellsTheFirstTwentyAndTheirNumberInTime) {
   const std::string report = refusal_of(text);
   const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
   EXPECT_THAT(report, HasSubstr("the first 20 of 10000"));
-  // A second on an idle machine; several tests may share this one.
-  EXPECT_LT(elapsed.count(), 4.0);
+  // About a second on an idle machine; the bound tells a hang from a machine that is shared or sanitized.
+  EXPECT_LT(elapsed.count(), 20.0);
 }
 
 TEST(BadInput, ThatIsAFolderOrMissingIsRefused) {

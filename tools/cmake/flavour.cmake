@@ -15,6 +15,8 @@ add_compile_options(-ffp-contract=off)
 add_compile_options(-fno-math-errno)
 
 if(LIGHTLEDGER_SANITIZE)
+  # With sanitizers g++ 12 takes strings in lists for never set.
+  add_compile_options($<$<CXX_COMPILER_ID:GNU>:-Wno-maybe-uninitialized>)
   add_compile_options(-fsanitize=${LIGHTLEDGER_SANITIZE} -fno-sanitize-recover=all -fno-omit-frame-pointer)
   add_link_options(-fsanitize=${LIGHTLEDGER_SANITIZE})
 endif()
