@@ -83,37 +83,100 @@ AsphereHit between(const PlanOp& op, const AsphereRay& ray, double low, double h
   return {t, height(op, ray, t).before_equator};
 }
 
-/// One side of the outward search: where it stands, and on which side of the surface.
-struct Scout {
-  double t;
-  Height at;
+/// The part of the ray that lies before the equator of the base conic; empty where `from` is not below `to`.
+struct Interval {
+  double from, to;
 };
 
-/// Advances a scout; true where the ray crossed the surface on the way. A scout beyond the equator stays
-/// blind until it comes back before it.
-bool crosses(const PlanOp& op, const AsphereRay& ray, double step, Scout& scout) {
-  const Scout before = scout;
-  scout.t += step;
-  scout.at = height(op, ray, scout.t);
-  const bool seen = before.at.before_equator && scout.at.before_equator;
-  return seen && std::signbit(before.at.value) != std::signbit(scout.at.value);
+Interval before_equator(const PlanOp& op, const AsphereRay& ray) {
+  constexpr double unbounded = std::numeric_limits<double>::max();
+  constexpr double just_inside = 1.0 - 1e-12;
+  const double closing = (1.0 + op.conic) * op.curvature * op.curvature; // 1/r² at the equator
+  if (!(closing > 0.0))
+    return {-unbounded, unbounded};
+  const double a = ray.d[0] * ray.d[0] + ray.d[1] * ray.d[1];
+  const double b = ray.o[0] * ray.d[0] + ray.o[1] * ray.d[1];
+  const double c = ray.o[0] * ray.o[0] + ray.o[1] * ray.o[1] - just_inside / closing;
+  const double discriminant = b * b - a * c;
+  if (a == 0.0)
+    return c < 0.0 ? Interval{-unbounded, unbounded} : Interval{0.0, 0.0};
+  if (!(discriminant > 0.0))
+    return {0.0, 0.0};
+  const double half = std::sqrt(discriminant);
+  return {(-b - half) / a, (-b + half) / a};
+}
+
+/// One step of the outward search; where the ray crossed the surface on it, the place.
+AsphereHit explore(const PlanOp& op, const AsphereRay& ray, double& t, double& value, double next) {
+  const double from = t;
+  const double before = value;
+  t = next;
+  value = height(op, ray, next).value;
+  if (from == next || std::signbit(before) == std::signbit(value))
+    return {0.0, false};
+  return between(op, ray, std::min(from, next), std::max(from, next));
 }
 
 /// Outward from the tangent plane on both sides in growing steps, to the first crossing.
 AsphereHit search(const PlanOp& op, const AsphereRay& ray) {
+  const Interval allowed = before_equator(op, ray);
+  if (!(allowed.from < allowed.to))
+    return {0.0, false};
   const double plane = -ray.o[2] / ray.d[2];
-  const double origin = finite(plane) ? plane : 0.0;
-  const Height start = height(op, ray, origin);
+  double ahead = std::clamp(finite(plane) ? plane : 0.0, allowed.from, allowed.to);
+  double behind = ahead;
+  const Height start = height(op, ray, ahead);
+  double ahead_value = start.value;
+  double behind_value = start.value;
   double step = first_search_step * std::max(std::min(std::abs(start.value), start.size), 1e-9);
-  Scout ahead{origin, start};
-  Scout behind{origin, start};
   for (int i = 0; i < search_steps; ++i, step *= search_growth) {
-    if (crosses(op, ray, step, ahead))
-      return between(op, ray, ahead.t - step, ahead.t);
-    if (crosses(op, ray, -step, behind))
-      return between(op, ray, behind.t, behind.t + step);
+    if (const auto hit = explore(op, ray, ahead, ahead_value, std::min(ahead + step, allowed.to)); hit.found)
+      return hit;
+    if (const auto hit = explore(op, ray, behind, behind_value, std::max(behind - step, allowed.from));
+        hit.found)
+      return hit;
   }
   return {0.0, false};
+}
+
+/// Where the ray meets the base conic before its equator.
+struct Starts {
+  double t[2];
+  int count;
+};
+
+Starts base_conic(const PlanOp& op, const AsphereRay& ray) {
+  const double c = op.curvature;
+  const double stretch = 1.0 + op.conic;
+  const auto [ox, oy, oz] = ray.o;
+  const auto [dx, dy, dz] = ray.d;
+  const double a = c * (1.0 + op.conic * dz * dz);
+  const double b = c * (ox * dx + oy * dy + stretch * oz * dz) - dz;
+  const double rest = c * (ox * ox + oy * oy + stretch * oz * oz) - 2.0 * oz;
+  const double discriminant = b * b - a * rest;
+  Starts starts{{}, 0};
+  if (discriminant < 0.0)
+    return starts;
+  const double q = -(b + std::copysign(std::sqrt(discriminant), b));
+  for (const double t : {rest / q, q / a})
+    if (finite(t) && stretch * c * (oz + t * dz) < 1.0)
+      starts.t[starts.count++] = t;
+  return starts;
+}
+
+/// Newton's root from each of the base conic's points; of two the one nearer to the tangent plane.
+AsphereHit near_base_conic(const PlanOp& op, const AsphereRay& ray) {
+  Starts starts = base_conic(op, ray);
+  if (starts.count == 0)
+    starts = {{-ray.o[2] / ray.d[2]}, 1};
+  AsphereHit best{0.0, false};
+  const auto off_plane = [&](double t) { return std::abs(ray.o[2] + t * ray.d[2]); };
+  for (int i = 0; i < starts.count; ++i) {
+    const AsphereHit hit = newton(op, ray, starts.t[i]);
+    if (hit.found && (!best.found || off_plane(hit.t) < off_plane(best.t)))
+      best = hit;
+  }
+  return best;
 }
 
 } // namespace
@@ -133,8 +196,8 @@ Sag sag(const PlanOp& op, double r_squared) {
           e > 0.0};
 }
 
-AsphereHit meet(const PlanOp& op, const AsphereRay& ray, double start) {
-  const AsphereHit quick = newton(op, ray, start);
+AsphereHit meet(const PlanOp& op, const AsphereRay& ray) {
+  const AsphereHit quick = near_base_conic(op, ray);
   if (quick.found && gentle_at(op, ray, quick.t) && gentle_at(op, ray, -ray.o[2] / ray.d[2]))
     return quick;
   const AsphereHit careful = search(op, ray);

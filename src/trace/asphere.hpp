@@ -22,8 +22,8 @@ struct AsphereHit {
 };
 
 /// Where a ray meets an asphere: of several points the one nearest to the tangent plane along the ray.
-/// Newton's iteration from `start`, the base conic's point, serves where the terms slope gently; where they
-/// do not, or where it does not arrive, the ray is searched outward from the tangent plane.
-[[nodiscard]] AsphereHit meet(const PlanOp& op, const AsphereRay& ray, double start);
+/// Newton's iteration from the points of the base conic serves where the terms slope gently; where they do
+/// not, or where it does not arrive, the ray is searched outward from the tangent plane.
+[[nodiscard]] AsphereHit meet(const PlanOp& op, const AsphereRay& ray);
 
 } // namespace lightledger::trace

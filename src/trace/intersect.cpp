@@ -109,13 +109,11 @@ void conic_normal(const PlanOp& op, Meeting& m) {
 void meet_asphere(const PlanOp& op, Meeting& m) {
   Nearest nearest;
   Lanes t;
-  Mask found;
   find_nearest(m, nearest);
-  meet_conic(op, m, nearest, t, found);
   for (int i = 0; i < m.count; ++i) {
     const AsphereRay ray{{nearest.o[0][i], nearest.o[1][i], nearest.o[2][i]},
                          {m.d[0][i], m.d[1][i], m.d[2][i]}};
-    const AsphereHit end = meet(op, ray, found[i] != 0 ? t[i] : -ray.o[2] / ray.d[2]);
+    const AsphereHit end = meet(op, ray);
     t[i] = end.found ? end.t : 0.0;
     m.hit[i] = m.alive[i] & mask_of(end.found);
   }

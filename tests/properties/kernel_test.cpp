@@ -179,7 +179,7 @@ TEST(Kernel, LeavesHardlyAnyRayOutOfTheComparison) {
   RecordProperty("doubtful", doubtful);
   RecordProperty("steep", steep);
   EXPECT_LE(doubtful, rays / 1000);
-  EXPECT_LE(steep, rays / 50);
+  EXPECT_LE(steep, rays / 200);
 }
 
 } // namespace

@@ -113,13 +113,10 @@ double root_within(const Approach& ray, Interval bracket) {
   return t;
 }
 
-/// Whether the terms slope so much, where the ray meets the surface or the tangent plane, that it may meet
-/// the surface more than once, or the meeting is so oblique that Newton's iteration may leave it.
-bool steep(const Approach& ray, double hit, double tangent_plane, double cosine) {
-  const assembly::Asphere terms{std::numeric_limits<double>::infinity(), 0.0, ray.shape.terms};
-  const auto slope = [&](double t) { return std::abs(sag_at(terms, ray.radius(t)).slope); };
-  const double whole_slope = std::abs(sag_at(ray.shape, ray.radius(hit)).slope);
-  return std::max(slope(hit), slope(tangent_plane)) > 0.3 || whole_slope > 5.0 || cosine < 0.1;
+/// Whether the surface is so steep, or met so obliquely, that rounding moves the hit by more than the
+/// agreement.
+bool steep(const Approach& ray, double hit, double cosine) {
+  return std::abs(sag_at(ray.shape, ray.radius(hit)).slope) > 5.0 || cosine < 0.1;
 }
 
 Vector unit_normal(const assembly::Asphere& shape, const Vector& hit) {
@@ -154,7 +151,7 @@ Meeting meet_asphere(const assembly::Asphere& shape, const Frame& surface, const
   const double c = 1.0 / shape.radius;
   const double before_equator = 1.0 - (1.0 + shape.conic) * c * c * hit.head<2>().squaredNorm();
   meeting.doubtful = cosine * cosine < doubtful_within || before_equator < doubtful_within;
-  meeting.steep = steep(approach, t, tangent_plane, cosine);
+  meeting.steep = steep(approach, t, cosine);
   return meeting;
 }
 
