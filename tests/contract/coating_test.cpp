@@ -39,14 +39,16 @@ TEST(CoatingCommand, IncludesTheEndOfARangeThatIsHit) {
 }
 
 TEST(CoatingCommand, ConservesPower) {
-  for (const char* name : {"hard_ar", "lens_ar", "protected", "line_filter"})
-    for (const Json& row : json_of({"coating", lidar, name, "--angles", "0:90:15"})["coating"]["rows"])
+  for (const char* name : {"hard_ar", "lens_ar", "protected", "line_filter"}) {
+    const Json result = json_of({"coating", lidar, name, "--angles", "0:90:15"});
+    for (const Json& row : result["coating"]["rows"])
       for (const char* polarization : {"s", "p"})
         EXPECT_NEAR(row[std::string("R") + polarization].get<double>() +
                         row[std::string("T") + polarization].get<double>() +
                         row[std::string("A") + polarization].get<double>(),
                     1.0, 1e-12)
             << name << ' ' << row;
+  }
 }
 
 TEST(CoatingCommand, OfTheBareBoundaryIsFresnels) {
