@@ -135,14 +135,12 @@ void Source::aim(RayBlock& block, int lane) const {
   std::array<double, 3> d = m_object;
   if (!m_infinite) {
     const double side = m_converging ? 1.0 : -1.0;
-    double squared = 0.0;
-    for (int axis = 0; axis < 3; ++axis) {
+    for (int axis = 0; axis < 3; ++axis)
       d[axis] = side * (m_object[axis] - block.p[axis][lane]);
-      squared += d[axis] * d[axis];
-    }
-    const double scale = 1.0 / std::sqrt(squared);
+    // hypot does not overflow: an object however far gives the direction of one at infinity.
+    const double length = std::hypot(d[0], d[1], d[2]);
     for (double& component : d)
-      component *= scale;
+      component /= length;
   }
   const double pull = d[0] / (1.0 + d[2]);
   const std::array<double, 3> u = {1.0 - pull * d[0], -pull * d[1], -d[0]};

@@ -135,6 +135,12 @@ TEST(Launcher, ANegativeDistanceConvergesOnAPointDownstream) {
   EXPECT_NEAR(block.p[1][0] + ahead * block.d[1][0], 4.0, 1e-13);
 }
 
+TEST(Launcher, AnObjectHoweverFarSendsRaysAsOneAtInfinity) {
+  Light light = disc(Scattered{16});
+  light.object_distance = 1e308;
+  EXPECT_EQ(one_ray(light, Field{}).d[2][0], 1.0);
+}
+
 TEST(Launcher, TheBasisIsTheDoublePoleOne) {
   // The smallest rotation of z onto (sin a, 0, cos a) takes x to (cos a, 0, −sin a) and leaves y.
   const RayBlock block = one_ray(disc(Scattered{16}), Field{{30.0, 0.0}, 1.0, {}});
