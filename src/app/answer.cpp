@@ -6,6 +6,7 @@
 
 #include <lightledger/analysis/coating_curve.hpp>
 #include <lightledger/analysis/medium_table.hpp>
+#include <lightledger/analysis/remedy.hpp>
 #include <lightledger/analysis/requirements.hpp>
 #include <lightledger/report/budget.hpp>
 #include <lightledger/report/check.hpp>
@@ -76,7 +77,9 @@ Answer answer_budget(const Options& options, const Input& input) {
       options, [&] { return report::budget_json(envelope, *result.budget); },
       [&] { return report::budget_csv(*result.budget); },
       [&] {
-        return report::budget_text(*input.assembly, *result.budget, envelope.warnings, elapsed,
+        const auto remedies =
+            analysis::remedies(*input.assembly, *result.budget, {.threads = options.threads});
+        return report::budget_text(*input.assembly, *result.budget, remedies, envelope.warnings, elapsed,
                                    style_of(options));
       });
 }
@@ -123,11 +126,14 @@ Answer answer_media(const Options& options, const Input& input) {
   const analysis::MediumTableResult result = analysis::medium_table(options.name, options.wavelengths_nm);
   refuse_request(result.faults, options);
 
-  const report::Envelope envelope = envelope_of(options, input, {});
+  Warnings warnings;
+  if (!options.changes.empty())
+    warnings.emplace_back("media reads no assembly: --set, --rays and --accuracy change nothing here");
+  const report::Envelope envelope = envelope_of(options, input, std::move(warnings));
   return written(
       options, [&] { return report::media_json(envelope, *result.media); },
       [&] { return report::media_csv(*result.media); },
-      [&] { return report::media_text(*result.media, style_of(options)); });
+      [&] { return report::media_text(*result.media, envelope.warnings, style_of(options)); });
 }
 
 } // namespace
