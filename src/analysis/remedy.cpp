@@ -23,15 +23,15 @@ bool met_once(const Assembly& assembly, std::size_t station) {
                             &assembly::Station::surface) == 1;
 }
 
-/// A filter is not a coating that could be exchanged for a clearer one.
-bool filters(const Assembly& assembly, const assembly::Surface& surface) {
+/// Whether a face may have a coating that is there for more than letting light pass, such as a filter's. Of
+/// curves and of powers given as such nobody knows what they stand for.
+bool may_filter(const Assembly& assembly, const assembly::Surface& surface) {
   constexpr std::size_t most_films_of_a_clear_coating = 6;
   if (!surface.coating)
     return false;
   const auto& kind = assembly.coatings[surface.coating->coating].kind;
   const auto* const layers = std::get_if<assembly::Layers>(&kind);
-  return std::holds_alternative<assembly::Measured>(kind) ||
-         (layers != nullptr && layers->films.size() > most_films_of_a_clear_coating);
+  return layers == nullptr || layers->films.size() > most_films_of_a_clear_coating;
 }
 
 /// What a coating could bring back. A mirror that lets light through is meant to.
@@ -42,7 +42,7 @@ double curable(const Assembly& assembly, const Budget& budget, std::size_t stati
     return 0.0;
   if (assembly.stations[station].intended == Act::bounce)
     return row.absorbed >= row.aside ? row.absorbed : 0.0;
-  return filters(assembly, surface) ? 0.0 : row.absorbed + row.aside;
+  return may_filter(assembly, surface) ? 0.0 : row.absorbed + row.aside;
 }
 
 /// The stations that lose most to what a coating could cure, most of all first.

@@ -20,8 +20,8 @@ struct Remedy {
 /// Coatings that would bring most back of what the two stations lose that absorb or reflect most: mirrors
 /// that absorb, and faces that send light aside or absorb it. The reflectance is what a missed requirement on
 /// `delivered` needs, where one station alone can meet it, else what a good coating has (0.99, and 0.002 for
-/// faces). Stations whose surface is met twice are left out, and so are faces with the many layers or the measured
-/// curves of a filter, and losses below 1e-3.
+/// faces). Stations whose surface is met twice are left out, faces whose coating may be a filter's (measured, ideal,
+/// or of more than six layers), and losses below 1e-3.
 ///
 /// The assembly is traced with an ideal coating in place, and as it is, by the same rays; `delivered` of the
 /// budget, times the ratio, is then as accurate as the budget. In the reflectance of an ideal coating that

@@ -61,6 +61,10 @@ TEST(Remedies, AreNotForMirrorsThatAreGoodOrMeantToLetThrough) {
                   .empty());
 }
 
+TEST(Remedies, AreNotForFacesThatMayBeFilters) {
+  EXPECT_TRUE(remedies_of("- {name: filter, into: glass, coating: half, gap: 5}\n").empty());
+}
+
 TEST(Remedies, AreNotForSurfacesMetTwice) {
   EXPECT_TRUE(remedies_of("- {name: face, into: glass, gap: 5}\n"
                           "- {name: mirror, does: reflect, coating: bright}\n"
