@@ -2,6 +2,7 @@
 
 #include "help.hpp"
 #include "input_error.hpp"
+#include "progress_bar.hpp"
 #include "terminal.hpp"
 
 #include <lightledger/analysis/coating_curve.hpp>
@@ -65,10 +66,17 @@ void refuse_request(const Faults& faults, const Options& options) {
                      '\n');
 }
 
+/// What an analysis of rays gives, its progress shown meanwhile.
+template <class Analysis>
+auto watched(const Options& options, Analysis analysis) {
+  ProgressBar bar(!options.quiet);
+  return analysis(analysis::BudgetOptions{options.split, options.threads, &bar});
+}
+
 Answer answer_budget(const Options& options, const Input& input) {
   const auto start = std::chrono::steady_clock::now();
   const analysis::BudgetResult result =
-      analysis::budget(*input.assembly, {.split = options.split, .threads = options.threads});
+      watched(options, [&](const auto& asked) { return analysis::budget(*input.assembly, asked); });
   const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
   refuse_file(result.faults, input);
 
@@ -85,7 +93,8 @@ Answer answer_budget(const Options& options, const Input& input) {
 }
 
 Answer answer_check(const Options& options, const Input& input) {
-  const analysis::CheckResult result = analysis::check(*input.assembly, {.threads = options.threads});
+  const analysis::CheckResult result =
+      watched(options, [&](const auto& asked) { return analysis::check(*input.assembly, asked); });
   refuse_file(result.faults, input);
 
   const report::Envelope envelope = envelope_of(options, input, joined(input, result.warnings));
