@@ -1,6 +1,6 @@
-#include <lightledger/trace/parallel.hpp>
-
 #include "handover.hpp"
+
+#include <lightledger/trace/parallel.hpp>
 
 #include <tbb/global_control.h>
 #include <tbb/parallel_for.h>

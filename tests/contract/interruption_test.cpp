@@ -46,7 +46,7 @@ TEST(Interruption, IsOfNoMatterToWhomIsToldToIgnoreIt) {
 }
 
 /// Enough work for more than a second.
-const Arguments long_work{"budget", minimal, "--rays", "25000000", "--threads", "1"};
+const Arguments long_work{"budget", minimal, "--rays", "200000000", "--threads", "1"};
 
 TEST(Progress, IsSilentInPipes) {
   EXPECT_EQ(run(long_work).err, "");
