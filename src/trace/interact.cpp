@@ -146,9 +146,9 @@ void aim_bounced(const Meeting& m, RayBlock& out) {
 class Bookkeeper {
 public:
   Bookkeeper(const PlanLeg& leg, const optics::Coherency& phi, const RayBlock& in, const Meeting& meeting,
-             const Field& field, const Lanes& bulk, const Beam& onward, bool bounces)
+             const Field& field, const Lanes& bulk, const Beam& onward, const Beam* turned, bool bounces)
       : m_leg(leg), m_phi(phi), m_in(in), m(meeting), m_field(field), m_bulk(bulk), m_onward(onward),
-        m_bounces(bounces) {}
+        m_turned(turned), m_bounces(bounces) {}
 
   [[nodiscard]] Entry entry() const {
     Entry entry;
@@ -184,7 +184,12 @@ private:
     const double other_p = pass ? m.reflected_p[i] : m.crossed_p[i];
     entry.aside += power_s * other_s + power_p * other_p;
     entry.absorbed += power_s * m.absorbed_s[i] + power_p * m.absorbed_p[i];
-    send_on(i, entry);
+    const Sent sent = send(m_onward, i);
+    entry.onward += sent.on;
+    entry.scattered += sent.scattered;
+    entry.extra += sent.extra;
+    if (m_turned != nullptr)
+      turn_back(i, entry);
 
     const double angle = std::atan2(std::sqrt(m.sin1_squared[i]), m.cos1[i]);
     entry.inside += arriving;
@@ -197,17 +202,29 @@ private:
     entry.most_incidence = std::max(entry.most_incidence, angle);
   }
 
+  struct Sent {
+    double on, scattered, extra;
+  };
+
   /// What goes on is read from the Jones matrix that goes on, so that a wrong amplitude shows in the closure.
-  void send_on(int i, Entry& entry) const {
+  [[nodiscard]] Sent send(const Beam& beam, int i) const {
     double s[4];
     double p[4];
-    apply(m_onward.amplitudes, m_field, i, s, p);
+    apply(beam.amplitudes, m_field, i, s, p);
     const double weight = m_in.w[i] * (1.0 - m_bulk[i]);
     const double sent = power(m_phi, s, weight) + power(m_phi, p, weight);
-    const double specular = sent * (1.0 - m_onward.scattered[i]);
-    entry.scattered += sent * m_onward.scattered[i];
-    entry.extra += specular * m_onward.loss;
-    entry.onward += specular * (1.0 - m_onward.loss);
+    const double specular = sent * (1.0 - beam.scattered[i]);
+    return {specular * (1.0 - beam.loss), sent * beam.scattered[i], specular * beam.loss};
+  }
+
+  /// A passed beam that does not exist, beyond the critical angle or in an opaque backing, takes no light on.
+  void turn_back(int i, Entry& entry) const {
+    if (m_bounces && m.crosses[i] == 0)
+      return;
+    const Sent sent = send(*m_turned, i);
+    entry.turned += sent.on;
+    entry.turned_scattered += sent.scattered;
+    entry.turned_extra += sent.extra;
   }
 
   const PlanLeg& m_leg;
@@ -217,7 +234,8 @@ private:
   const Field& m_field;
   const Lanes& m_bulk;
   const Beam& m_onward;
-  bool m_bounces; ///< onward is the reflected beam
+  const Beam* m_turned; ///< the other beam where it is followed too
+  bool m_bounces;       ///< onward is the reflected beam
 };
 
 void write(const Meeting& m, const Amplitudes& intended, Tape& tape) {
@@ -257,8 +275,9 @@ void interact(const PlanLeg& leg, const PlanOp& op, const optics::Coherency& coh
   if (out.bounce != nullptr || bounces)
     scatter_bounced(op, m, bounced.scattered);
 
+  const Beam* turned = out.pass != nullptr && out.bounce != nullptr ? &(bounces ? passed : bounced) : nullptr;
   if (out.entry != nullptr)
-    *out.entry = Bookkeeper(leg, coherency, in, m, field, bulk, onward, bounces).entry();
+    *out.entry = Bookkeeper(leg, coherency, in, m, field, bulk, onward, turned, bounces).entry();
   if (out.tape != nullptr)
     write(m, onward.amplitudes, *out.tape);
   if (out.pass != nullptr) {

@@ -7,10 +7,11 @@
 namespace lightledger::trace {
 namespace {
 
-constexpr std::array powers = {&Entry::incident, &Entry::missed,   &Entry::clipped,      &Entry::onward,
-                               &Entry::aside,    &Entry::absorbed, &Entry::scattered,    &Entry::extra,
-                               &Entry::bulk,     &Entry::backward, &Entry::extrapolated, &Entry::inside,
-                               &Entry::pass_s,   &Entry::pass_p,   &Entry::incidence};
+constexpr std::array powers = {
+    &Entry::incident, &Entry::missed,           &Entry::clipped,      &Entry::onward,       &Entry::aside,
+    &Entry::absorbed, &Entry::scattered,        &Entry::extra,        &Entry::bulk,         &Entry::backward,
+    &Entry::turned,   &Entry::turned_scattered, &Entry::turned_extra, &Entry::extrapolated, &Entry::inside,
+    &Entry::pass_s,   &Entry::pass_p,           &Entry::incidence};
 
 /// Where power that was launched and not delivered may have gone.
 constexpr std::array losses = {&Entry::missed,    &Entry::clipped, &Entry::aside, &Entry::absorbed,

@@ -1,4 +1,4 @@
-#include "parallel.hpp"
+#include <lightledger/trace/parallel.hpp>
 
 #include <tbb/global_control.h>
 #include <tbb/parallel_for.h>

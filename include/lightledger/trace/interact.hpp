@@ -24,7 +24,7 @@ struct StepOut {
   RayBlock* pass = nullptr;   ///< the beam that crosses
   RayBlock* bounce = nullptr; ///< the beam that is reflected
   Tape* tape = nullptr;
-  Entry* entry = nullptr; ///< set, not added to
+  Entry* entry = nullptr; ///< set, not added to; its `turned` only where both beams are wanted
   bool bounces = false;   ///< the beam that goes onward for the tape and the entry is the reflected one
 };
 

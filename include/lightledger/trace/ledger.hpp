@@ -19,6 +19,12 @@ struct Entry {
   double bulk = 0.0;     ///< in the leg that leads here; a Ledger's row: in the gap that follows
   double backward = 0.0; ///< power that ran against its direction on that leg; a row: on the leg that follows
 
+  /// Where both beams are followed, what goes on in the other one, and what it loses before; 0 where it is
+  /// not.
+  double turned = 0.0;
+  double turned_scattered = 0.0;
+  double turned_extra = 0.0;
+
   double extrapolated = 0.0; ///< arriving power that a measured curve was extended for
   double inside = 0.0;       ///< arriving power inside the clear area
   double pass_s = 0.0;       ///< Σ arriving power · |a_s|² over the same rays
