@@ -1,7 +1,9 @@
 #include "chief_ray.hpp"
 #include "detector_figures.hpp"
 #include "neutral_sets.hpp"
+#include "polarization_advice.hpp"
 #include "polarization_survey.hpp"
+#include "polarization_table.hpp"
 
 #include <lightledger/analysis/polarization.hpp>
 #include <lightledger/assembly/document.hpp>
@@ -58,6 +60,16 @@ void describe_axes(const Train& train, Polarization& result) {
     result.detector_axes[static_cast<std::size_t>(axis)] = {axes(0, axis), axes(1, axis), axes(2, axis)};
 }
 
+void follow_chief(const Train& train, Polarization& result) {
+  const auto walk = walk_chief(train);
+  if (!walk)
+    return;
+  result.chief = describe_chief(train, *walk);
+  result.cancelling = cancelling_pairs(*walk);
+  result.fold_turn = fold_turn(train, *walk);
+  result.plates = plate_settings(train, *walk);
+}
+
 } // namespace
 
 PolarizationResult polarization(const Assembly& assembly, const PolarizationOptions& options) {
@@ -89,8 +101,10 @@ PolarizationResult polarization(const Assembly& assembly, const PolarizationOpti
   found.rays = sampling.rays();
   attribute(assembly, survey.sets(), figures, errors, found);
   describe_axes(*train, found);
-  if (const auto walk = walk_chief(*train))
-    found.chief = describe_chief(*train, *walk);
+  follow_chief(*train, found);
+  found.table = polarization_table(assembly, options.against, options.threads);
+  if (options.maps)
+    found.maps = pupil_maps(*train);
   if (!accurate)
     result.warnings.push_back(fmt::format(
         "the accuracy asked for was not reached: the standard error of the Mueller elements is {:.2g} of M00 "

@@ -118,7 +118,7 @@ void ProperWalk::arrive(const Eigen::Matrix3d& here, const Eigen::Matrix3d& axes
 }
 
 void ProperRays::follow(const trace::Train& train, const Optics& optics, RayBlock& block) {
-  count = 0;
+  count = arrived = 0;
   ProperWalk walk(optics, block);
   const std::size_t stations = train.path.steps.size() - 1;
   did.resize(stations);
@@ -134,10 +134,9 @@ void ProperRays::follow(const trace::Train& train, const Optics& optics, RayBloc
 }
 
 void ProperRays::close_gaps(std::uint64_t alive, const RayBlock& block) {
-  int lane[lanes];
   for (std::uint64_t rest = alive; rest != 0; rest &= rest - 1)
     lane[count++] = std::countr_zero(rest);
-  const int arrived = count;
+  arrived = count;
   for (; count % strip != 0; ++count)
     lane[count] = lane[0];
   const auto move = [&](LaneArray& values) {

@@ -67,7 +67,9 @@ struct ProperRays {
   std::vector<PauliLanes> did; ///< per station before the detector
   ArrivalLanes arrival;
   double parity;
-  int count = 0; ///< lanes filled, a whole number of strips; 0 where no ray arrived
+  int arrived = 0;
+  int count = 0;   ///< lanes filled, a whole number of strips; 0 where no ray arrived
+  int lane[lanes]; ///< of the launched block, that each ray had
 
   /// Follows a launched block to the detector.
   void follow(const trace::Train& train, const Optics& optics, trace::RayBlock& block);

@@ -43,6 +43,16 @@ Outputs::Outputs(const Options& options) {
   open(m_csv, "--csv", options.csv, faults);
   keep_input("--json", m_json, options, faults);
   keep_input("--csv", m_csv, options, faults);
+  try {
+    if (options.maps)
+      m_folder.emplace(*options.maps);
+  } catch (const std::system_error& error) {
+    faults.add(
+        {{},
+         fmt::format("--maps: '{}' is no folder to write into: {}", *options.maps, error.code().message()),
+         {},
+         {}});
+  }
   if (m_json && m_csv && m_json->same_place(*m_csv))
     faults.add({{}, "--json and --csv go to the same place", "two different paths", {}});
   if (!faults.none())
@@ -59,6 +69,8 @@ void Outputs::write(const Answer& answer) {
     if (output && output->is_stdout() == to_stdout)
       output->stage(document);
   };
+  if (m_folder)
+    m_folder->write(answer.files);
   stage(m_json, answer.json, false);
   stage(m_csv, answer.csv, false);
   for (std::optional<Output>* output : {&m_json, &m_csv})
