@@ -2,59 +2,52 @@
 
 #include <algorithm>
 #include <cmath>
+#include <utility>
 
 namespace lightledger::analysis {
 namespace {
 
 using optics::PauliVector;
 
-constexpr PauliVector identity{1.0, 0.0, 0.0, 0.0};
 /// Retardance below this, in degrees, is not worth a sentence.
 constexpr double noticeable_deg = 0.1;
+/// A pair cancels where it leaves less than this of the weaker one's retardance.
+constexpr double left_over = 0.2;
 
-double retardance_or_nan(const PauliVector& k) {
+/// 0 where there is none.
+double retardance_deg(const PauliVector& k) {
   const auto found = optics::retardance(k);
-  return found ? found->size : std::nan("");
+  return found ? found->size : 0.0;
 }
 
-/// The products of a walk: before each station, and behind each.
-struct Products {
-  std::vector<PauliVector> before, behind;
-
-  explicit Products(const std::vector<PauliVector>& did) : before{identity}, behind(did.size(), identity) {
-    for (const PauliVector& k : did)
-      before.push_back(optics::product(k, before.back()));
-    for (std::size_t i = did.size(); i-- > 1;)
-      behind[i - 1] = optics::product(behind[i], did[i]);
-  }
-};
-
-/// What is left of a cancellation when one of the two is taken out: at least this much comes back.
-double rise(const CancellingPair& pair) {
-  return std::min(pair.without_first, pair.without_second) - pair.retardance_deg;
+/// K⁻¹ but for a factor, which no retardance knows of.
+PauliVector inverse(const PauliVector& k) {
+  return {k[0], -k[1], -k[2], -k[3]};
 }
 
-bool cancels(const CancellingPair& pair) {
-  return rise(pair) > noticeable_deg && std::abs(pair.without_both - pair.retardance_deg) < 0.5 * rise(pair);
+/// What two stations do together, as if the second stood right behind the first.
+PauliVector together(const PauliVector& first, const PauliVector& between, const PauliVector& second) {
+  return optics::product(optics::product(inverse(between), second), optics::product(between, first));
+}
+
+/// How much of the weaker one's retardance is gone, in degrees.
+double gain(const CancellingPair& pair) {
+  return std::min(pair.first_deg, pair.second_deg) - pair.together_deg;
 }
 
 std::vector<CancellingPair> candidates(const std::vector<PauliVector>& did) {
-  const Products products(did);
-  const double now = retardance_or_nan(products.before.back());
   std::vector<CancellingPair> found;
   for (std::size_t i = 0; i < did.size(); ++i) {
-    const double without_first = retardance_or_nan(optics::product(products.behind[i], products.before[i]));
-    PauliVector up_to_second = products.before[i]; // with the first station neutral
+    const double first_deg = retardance_deg(did[i]);
+    if (first_deg < noticeable_deg)
+      continue;
+    PauliVector between{1.0, 0.0, 0.0, 0.0};
     for (std::size_t j = i + 1; j < did.size(); ++j) {
-      const CancellingPair pair{i,
-                                j,
-                                now,
-                                without_first,
-                                retardance_or_nan(optics::product(products.behind[j], products.before[j])),
-                                retardance_or_nan(optics::product(products.behind[j], up_to_second))};
-      if (cancels(pair))
-        found.push_back(pair);
-      up_to_second = optics::product(did[j], up_to_second);
+      const double second_deg = retardance_deg(did[j]);
+      const auto both = optics::retardance(together(did[i], between, did[j]));
+      if (second_deg >= noticeable_deg && both && both->size < left_over * std::min(first_deg, second_deg))
+        found.push_back({i, j, first_deg, second_deg, both->size});
+      between = optics::product(did[j], between);
     }
   }
   return found;
@@ -64,7 +57,10 @@ std::vector<CancellingPair> candidates(const std::vector<PauliVector>& did) {
 
 std::vector<CancellingPair> cancelling_pairs(const ChiefWalk& walk) {
   std::vector<CancellingPair> found = candidates(walk.did);
-  std::ranges::stable_sort(found, std::ranges::greater{}, rise);
+  // Of pairs as good to a thousandth of a degree the nearer to each other.
+  std::ranges::stable_sort(found, {}, [](const CancellingPair& pair) {
+    return std::pair(-std::round(1e3 * gain(pair)), pair.second - pair.first);
+  });
   std::vector<CancellingPair> kept;
   std::vector<bool> taken(walk.did.size(), false);
   for (const CancellingPair& pair : found) {

@@ -8,8 +8,8 @@
 /// What the chief ray's walk says about remedies.
 namespace lightledger::analysis {
 
-/// Pairs of stations of which neutralising either alone raises the chief ray's retardance, and both together
-/// leave it nearly as it is; the strongest first, no station in two.
+/// Pairs of stations that take back each other's retardance on the chief ray, the strongest first, no station
+/// in two of them.
 [[nodiscard]] std::vector<CancellingPair> cancelling_pairs(const ChiefWalk& walk);
 
 /// The fold whose turn about the axis that arrives at it lowers the chief ray's retardance most; none where

@@ -117,10 +117,8 @@ Json cancelling_json(const Assembly& assembly, const Polarization& polarization)
   for (const analysis::CancellingPair& pair : polarization.cancelling)
     json.push_back(
         {{"names", Json::array({assembly.stations[pair.first].name, assembly.stations[pair.second].name})},
-         {"retardance_deg", number(pair.retardance_deg)},
-         {"without_first_deg", number(pair.without_first)},
-         {"without_second_deg", number(pair.without_second)},
-         {"without_both_deg", number(pair.without_both)}});
+         {"retardances_deg", Json::array({number(pair.first_deg), number(pair.second_deg)})},
+         {"together_deg", number(pair.together_deg)}});
   return json;
 }
 

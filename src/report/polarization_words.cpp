@@ -144,10 +144,10 @@ std::vector<std::string> blame_sentences(const Assembly& assembly, const Polariz
                       on_one_line(best->name), blame.words, with_unit(-*(best->value.*blame.figure), blame)));
   for (const analysis::CancellingPair& pair : polarization.cancelling)
     sentences.push_back(
-        fmt::format("{} and {} cancel: with either alone neutral the chief ray's retardance is {:.2f} "
-                    "or {:.2f} deg, with both {:.2f}, as they are {:.2f}.",
-                    name_of(assembly, pair.first), name_of(assembly, pair.second), pair.without_first,
-                    pair.without_second, pair.without_both, pair.retardance_deg));
+        fmt::format("{} and {} cancel: they retard the chief ray by {:.2f} and {:.2f} deg, together "
+                    "by {:.2f}; bettering one of them alone makes it worse.",
+                    name_of(assembly, pair.first), name_of(assembly, pair.second), pair.first_deg,
+                    pair.second_deg, pair.together_deg));
   return sentences;
 }
 

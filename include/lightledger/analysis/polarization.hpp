@@ -62,12 +62,12 @@ struct Attribution {
   AttributionFigures error; ///< standard errors; none for patterns that give none
 };
 
-/// Two stations of which either alone would do harm that the other takes back, on the chief ray.
+/// Two stations of which one takes back on the chief ray what the other does: neutral alone, either would
+/// leave the other's retardance.
 struct CancellingPair {
   std::size_t first, second;
-  double retardance_deg;                ///< of the train as it is
-  double without_first, without_second; ///< with that one neutral
-  double without_both;
+  double first_deg, second_deg; ///< what each retards alone
+  double together_deg;          ///< what both do, seen through all that stands between them
 };
 
 /// The turn of a pair's second fold, and all behind it, about the axis that arrives at it, with which the
