@@ -4,6 +4,7 @@
 #include <cmath>
 #include <limits>
 #include <numbers>
+#include <utility>
 
 namespace lightledger::analysis {
 namespace {
@@ -13,6 +14,7 @@ using optics::PauliVector;
 
 constexpr double degrees = 180.0 / std::numbers::pi;
 constexpr double noticeable_deg = 0.1;
+constexpr double as_good_deg = 1e-6;
 constexpr double coarse_deg = 1.0;
 constexpr int halvings = 40;
 
@@ -28,14 +30,21 @@ double retardance_deg(const PauliVector& k) {
   return found ? found->size : std::numeric_limits<double>::infinity();
 }
 
-/// The chief ray's retardance when all from one station on is turned about the axis that arrives there.
+bool is_interface(const Assembly& assembly, std::size_t station) {
+  const assembly::Surface& surface = assembly.surfaces[assembly.stations[station].surface];
+  return std::holds_alternative<assembly::Interface>(surface.effect);
+}
+
+/// The retardance of mirrors and lenses when all from one station on is turned about the axis that arrives
+/// there.
 class Turning {
 public:
-  Turning(const ChiefWalk& walk, std::size_t station)
+  Turning(const Assembly& assembly, const ChiefWalk& walk, std::size_t station)
       : m_sense(station == 0 ? 1.0 : walk.parity[station - 1]) {
     for (std::size_t i = 0; i < walk.did.size(); ++i) {
       PauliVector& part = i < station ? m_before : m_behind;
-      part = optics::product(walk.did[i], part);
+      if (is_interface(assembly, i))
+        part = optics::product(walk.did[i], part);
     }
   }
 
@@ -78,25 +87,23 @@ bool met_once(const Assembly& assembly, std::size_t station) {
 
 std::optional<FoldTurn> fold_turn(const trace::Train& train, const ChiefWalk& walk) {
   const Assembly& assembly = *train.assembly;
-  const double now = Turning(walk, 0)(0.0);
+  const double now = Turning(assembly, walk, 0)(0.0);
   if (!(now > noticeable_deg && std::isfinite(now)))
     return std::nullopt;
   std::optional<FoldTurn> best;
-  std::optional<std::size_t> previous;
+  bool folded = false; // the first fold has nothing to be turned against
   for (std::size_t i = 0; i < walk.did.size(); ++i) {
     if (assembly.stations[i].intended != assembly::Act::bounce)
       continue;
-    if (previous && met_once(assembly, i)) {
-      const Turning turning(walk, i);
-      const double angle = turning.best();
-      const double left = turning(angle);
-      if (left < 0.5 * now && (!best || left < best->retardance_deg - 1e-6)) {
-        const auto& tilt = assembly.surfaces[assembly.stations[i].surface].tilt_deg;
-        best = {*previous, i,  angle, angles_of(trace::rotation({0.0, 0.0, angle}) * trace::rotation(tilt)),
-                left,      now};
-      }
-    }
-    previous = i;
+    if (std::exchange(folded, true) == false || !met_once(assembly, i))
+      continue;
+    const Turning turning(assembly, walk, i);
+    const double angle = turning.best();
+    const double left = turning(angle);
+    if (left > 0.5 * now || (best && left > best->retardance_deg - as_good_deg))
+      continue;
+    const auto& tilt = assembly.surfaces[assembly.stations[i].surface].tilt_deg;
+    best = {i, angle, angles_of(trace::rotation({0.0, 0.0, angle}) * trace::rotation(tilt)), left, now};
   }
   return best;
 }

@@ -13,7 +13,7 @@ using optics::PauliVector;
 
 constexpr double degrees = 180.0 / std::numbers::pi;
 constexpr double coarse_deg = 5.0;
-constexpr double noticeable = 1e-6;
+constexpr double noticeable = 1e-4;
 /// Leakages this near each other are equally good.
 constexpr double as_good = 1e-9;
 constexpr int halvings = 40;

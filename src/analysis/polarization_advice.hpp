@@ -12,8 +12,8 @@ namespace lightledger::analysis {
 /// in two of them.
 [[nodiscard]] std::vector<CancellingPair> cancelling_pairs(const ChiefWalk& walk);
 
-/// The fold whose turn about the axis that arrives at it lowers the chief ray's retardance most; none where
-/// no turn halves it.
+/// The fold, the train's first excepted, whose turn about the axis that arrives at it lowers the retardance of
+/// mirrors and lenses on the chief ray most; none where no turn halves it.
 [[nodiscard]] std::optional<FoldTurn> fold_turn(const trace::Train& train, const ChiefWalk& walk);
 
 /// Settings of one or two wave plates with the least cross leakage on the chief ray; none without such plates

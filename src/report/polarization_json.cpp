@@ -125,8 +125,7 @@ Json cancelling_json(const Assembly& assembly, const Polarization& polarization)
 Json fold_json(const Assembly& assembly, const std::optional<analysis::FoldTurn>& turn) {
   if (!turn)
     return nullptr;
-  return {{"name", assembly.stations[turn->second].name},
-          {"against", assembly.stations[turn->first].name},
+  return {{"name", assembly.stations[turn->station].name},
           {"turn_deg", number(turn->turn_deg)},
           {"tilt_deg", numbers(turn->tilt_deg)},
           {"retardance_deg", number(turn->retardance_deg)},

@@ -27,6 +27,10 @@ int name_width(const TextStyle& style) {
   return style.width / 4;
 }
 
+std::string power(double value, const TextStyle& style) {
+  return style.decibels ? decibels(value) : fraction(value);
+}
+
 std::string chief_table(const ChiefRay& chief, const TextStyle& style) {
   Table table({{"", Align::right, number_width},
                {"station", Align::left},
@@ -40,7 +44,7 @@ std::string chief_table(const ChiefRay& chief, const TextStyle& style) {
     const analysis::ChiefStation& station = chief.stations[i];
     const bool retards = station.retardance_deg && *station.retardance_deg > 1e-9;
     table.add({std::to_string(i + 1), shortened(on_one_line(station.name), name_width(style)),
-               fraction(station.stokes[0]), share(station.dop), angle(station.azimuth_deg),
+               power(station.stokes[0], style), share(station.dop), angle(station.azimuth_deg),
                angle(station.ellipticity_deg), share(station.diattenuation),
                retards ? angle(station.retardance_deg) : "-"});
   }
@@ -56,8 +60,8 @@ std::string chief_part(const std::optional<ChiefRay>& chief, const TextStyle& st
                   "degrees; ellipticity above 0 is right-handed (IEEE).",
                   place_of(*chief));
   const std::string total =
-      fmt::format("In all: diattenuation {}, retardance {} deg, image rotation {:.2f} deg.",
-                  share(chief->diattenuation), angle(chief->retardance_deg), chief->rotation_deg);
+      fmt::format("In all: diattenuation {}, retardance {} deg, image rotation {} deg.",
+                  share(chief->diattenuation), angle(chief->retardance_deg), angle(chief->rotation_deg));
   return wrapped(heading, style.width) + '\n' + chief_table(*chief, style) + wrapped(total, style.width);
 }
 
@@ -96,9 +100,11 @@ std::string error_words(std::optional<double> error) {
 
 std::string detector_table(const Polarization& polarization, const TextStyle& style) {
   Table table({{"all light at the detector", Align::left}, {""}, {"", Align::left}, {"", Align::left}});
-  table.add({"transmitted of unpolarized light", share(polarization.detector.mueller[0][0]), "",
-             error_words(polarization.uncertainty ? std::optional(polarization.error.mueller[0][0])
-                                                  : std::nullopt)});
+  table.add({"transmitted of unpolarized light", power(polarization.detector.mueller[0][0], style),
+             style.decibels ? "dB" : "",
+             error_words(polarization.uncertainty && !style.decibels
+                             ? std::optional(polarization.error.mueller[0][0])
+                             : std::nullopt)});
   for (const DetectorLine& line : detector_lines)
     if (const auto value = polarization.detector.*line.figure)
       table.add({line.words, detector_value(*value, line), line.unit,

@@ -39,32 +39,36 @@ std::string with_unit(double value, const Blame& blame) {
   return blame.angle ? fmt::format("{:.2f} deg", value) : fmt::format("{:.4f}", value);
 }
 
-/// The interface that the most of a figure is due to; plates and polarizers are meant to act.
-const Attribution* guilty(const Assembly& assembly, const Polarization& polarization, const Blame& blame) {
-  const Attribution* worst = nullptr;
+/// A later station is worse than an earlier one only by more than rounding.
+constexpr double worse = 1.0 + 1e-6;
+
+/// The interface that brings the most of a figure, or with `sign` −1 takes the most of it back; plates and
+/// polarizers are meant to act.
+const Attribution* extreme(const Assembly& assembly, const Polarization& polarization, const Blame& blame,
+                           double sign) {
+  const Attribution* found = nullptr;
   double most = noticeable(blame);
   for (const Attribution& attribution : polarization.attribution) {
-    const double value = (attribution.value.*blame.figure).value_or(0.0);
-    if (value > most && is_interface(assembly, attribution)) {
+    const double value = sign * (attribution.value.*blame.figure).value_or(0.0);
+    if (value > most * worse && is_interface(assembly, attribution)) {
       most = value;
-      worst = &attribution;
+      found = &attribution;
     }
   }
-  return worst;
+  return found;
 }
 
-/// The same the other way: which of them takes back most of what others do.
-const Attribution* healing(const Assembly& assembly, const Polarization& polarization, const Blame& blame) {
-  const Attribution* best = nullptr;
-  double most = noticeable(blame);
-  for (const Attribution& attribution : polarization.attribution) {
-    const double value = -(attribution.value.*blame.figure).value_or(0.0);
-    if (value > most && is_interface(assembly, attribution)) {
-      most = value;
-      best = &attribution;
-    }
+/// The coating at several stations that brings more of a figure than its worst station does.
+std::string coating_clause(const Polarization& polarization, const Attribution& worst, const Blame& blame) {
+  for (const Attribution& coating : polarization.by_coating) {
+    const double value = (coating.value.*blame.figure).value_or(0.0);
+    const bool concerned =
+        std::ranges::find(coating.stations, worst.stations.front()) != coating.stations.end();
+    if (concerned && coating.stations.size() > 1 && value > *(worst.value.*blame.figure) * worse)
+      return fmt::format("; all of its coating {} bring {}", on_one_line(coating.name),
+                         with_unit(value, blame));
   }
-  return best;
+  return "";
 }
 
 std::string vector_words(const std::array<double, 3>& v) {
@@ -73,13 +77,12 @@ std::string vector_words(const std::array<double, 3>& v) {
 }
 
 std::string fold_sentence(const Assembly& assembly, const analysis::FoldTurn& turn) {
-  const std::string second = name_of(assembly, turn.second);
   const auto tilt = [](double degrees) { return plain(std::abs(degrees) < 5e-7 ? 0.0 : degrees); };
   return fmt::format(
-      "Turning {} (and all behind it) by {:.2f} deg about the axis that arrives there, against {}, "
-      "brings the chief ray's retardance from {:.2f} to {:.2f} deg: tilt: [{}, {}, {}].",
-      second, turn.turn_deg, name_of(assembly, turn.first), turn.retardance_now_deg, turn.retardance_deg,
-      tilt(turn.tilt_deg[0]), tilt(turn.tilt_deg[1]), tilt(turn.tilt_deg[2]));
+      "Turning {} and all behind it by {:.2f} deg about the axis that arrives there (tilt: [{}, {}, {}]) "
+      "brings what mirrors and lenses retard the chief ray from {:.2f} to {:.2f} deg.",
+      name_of(assembly, turn.station), turn.turn_deg, tilt(turn.tilt_deg[0]), tilt(turn.tilt_deg[1]),
+      tilt(turn.tilt_deg[2]), turn.retardance_now_deg, turn.retardance_deg);
 }
 
 std::string plates_sentence(const Assembly& assembly, const analysis::PlateSettings& settings) {
@@ -91,7 +94,8 @@ std::string plates_sentence(const Assembly& assembly, const analysis::PlateSetti
                                   ? "the chief ray arrives in the launched state"
                                   : "the chief ray arrives nearer to the launched state";
   return fmt::format("Setting {}, {}: its cross leakage falls from {} to {}.", fmt::join(clauses, " and "),
-                     outcome, share(settings.cross_leakage_now), share(settings.cross_leakage));
+                     outcome, share(settings.cross_leakage_now),
+                     share(std::max(settings.cross_leakage, 1e-9)));
 }
 
 } // namespace
@@ -132,13 +136,14 @@ std::vector<std::string> blame_sentences(const Assembly& assembly, const Polariz
   std::vector<std::string> sentences;
   std::vector<std::string> clauses;
   for (const Blame& blame : blames)
-    if (const Attribution* worst = guilty(assembly, polarization, blame))
-      clauses.push_back(fmt::format("for {} {} ({})", blame.words, on_one_line(worst->name),
-                                    with_unit(*(worst->value.*blame.figure), blame)));
+    if (const Attribution* guilty = extreme(assembly, polarization, blame, 1.0))
+      clauses.push_back(fmt::format("for {} {} ({}{})", blame.words, on_one_line(guilty->name),
+                                    with_unit(*(guilty->value.*blame.figure), blame),
+                                    coating_clause(polarization, *guilty, blame)));
   if (!clauses.empty())
     sentences.push_back(fmt::format("Most to blame: {}.", fmt::join(clauses, ", ")));
   for (const Blame& blame : blames)
-    if (const Attribution* best = healing(assembly, polarization, blame))
+    if (const Attribution* best = extreme(assembly, polarization, blame, -1.0))
       sentences.push_back(
           fmt::format("{} takes back {} that others bring: neutral alone, it would leave {} more.",
                       on_one_line(best->name), blame.words, with_unit(-*(best->value.*blame.figure), blame)));

@@ -70,12 +70,12 @@ struct CancellingPair {
   double together_deg;          ///< what both do, seen through all that stands between them
 };
 
-/// The turn of a pair's second fold, and all behind it, about the axis that arrives at it, with which the
-/// chief ray's retardance is least.
+/// The turn of a fold, and of all behind it, about the axis that arrives at it, with which mirrors and lenses
+/// retard the chief ray least; plates, polarizers and rotators, which are meant to act, are left out.
 struct FoldTurn {
-  std::size_t first, second;
+  std::size_t station;
   double turn_deg;                ///< in (−90, 90]
-  std::array<double, 3> tilt_deg; ///< the second fold's tilt when so turned
+  std::array<double, 3> tilt_deg; ///< the fold's tilt when so turned
   double retardance_deg, retardance_now_deg;
 };
 
