@@ -17,7 +17,7 @@ const std::vector<CommandInfo>& commands() {
       {Command::budget, "budget", "FILE", "How much light arrives, and where did the rest go?",
        "lightledger budget systems/fog-bank-lidar.yaml --json -"},
       {Command::polarization, "polarization", "FILE",
-       "What happens to the state of polarization, and which station does it?",
+       "What becomes of the polarization, and by which station?",
        "lightledger polarization systems/relay-terminal.yaml --against wavelength --maps maps"},
       {Command::coating, "coating", "FILE NAME", "What does a coating do against wavelength and angle?",
        "lightledger coating systems/fog-bank-lidar.yaml lens_ar --wavelengths 500:560:20 --angles 0:30:15"},
