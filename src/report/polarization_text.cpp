@@ -200,7 +200,8 @@ std::string polarization_text(const Assembly& assembly, const Polarization& pola
     text += wrapped(sentence, style.width);
   for (const std::string& sentence : remedy_sentences(assembly, polarization))
     text += wrapped(sentence, style.width);
-  text += wrapped(coherent_sentence(), style.width);
+  if (polarization.detector.coherent_share)
+    text += wrapped(coherent_sentence(), style.width);
   text += against_part(assembly.light, polarization.table, style);
   return text + describe_warnings(warnings, style.width);
 }
