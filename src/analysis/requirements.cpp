@@ -145,7 +145,8 @@ CheckResult check(const Assembly& assembly, const BudgetOptions& options) {
     return result;
   std::optional<Polarization> polarized;
   if (asks_for_polarization(assembly)) {
-    PolarizationResult found = polarization(assembly, {.threads = options.threads});
+    PolarizationResult found =
+        polarization(assembly, {.threads = options.threads, .progress = options.progress});
     result.warnings.insert(result.warnings.end(), found.warnings.begin(), found.warnings.end());
     polarized = std::move(found.polarization);
   }

@@ -2,11 +2,13 @@
 
 #include "help.hpp"
 #include "input_error.hpp"
+#include "progress_bar.hpp"
 #include "terminal.hpp"
 
 #include <lightledger/analysis/coating_curve.hpp>
 #include <lightledger/analysis/medium_table.hpp>
 #include <lightledger/analysis/polarization.hpp>
+#include <lightledger/analysis/remedy.hpp>
 #include <lightledger/analysis/requirements.hpp>
 #include <lightledger/report/budget.hpp>
 #include <lightledger/report/check.hpp>
@@ -66,10 +68,17 @@ void refuse_request(const Faults& faults, const Options& options) {
                      '\n');
 }
 
+/// What an analysis of rays gives, its progress shown meanwhile.
+template <class Analysis>
+auto watched(const Options& options, Analysis analysis) {
+  ProgressBar bar(!options.quiet);
+  return analysis(analysis::BudgetOptions{options.split, options.threads, &bar});
+}
+
 Answer answer_budget(const Options& options, const Input& input) {
   const auto start = std::chrono::steady_clock::now();
   const analysis::BudgetResult result =
-      analysis::budget(*input.assembly, {.split = options.split, .threads = options.threads});
+      watched(options, [&](const auto& asked) { return analysis::budget(*input.assembly, asked); });
   const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
   refuse_file(result.faults, input);
 
@@ -78,13 +87,16 @@ Answer answer_budget(const Options& options, const Input& input) {
       options, [&] { return report::budget_json(envelope, *result.budget); },
       [&] { return report::budget_csv(*result.budget); },
       [&] {
-        return report::budget_text(*input.assembly, *result.budget, envelope.warnings, elapsed,
+        const auto remedies =
+            analysis::remedies(*input.assembly, *result.budget, {.threads = options.threads});
+        return report::budget_text(*input.assembly, *result.budget, remedies, envelope.warnings, elapsed,
                                    style_of(options));
       });
 }
 
 Answer answer_check(const Options& options, const Input& input) {
-  const analysis::CheckResult result = analysis::check(*input.assembly, {.threads = options.threads});
+  const analysis::CheckResult result =
+      watched(options, [&](const auto& asked) { return analysis::check(*input.assembly, asked); });
   refuse_file(result.faults, input);
 
   const report::Envelope envelope = envelope_of(options, input, joined(input, result.warnings));
@@ -100,9 +112,12 @@ Answer answer_check(const Options& options, const Input& input) {
 
 Answer answer_polarization(const Options& options, const Input& input) {
   const auto start = std::chrono::steady_clock::now();
-  const analysis::PolarizationResult result = analysis::polarization(
-      *input.assembly,
-      {.against = options.against, .maps = options.maps.has_value(), .threads = options.threads});
+  const analysis::PolarizationResult result = watched(options, [&](const auto& asked) {
+    return analysis::polarization(*input.assembly, {.against = options.against,
+                                                    .maps = options.maps.has_value(),
+                                                    .threads = asked.threads,
+                                                    .progress = asked.progress});
+  });
   const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
   refuse_file(result.faults, input);
 
@@ -146,11 +161,14 @@ Answer answer_media(const Options& options, const Input& input) {
   const analysis::MediumTableResult result = analysis::medium_table(options.name, options.wavelengths_nm);
   refuse_request(result.faults, options);
 
-  const report::Envelope envelope = envelope_of(options, input, {});
+  Warnings warnings;
+  if (!options.changes.empty())
+    warnings.emplace_back("media reads no assembly: --set, --rays and --accuracy change nothing here");
+  const report::Envelope envelope = envelope_of(options, input, std::move(warnings));
   return written(
       options, [&] { return report::media_json(envelope, *result.media); },
       [&] { return report::media_csv(*result.media); },
-      [&] { return report::media_text(*result.media, style_of(options)); });
+      [&] { return report::media_text(*result.media, envelope.warnings, style_of(options)); });
 }
 
 } // namespace

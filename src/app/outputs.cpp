@@ -2,6 +2,7 @@
 
 #include "help.hpp"
 #include "input_error.hpp"
+#include "interruption.hpp"
 
 #include <lightledger/assembly/diagnostics.hpp>
 
@@ -65,19 +66,24 @@ bool Outputs::stdout_is_taken() const {
 }
 
 void Outputs::write(const Answer& answer) {
-  const auto stage = [](std::optional<Output>& output, const std::string& document, bool to_stdout) {
-    if (output && output->is_stdout() == to_stdout)
-      output->stage(document);
+  const auto stage = [&](Output::Kind kind) {
+    if (m_json && m_json->kind() == kind)
+      m_json->stage(answer.json);
+    if (m_csv && m_csv->kind() == kind)
+      m_csv->stage(answer.csv);
   };
-  if (m_folder)
-    m_folder->write(answer.files);
-  stage(m_json, answer.json, false);
-  stage(m_csv, answer.csv, false);
-  for (std::optional<Output>* output : {&m_json, &m_csv})
-    if (*output)
-      (*output)->publish();
-  stage(m_json, answer.json, true);
-  stage(m_csv, answer.csv, true);
+  stage(Output::Kind::device);
+  {
+    const Uninterrupted together;
+    if (m_folder)
+      m_folder->write(answer.files);
+    stage(Output::Kind::file);
+    for (std::optional<Output>* output : {&m_json, &m_csv})
+      if (*output)
+        (*output)->publish();
+    files_are_written();
+  }
+  stage(Output::Kind::standard_output);
   if (!stdout_is_taken())
     Output("-").stage(answer.text);
 }

@@ -34,6 +34,7 @@ public:
 
   std::optional<double> number(std::string_view key, Unit unit, Bound bound);
   std::optional<double> need_number(std::string_view key, Unit unit, Bound bound);
+  std::optional<double> moderate_number(std::string_view key);
   std::optional<std::uint64_t> need_count(std::string_view key, std::uint64_t most = largest_count);
   /// A number that may be left out; after a fault the default as well.
   double number_or(double fallback, std::string_view key, Unit unit, Bound bound);
@@ -42,8 +43,6 @@ public:
 
   /// Refuses a key for a reason, the message being `'key' reason`. Whether it stands here.
   bool forbid(std::string_view key, std::string_view reason, std::string_view accepted = {});
-  /// A key of the assembly file that this version does not know how to follow. Whether it stands here.
-  bool unavailable(std::string_view key) { return forbid(key, "is not available in this version"); }
   /// The one key of several alternatives that stands here; none, and a fault, where more than one does.
   std::optional<std::string_view> one_of(const Keys& keys, std::string_view accepted);
   /// The same where one must stand.

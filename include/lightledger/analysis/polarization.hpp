@@ -3,6 +3,7 @@
 #include <lightledger/assembly/assembly.hpp>
 #include <lightledger/assembly/diagnostics.hpp>
 #include <lightledger/optics/mueller.hpp>
+#include <lightledger/trace/progress.hpp>
 
 #include <array>
 #include <cstdint>
@@ -136,6 +137,7 @@ struct PolarizationOptions {
   Against against = Against::nothing;
   bool maps = false;
   int threads = 0; ///< 0: as many as the machine has
+  trace::Progress* progress = nullptr;
 };
 
 struct PolarizationResult {
