@@ -7,12 +7,14 @@
 
 #include <lightledger/analysis/coating_curve.hpp>
 #include <lightledger/analysis/medium_table.hpp>
+#include <lightledger/analysis/polarization.hpp>
 #include <lightledger/analysis/remedy.hpp>
 #include <lightledger/analysis/requirements.hpp>
 #include <lightledger/report/budget.hpp>
 #include <lightledger/report/check.hpp>
 #include <lightledger/report/coating.hpp>
 #include <lightledger/report/media.hpp>
+#include <lightledger/report/polarization.hpp>
 
 #include <chrono>
 #include <utility>
@@ -108,6 +110,30 @@ Answer answer_check(const Options& options, const Input& input) {
   return answer;
 }
 
+Answer answer_polarization(const Options& options, const Input& input) {
+  const auto start = std::chrono::steady_clock::now();
+  const analysis::PolarizationResult result = watched(options, [&](const auto& asked) {
+    return analysis::polarization(*input.assembly, {.against = options.against,
+                                                    .maps = options.maps.has_value(),
+                                                    .threads = asked.threads,
+                                                    .progress = asked.progress});
+  });
+  const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
+  refuse_file(result.faults, input);
+
+  const report::Envelope envelope = envelope_of(options, input, joined(input, result.warnings));
+  Answer answer = written(
+      options, [&] { return report::polarization_json(envelope, *input.assembly, *result.polarization); },
+      [&] { return report::polarization_csv(*result.polarization); },
+      [&] {
+        return report::polarization_text(*input.assembly, *result.polarization, envelope.warnings, elapsed,
+                                         style_of(options));
+      });
+  if (options.maps)
+    answer.files = report::polarization_files(*input.assembly, *result.polarization);
+  return answer;
+}
+
 analysis::CoatingRequest coating_request(const Options& options) {
   analysis::CoatingRequest request{.name = options.name.value_or("")};
   request.substrate = options.substrate;
@@ -163,6 +189,8 @@ Answer answer(const Options& options, const Input& input) {
     return answer_budget(options, input);
   case Command::check:
     return answer_check(options, input);
+  case Command::polarization:
+    return answer_polarization(options, input);
   case Command::coating:
     return answer_coating(options, input);
   case Command::media:

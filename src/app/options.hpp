@@ -3,6 +3,7 @@
 #include "commands.hpp"
 
 #include <lightledger/analysis/budget.hpp>
+#include <lightledger/analysis/polarization.hpp>
 #include <lightledger/assembly/load.hpp>
 
 #include <optional>
@@ -25,6 +26,8 @@ struct Options {
   bool allow_outside = false; ///< measured curves may lie outside the assembly file's folder
 
   analysis::Split split = analysis::Split::none;
+  analysis::Against against = analysis::Against::nothing;
+  std::optional<std::string> maps; ///< a folder
   std::optional<std::string> incident, substrate;
   std::vector<double> wavelengths_nm, angles_deg; ///< empty where not given
 };

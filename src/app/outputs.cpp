@@ -44,6 +44,16 @@ Outputs::Outputs(const Options& options) {
   open(m_csv, "--csv", options.csv, faults);
   keep_input("--json", m_json, options, faults);
   keep_input("--csv", m_csv, options, faults);
+  try {
+    if (options.maps)
+      m_folder.emplace(*options.maps);
+  } catch (const std::system_error& error) {
+    faults.add(
+        {{},
+         fmt::format("--maps: '{}' is no folder to write into: {}", *options.maps, error.code().message()),
+         {},
+         {}});
+  }
   if (m_json && m_csv && m_json->same_place(*m_csv))
     faults.add({{}, "--json and --csv go to the same place", "two different paths", {}});
   if (!faults.none())
@@ -65,6 +75,8 @@ void Outputs::write(const Answer& answer) {
   stage(Output::Kind::device);
   {
     const Uninterrupted together;
+    if (m_folder)
+      m_folder->write(answer.files);
     stage(Output::Kind::file);
     for (std::optional<Output>* output : {&m_json, &m_csv})
       if (*output)

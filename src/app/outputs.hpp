@@ -1,6 +1,7 @@
 #pragma once
 
 #include "answer.hpp"
+#include "folder.hpp"
 #include "options.hpp"
 #include "output.hpp"
 
@@ -21,6 +22,7 @@ private:
   [[nodiscard]] bool stdout_is_taken() const;
 
   std::optional<Output> m_json, m_csv;
+  std::optional<Folder> m_folder;
 };
 
 } // namespace lightledger::app
