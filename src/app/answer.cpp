@@ -10,6 +10,7 @@
 #include <lightledger/report/budget.hpp>
 #include <lightledger/report/check.hpp>
 #include <lightledger/report/coating.hpp>
+#include <lightledger/report/ghosts.hpp>
 #include <lightledger/report/media.hpp>
 
 #include <chrono>
@@ -81,6 +82,28 @@ Answer answer_budget(const Options& options, const Input& input) {
       });
 }
 
+Answer answer_ghosts(const Options& options, const Input& input) {
+  analysis::GhostOptions wanted = options.ghosts;
+  wanted.threads = options.threads;
+  const auto start = std::chrono::steady_clock::now();
+  const analysis::GhostsResult result = analysis::ghosts(*input.assembly, wanted);
+  const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
+  refuse_file(result.faults, input);
+
+  const report::Envelope envelope = envelope_of(options, input, joined(input, result.warnings));
+  report::GhostsTextOptions shown;
+  shown.returned = options.returned;
+  if (wanted.top)
+    shown.rows = *wanted.top;
+  return written(
+      options, [&] { return report::ghosts_json(envelope, *result.ghosts, options.returned); },
+      [&] { return report::ghosts_csv(*result.ghosts); },
+      [&] {
+        return report::ghosts_text(*input.assembly, *result.ghosts, envelope.warnings, elapsed, shown,
+                                   style_of(options));
+      });
+}
+
 Answer answer_check(const Options& options, const Input& input) {
   const analysis::CheckResult result = analysis::check(*input.assembly, {.threads = options.threads});
   refuse_file(result.faults, input);
@@ -148,6 +171,8 @@ Answer answer(const Options& options, const Input& input) {
     return answer_budget(options, input);
   case Command::check:
     return answer_check(options, input);
+  case Command::ghosts:
+    return answer_ghosts(options, input);
   case Command::coating:
     return answer_coating(options, input);
   case Command::media:

@@ -2,6 +2,7 @@
 
 #include <lightledger/assembly/assembly.hpp>
 
+#include <compare>
 #include <cstdint>
 #include <utility>
 #include <variant>
@@ -20,6 +21,8 @@ enum class Heading { along, against };
 struct State {
   StationId visit;
   Heading heading;
+
+  friend auto operator<=>(const State&, const State&) = default;
 };
 
 /// Where light ends that meets no further surface of the train.

@@ -1,0 +1,101 @@
+#pragma once
+
+#include <lightledger/assembly/assembly.hpp>
+#include <lightledger/assembly/diagnostics.hpp>
+
+#include <array>
+#include <cstdint>
+#include <optional>
+#include <string>
+#include <vector>
+
+namespace lightledger::analysis {
+
+/// What a ghost is on the detector: moments over the rays inside the clear area, in the detector's own axes,
+/// mm. None where it brings nothing.
+struct GhostSpot {
+  std::array<double, 2> centroid_mm;
+  double rms_radius_mm; ///< about the centroid
+};
+
+/// A ghost's share of the light of one field.
+struct GhostField {
+  std::optional<std::string> name;
+  std::array<double, 2> at;             ///< degrees at infinity, mm at a finite object
+  double power;                         ///< of what was launched from this field
+  std::optional<double> relative_power; ///< over the largest share that any field delivers
+  std::optional<GhostSpot> spot;
+};
+
+/// Light that reaches the detector by one path with bounces (contract §5, ghosts).
+struct Ghost {
+  std::vector<std::string> bounces; ///< in the order of bouncing
+  double power;                     ///< of launched power, before the detector's reflectance
+  std::optional<double> uncertainty;
+  std::optional<double> relative_power; ///< over delivered
+  GhostSpot spot;
+  std::optional<double> path_excess_mm; ///< over rays that arrive as intended too
+  std::optional<double> peak_ratio;     ///< none without pixels, or where it was not asked for
+  std::array<double, 4> stokes;         ///< in the detector's basis, S0 = power
+  double dop;
+  std::optional<double> fringe_modulation;
+  std::optional<double> defocus_mm; ///< paraxial, from the detector to the ghost's image along the axis
+  std::vector<GhostField> by_field;
+};
+
+/// Light that leaves through the first station by one path.
+struct ReturnedPath {
+  std::vector<std::string> bounces;
+  double power; ///< of launched power
+};
+
+/// The whole tree, delivered light included; adds up to 1.
+struct GhostLedger {
+  double detector = 0.0; ///< (1 − reflectance)(delivered + total)
+  double returned = 0.0;
+  double leaked = 0.0;
+  double absorbed = 0.0;
+  double clipped = 0.0;
+  double missed = 0.0;
+  double scattered = 0.0;
+  double extra = 0.0;
+  double bulk = 0.0;
+  double not_followed = 0.0;
+};
+
+struct Ghosts {
+  int bounces = 2;                    ///< followed at most
+  std::uint64_t paths_considered = 0; ///< of 1 to `bounces` bounces that end at the detector
+  std::uint64_t paths_traced = 0;     ///< of these, with no light cut off
+  double delivered = 0.0;             ///< by the intended path
+  double total = 0.0;                 ///< by all paths with bounces
+  std::optional<double> uncertainty;  ///< standard error of `total`; none for patterns that give none
+  double returned = 0.0;
+  double not_followed = 0.0; ///< bounds what any path not traced could bring
+  GhostLedger ledger;
+  double closure_error = 0.0;
+  std::uint64_t rays = 0;
+  std::vector<Ghost> paths;                 ///< brightest first, ties in the order of the train
+  std::uint64_t unlisted_paths = 0;         ///< that bring light and are not in the list
+  double unlisted = 0.0;                    ///< their power
+  std::vector<ReturnedPath> returned_paths; ///< brightest first
+};
+
+struct GhostOptions {
+  int bounces = 2;
+  double floor = 1e-12;             ///< beams with a smaller share of launched power are not followed
+  std::optional<std::uint64_t> top; ///< how many paths to list; none: all, within reason
+  std::optional<std::string> field; ///< the light of this field alone: its name, or its number from 1
+  int threads = 0;                  ///< 0: as many as the machine has
+};
+
+struct GhostsResult {
+  std::optional<Ghosts> ghosts; ///< none where there are faults
+  std::vector<std::string> warnings;
+  assembly::Faults faults;
+};
+
+/// Follows all light of an assembly that bounces, with the sampling it asks for.
+[[nodiscard]] GhostsResult ghosts(const assembly::Assembly& assembly, const GhostOptions& options = {});
+
+} // namespace lightledger::analysis

@@ -1,0 +1,123 @@
+#include "display_width.hpp"
+#include "figures.hpp"
+#include "prose.hpp"
+#include "table.hpp"
+
+#include <lightledger/report/ghosts.hpp>
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <cmath>
+
+namespace lightledger::report {
+namespace {
+
+using analysis::Ghost;
+using analysis::Ghosts;
+
+constexpr int number_width = 3;
+/// Of all columns but that of the bounces, with the blanks between them.
+constexpr int other_columns = 49;
+
+/// A power that may be very small: `1.234e-07`; in dB where asked for.
+std::string power(double value, const TextStyle& style) {
+  if (style.decibels)
+    return decibels(value);
+  return value > 0.0 ? fmt::format("{:.3e}", value) : "-";
+}
+
+std::string relative(std::optional<double> value, const TextStyle& style) {
+  return value ? power(*value, style) : "-";
+}
+
+std::string length(std::optional<double> value) {
+  return value ? quantity(*value) : "-";
+}
+
+std::string names(const std::vector<std::string>& bounces, int width) {
+  return shortened(on_one_line(fmt::format("{}", fmt::join(bounces, ", "))), width);
+}
+
+std::string paths_table(const Ghosts& ghosts, std::size_t rows, const TextStyle& style) {
+  const int widest = style.width - other_columns;
+  Table table({{"", Align::right, number_width},
+               {"bounces at", Align::left},
+               {"power"},
+               {"relative"},
+               {"rms mm"},
+               {"excess mm"}});
+  for (std::size_t i = 0; i < std::min(rows, ghosts.paths.size()); ++i) {
+    const Ghost& ghost = ghosts.paths[i];
+    table.add({std::to_string(i + 1), names(ghost.bounces, widest), Cell(power(ghost.power, style), i == 0),
+               relative(ghost.relative_power, style), quantity(ghost.spot.rms_radius_mm),
+               length(ghost.path_excess_mm)});
+  }
+  return table.text(style.emphasis);
+}
+
+std::string with_error(double value, std::optional<double> error, const TextStyle& style) {
+  std::string text = power(value, style);
+  if (error && !style.decibels)
+    text += fmt::format(" +- {}", error_size(*error));
+  return text;
+}
+
+std::string total_line(const Ghosts& ghosts, std::chrono::duration<double> elapsed, const TextStyle& style) {
+  return fmt::format(
+      "ghosts  {}    closes to {}    {} rays, {}\n", with_error(ghosts.total, ghosts.uncertainty, style),
+      error_size(std::abs(ghosts.closure_error)), count(ghosts.rays), duration(elapsed.count()));
+}
+
+/// What is shown of the paths, and what all others bring.
+std::string certainty(const Ghosts& ghosts, std::size_t shown) {
+  double listed = 0.0;
+  for (std::size_t i = 0; i < std::min(shown, ghosts.paths.size()); ++i)
+    listed += ghosts.paths[i].power;
+  const double rest = std::max(ghosts.total - listed, 0.0) + ghosts.not_followed;
+  std::string sentence = fmt::format("Of {} paths of at most {} bounces, {} bring light. Within the train as "
+                                     "written, for the rays sampled",
+                                     count(ghosts.paths_considered), ghosts.bounces,
+                                     count(ghosts.paths.size() + ghosts.unlisted_paths));
+  if (ghosts.uncertainty)
+    sentence += fmt::format(" (+- {})", error_size(*ghosts.uncertainty));
+  sentence += fmt::format(", all ghosts not listed together bring less than {:.2g} of the launched power; "
+                          "edges, mounts and scattered light are not followed.",
+                          rest);
+  return sentence;
+}
+
+std::string returned_table(const Ghosts& ghosts, std::size_t rows, const TextStyle& style) {
+  std::string text =
+      fmt::format("\nThrough the front returns {} of the launched power\n", power(ghosts.returned, style));
+  Table table({{"", Align::right, number_width}, {"bounces at", Align::left}, {"power"}});
+  for (std::size_t i = 0; i < std::min(rows, ghosts.returned_paths.size()); ++i) {
+    const analysis::ReturnedPath& path = ghosts.returned_paths[i];
+    table.add({std::to_string(i + 1), names(path.bounces, style.width - 20), power(path.power, style)});
+  }
+  return text + table.text(style.emphasis);
+}
+
+} // namespace
+
+std::string ghosts_text(const assembly::Assembly& assembly, const Ghosts& ghosts,
+                        const std::vector<std::string>& warnings, std::chrono::duration<double> elapsed,
+                        const GhostsTextOptions& options, const TextStyle& style) {
+  std::string text = heading(assembly, style.width);
+  if (style.decibels)
+    text += "Powers in dB\n";
+  text += '\n';
+  if (!ghosts.paths.empty())
+    text += paths_table(ghosts, options.rows, style);
+  text += total_line(ghosts, elapsed, style);
+  text += '\n';
+  text += wrapped(certainty(ghosts, options.rows), style.width);
+  if (options.returned)
+    text += returned_table(ghosts, options.rows, style);
+  if (!warnings.empty())
+    text += '\n';
+  text += describe_warnings(warnings, style.width);
+  return text;
+}
+
+} // namespace lightledger::report
