@@ -79,6 +79,7 @@ Ghosts read(const Assembly& assembly, const PathTree& tree, const TracedTree& tr
   ghosts.total = traced.total.ghosts;
   ghosts.uncertainty = traced.ghosts_error;
   ghosts.returned = traced.total.ledger.returned;
+  ghosts.returned_uncertainty = traced.returned_error;
   ghosts.not_followed = traced.total.ledger.not_followed;
   ghosts.ledger = ledger(traced.total);
   ghosts.closure_error = 1.0 - traced.total.detector() - traced.total.ledger.sum();

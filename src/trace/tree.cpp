@@ -119,6 +119,8 @@ TracedTree trace_tree(const Train& train, const PathTree& tree, const TreeOption
   if (sampling.scattered()) {
     traced.delivered_error = standard_error(
         residuals(sampling.samples(), [](const TreeFound& found) { return found.image.power; }));
+    traced.returned_error = standard_error(
+        residuals(sampling.samples(), [](const TreeFound& found) { return found.ledger.returned; }));
     traced.ghosts_error = TreeSurvey::error(sampling.samples());
     traced.path_errors = path_errors(sampling.samples(), traced.total.paths);
   }

@@ -71,6 +71,7 @@ struct Ghosts {
   double total = 0.0;                 ///< by all paths with bounces
   std::optional<double> uncertainty;  ///< standard error of `total`; none for patterns that give none
   double returned = 0.0;
+  std::optional<double> returned_uncertainty;
   double not_followed = 0.0; ///< bounds what any path not traced could bring
   GhostLedger ledger;
   double closure_error = 0.0;
@@ -84,8 +85,8 @@ struct Ghosts {
 struct GhostOptions {
   int bounces = 2;
   double floor = 1e-12;             ///< beams with a smaller share of launched power are not followed
-  std::optional<std::uint64_t> top; ///< how many paths to list; none: all, within reason
-  std::optional<std::string> field; ///< the light of this field alone: its name, or its number from 1
+  std::optional<std::uint64_t> top{}; ///< how many paths to list; none: all, within reason
+  std::optional<std::string> field{}; ///< the light of this field alone: its name, or its number from 1
   int threads = 0;                  ///< 0: as many as the machine has
 };
 

@@ -1,6 +1,7 @@
 #pragma once
 
 #include <lightledger/analysis/budget.hpp>
+#include <lightledger/analysis/ghosts.hpp>
 #include <lightledger/assembly/assembly.hpp>
 #include <lightledger/assembly/diagnostics.hpp>
 
@@ -35,10 +36,15 @@ struct Judgement {
   [[nodiscard]] bool all_met() const;
 };
 
-/// Holds the requirements of an assembly against its budget. Quantities are paths in the JSON of a command,
-/// with stations and fields by name or by index: `budget.delivered`,
-/// `budget.stations.fold.incidence_deg.max`, `budget.by_wavelength[1].delivered`; `delivered` for short.
-[[nodiscard]] Judgement judge_all(const assembly::Assembly& assembly, const Budget& budget);
+/// Whether some requirement asks for a figure of the ghosts.
+[[nodiscard]] bool asks_for_ghosts(const assembly::Assembly& assembly);
+
+/// Holds the requirements of an assembly against its budget and its ghosts. Quantities are paths in the JSON
+/// of a command, with stations and fields by name or by index: `budget.delivered`,
+/// `budget.stations.fold.incidence_deg.max`, `budget.by_wavelength[1].delivered`, `ghosts.total`,
+/// `ghosts.paths[0].by_field.corner.power`; `delivered` for short.
+[[nodiscard]] Judgement judge_all(const assembly::Assembly& assembly, const Budget& budget,
+                                  const Ghosts* ghosts = nullptr);
 
 struct CheckResult {
   std::optional<Judgement> judgement; ///< none where there are faults

@@ -59,7 +59,7 @@ struct TracedTree {
   std::uint64_t rays = 0;
 
   /// Standard errors; none for patterns that give none.
-  std::optional<double> delivered_error, ghosts_error;
+  std::optional<double> delivered_error, ghosts_error, returned_error;
   std::vector<double> path_errors; ///< of the rows of total.paths
 };
 
