@@ -43,7 +43,7 @@ Ghost ghost(const Assembly& assembly, const PathTree& tree, const TracedTree& tr
             PathTree::PathNumber number) {
   const PathSums& sums = *traced.total.paths.find(number);
   Ghost ghost;
-  ghost.bounces = trace::names(assembly, tree.way(number).bounces);
+  ghost.bounces = trace::bounce_names(assembly, tree.way(number));
   ghost.power = sums.power;
   if (!traced.path_errors.empty())
     ghost.uncertainty = traced.path_errors[traced.total.paths.place(number)];
@@ -58,9 +58,10 @@ Ghost ghost(const Assembly& assembly, const PathTree& tree, const TracedTree& tr
 }
 
 std::vector<trace::StationId> stations(const PathTree& tree, PathTree::PathNumber number) {
+  const PathTree::Way way = tree.way(number);
   std::vector<trace::StationId> stations;
-  for (const trace::State& state : tree.way(number).bounces)
-    stations.push_back(state.visit);
+  for (const std::size_t step : way.bounces)
+    stations.push_back(way.states[step].visit);
   return stations;
 }
 
@@ -108,7 +109,7 @@ std::vector<ReturnedPath> returned_paths(const Assembly& assembly, const PathTre
     if (rows.size() == std::min(top.value_or(longest_list), longest_list))
       break;
     rows.push_back(
-        {trace::names(assembly, tree.way(number).bounces), traced.total.returned.find(number)->power});
+        {trace::bounce_names(assembly, tree.way(number)), traced.total.returned.find(number)->power});
   }
   return rows;
 }

@@ -1,3 +1,4 @@
+#include "close_look.hpp"
 #include "ghost_list.hpp"
 
 #include <lightledger/analysis/ghosts.hpp>
@@ -115,6 +116,8 @@ GhostsResult ghosts(const Assembly& assembly, const GhostOptions& options) {
     return result;
   }
   result.ghosts = read(lit, tree, traced, options);
+  look_closely(*train, tree, traced, options, *result.ghosts);
+  find_cures(lit, tree, traced, *result.ghosts);
   result.warnings = warnings(lit, traced);
   return result;
 }

@@ -39,6 +39,12 @@ Json ghost_json(const Ghost& ghost) {
   Json stokes = Json::array();
   for (const double s : ghost.stokes)
     stokes.push_back(number(s));
+  Json reflectances = Json::array();
+  Json needed = Json::array();
+  for (const analysis::GhostBounce& bounce : ghost.cure) {
+    reflectances.push_back(number(bounce.reflectance));
+    needed.push_back(number(bounce.needed_reflectance));
+  }
   return {{"bounces", ghost.bounces},
           {"power", number(ghost.power)},
           {"uncertainty", number(ghost.uncertainty)},
@@ -51,7 +57,18 @@ Json ghost_json(const Ghost& ghost) {
           {"dop", number(ghost.dop)},
           {"fringe_modulation", number(ghost.fringe_modulation)},
           {"by_field", by_field_json(ghost)},
-          {"defocus_mm", number(ghost.defocus_mm)}};
+          {"defocus_mm", number(ghost.defocus_mm)},
+          {"reflectances", std::move(reflectances)},
+          {"needed_reflectances", std::move(needed)}};
+}
+
+Json culprit_json(const std::optional<analysis::GhostCulprit>& culprit) {
+  if (!culprit)
+    return nullptr;
+  return {{"name", culprit->name},
+          {"power", number(culprit->power)},
+          {"reflectance", number(culprit->reflectance)},
+          {"needed_reflectance", number(culprit->needed_reflectance)}};
 }
 
 Json returned_json(const Ghosts& ghosts) {
@@ -80,6 +97,8 @@ std::string ghosts_json(const Envelope& envelope, const Ghosts& ghosts, bool wit
   json["delivered"] = number(ghosts.delivered);
   json["rays"] = ghosts.rays;
   json["unlisted"] = {{"paths", ghosts.unlisted_paths}, {"power", number(ghosts.unlisted)}};
+  json["limit"] = number(ghosts.limit);
+  json["culprit"] = culprit_json(ghosts.culprit);
   if (with_returned)
     json["returned_paths"] = returned_json(ghosts);
   return json_document(envelope, "ghosts", std::move(json));

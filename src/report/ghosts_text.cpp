@@ -87,6 +87,48 @@ std::string certainty(const Ghosts& ghosts, std::size_t shown) {
   return sentence;
 }
 
+std::string reflectance(double value) {
+  return fmt::format("{:.2g} %", 100.0 * value);
+}
+
+/// "cover rear from 4.2 % to 1.1 %, or image from 6 % to 1.6 %", of those that alone would do.
+std::vector<std::string> remedies(const Ghost& ghost) {
+  std::vector<std::string> clauses;
+  for (std::size_t i = 0; i < ghost.cure.size(); ++i)
+    if (const analysis::GhostBounce& bounce = ghost.cure[i]; bounce.needed_reflectance)
+      clauses.push_back(fmt::format("{} from {} to {}", on_one_line(ghost.bounces[i]),
+                                    reflectance(bounce.reflectance),
+                                    reflectance(*bounce.needed_reflectance)));
+  return clauses;
+}
+
+std::string share_of_culprit(const Ghosts& ghosts) {
+  const analysis::GhostCulprit& culprit = *ghosts.culprit;
+  std::string sentence = fmt::format("{} takes part in {} of it", on_one_line(culprit.name),
+                                     per_cent(culprit.power / ghosts.total));
+  if (culprit.needed_reflectance)
+    sentence += fmt::format(": from {} to {} there would do too", reflectance(*culprit.reflectance),
+                            reflectance(*culprit.needed_reflectance));
+  return sentence + ".";
+}
+
+/// What would keep the limit, or where half of the light comes from.
+std::string advice(const Ghosts& ghosts) {
+  if (ghosts.paths.empty() || !ghosts.culprit)
+    return "";
+  if (!ghosts.limit || ghosts.total <= *ghosts.limit)
+    return fmt::format("Path 1 brings {} of it; {}", per_cent(ghosts.paths.front().power / ghosts.total),
+                       share_of_culprit(ghosts));
+  std::string sentence = fmt::format("That is {:.2g} more than the {} allowed. ",
+                                     ghosts.total - *ghosts.limit, plain(*ghosts.limit));
+  const std::vector<std::string> clauses = remedies(ghosts.paths.front());
+  if (clauses.empty())
+    sentence += "No cure of path 1 alone is enough. ";
+  else
+    sentence += fmt::format("Curing path 1 is enough: {}. ", fmt::join(clauses, ", or "));
+  return sentence + share_of_culprit(ghosts);
+}
+
 std::string returned_table(const Ghosts& ghosts, std::size_t rows, const TextStyle& style) {
   std::string text =
       fmt::format("\nThrough the front returns {} of the launched power\n", power(ghosts.returned, style));
@@ -111,6 +153,8 @@ std::string ghosts_text(const assembly::Assembly& assembly, const Ghosts& ghosts
     text += paths_table(ghosts, options.rows, style);
   text += total_line(ghosts, elapsed, style);
   text += '\n';
+  if (const std::string sentence = advice(ghosts); !sentence.empty())
+    text += wrapped(sentence, style.width);
   text += wrapped(certainty(ghosts, options.rows), style.width);
   if (options.returned)
     text += returned_table(ghosts, options.rows, style);

@@ -132,7 +132,7 @@ PathTree::PathNumber PathTree::detected_below(PathNumber number) const {
 }
 
 PathTree::Way PathTree::way(PathNumber number) const {
-  Way way{{{}, End::absorbed}, {}};
+  Way way{{{}, End::absorbed}, {}, {}};
   int left = m_bounces;
   Exit next = m_start;
   while (next.onward) {
@@ -146,21 +146,22 @@ PathTree::Way PathTree::way(PathNumber number) const {
     }
     const bool reflected = junction.main_bounces != aside;
     const Act act = reflected ? Act::bounce : junction.detects ? Act::detect : Act::pass;
-    way.path.steps.push_back({next.leg, junction.op, junction.state.visit, act});
     if (aside && junction.side_bounces) {
-      way.bounces.push_back(junction.state);
+      way.bounces.push_back(way.states.size());
       --left;
     }
+    way.path.steps.push_back({next.leg, junction.op, junction.state.visit, act});
+    way.states.push_back(junction.state);
     next = aside ? junction.side : junction.main;
   }
   way.path.end = next.end;
   return way;
 }
 
-std::vector<std::string> names(const Assembly& assembly, const std::vector<State>& bounces) {
+std::vector<std::string> bounce_names(const Assembly& assembly, const PathTree::Way& way) {
   std::vector<std::string> names;
-  for (const State& state : bounces)
-    names.push_back(assembly.stations[state.visit].name);
+  for (const std::size_t step : way.bounces)
+    names.push_back(assembly.stations[way.states[step].visit].name);
   return names;
 }
 

@@ -1,3 +1,4 @@
+#include "reflecting_detector.hpp"
 #include "tree_survey.hpp"
 
 #include <lightledger/trace/interact.hpp>
@@ -9,13 +10,6 @@ namespace lightledger::trace {
 namespace {
 
 using JunctionId = PathTree::JunctionId;
-
-double reflectance(const Train& train) {
-  const assembly::Assembly& assembly = *train.assembly;
-  const auto& effect = assembly.surfaces[assembly.stations.back().surface].effect;
-  const auto* sensor = std::get_if<assembly::Sensor>(&effect);
-  return sensor != nullptr ? sensor->reflectance : 0.0;
-}
 
 double launched(const RayBlock& block) {
   double power = 0.0;
@@ -213,18 +207,8 @@ private:
 };
 
 TreeSurvey::TreeSurvey(const Train& train, const PathTree& tree, double floor)
-    : m_train(train), m_tree(tree), m_floor(floor), m_reflectance(reflectance(train)),
-      m_coherency(optics::coherency(train.assembly->light.polarization)), m_reader(train) {
-  // The detector's own operator changes nothing. This one reflects beside that: r_s = −√R, r_p = +√R.
-  const std::size_t index = 2 * std::size_t{train.assembly->stations.back().surface};
-  for (const Plan& plan : train.plans) {
-    PlanOp op = plan.ops[index];
-    op.amplitude = AmplitudeKind::ideal;
-    op.reflect_s = op.reflect_p = m_reflectance;
-    op.transmit_s = op.transmit_p = 1.0;
-    m_detectors.push_back(op);
-  }
-}
+    : m_train(train), m_tree(tree), m_floor(floor), m_reflectance(detector_reflectance(train)),
+      m_coherency(optics::coherency(train.assembly->light.polarization)), m_reader(train), m_detectors(reflecting_detectors(train)) {}
 
 TreeFound TreeSurvey::blank(const Group&) const {
   TreeFound found;

@@ -27,6 +27,13 @@ struct GhostField {
   std::optional<GhostSpot> spot;
 };
 
+/// A bounce of a ghost, and what would cure it.
+struct GhostBounce {
+  double reflectance;                       ///< mean over the rays of this path, by arriving power
+  std::optional<double> needed_reflectance; ///< that alone brings the ghosts under their limit; none where
+                                            ///< there is no limit, it is kept, or this alone cannot do it
+};
+
 /// Light that reaches the detector by one path with bounces (contract §5, ghosts).
 struct Ghost {
   std::vector<std::string> bounces; ///< in the order of bouncing
@@ -41,6 +48,15 @@ struct Ghost {
   std::optional<double> fringe_modulation;
   std::optional<double> defocus_mm; ///< paraxial, from the detector to the ghost's image along the axis
   std::vector<GhostField> by_field;
+  std::vector<GhostBounce> cure; ///< per bounce; empty below the paths that are looked at closely
+};
+
+/// The surface whose bounces take part in the largest share of the ghosts.
+struct GhostCulprit {
+  std::string name;
+  double power;                             ///< of all paths that bounce there
+  std::optional<double> reflectance;        ///< there, on the brightest of these paths
+  std::optional<double> needed_reflectance; ///< as for a bounce, all its paths helped at once
 };
 
 /// Light that leaves through the first station by one path.
@@ -80,6 +96,8 @@ struct Ghosts {
   std::uint64_t unlisted_paths = 0;         ///< that bring light and are not in the list
   double unlisted = 0.0;                    ///< their power
   std::vector<ReturnedPath> returned_paths; ///< brightest first
+  std::optional<double> limit;              ///< the file's smallest at_most of `ghosts.total`
+  std::optional<GhostCulprit> culprit;
 };
 
 struct GhostOptions {

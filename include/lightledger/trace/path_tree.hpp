@@ -54,10 +54,11 @@ public:
   /// Of the paths with numbers below this, how many end at the detector.
   [[nodiscard]] PathNumber detected_below(PathNumber number) const;
 
-  /// The path of a number below paths(start(), bounces()), and the meetings at which it bounces.
+  /// The path of a number below paths(start(), bounces()).
   struct Way {
     Path path;
-    std::vector<State> bounces;
+    std::vector<State> states;        ///< per step
+    std::vector<std::size_t> bounces; ///< steps that bounce
   };
   [[nodiscard]] Way way(PathNumber number) const;
 
@@ -91,8 +92,8 @@ private:
   std::vector<Counts> m_counts; ///< per junction, by bounces left
 };
 
-/// What the bounces of a way are called.
-[[nodiscard]] std::vector<std::string> names(const assembly::Assembly& assembly,
-                                             const std::vector<State>& bounces);
+/// What the bounces of a way are called, in their order.
+[[nodiscard]] std::vector<std::string> bounce_names(const assembly::Assembly& assembly,
+                                                    const PathTree::Way& way);
 
 } // namespace lightledger::trace
