@@ -15,4 +15,7 @@ void look_closely(const trace::Train& train, const trace::PathTree& tree, const 
 void find_cures(const assembly::Assembly& assembly, const trace::PathTree& tree,
                 const trace::TracedTree& traced, Ghosts& ghosts);
 
+/// Foci of the beams with at most two bounces, by name.
+[[nodiscard]] std::vector<HotFocus> hot_places(const trace::Train& train, const GhostOptions& options);
+
 } // namespace lightledger::analysis

@@ -118,6 +118,7 @@ GhostsResult ghosts(const Assembly& assembly, const GhostOptions& options) {
   result.ghosts = read(lit, tree, traced, options);
   look_closely(*train, tree, traced, options, *result.ghosts);
   find_cures(lit, tree, traced, *result.ghosts);
+  result.ghosts->foci = hot_places(*train, options);
   result.warnings = warnings(lit, traced);
   return result;
 }

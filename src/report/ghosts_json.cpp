@@ -71,6 +71,22 @@ Json culprit_json(const std::optional<analysis::GhostCulprit>& culprit) {
           {"needed_reflectance", number(culprit->needed_reflectance)}};
 }
 
+Json foci_json(const Ghosts& ghosts) {
+  Json json = Json::array();
+  for (const analysis::HotFocus& focus : ghosts.foci)
+    json.push_back({{"bounces", focus.bounces},
+                    {"field", text_or_null(focus.field)},
+                    {"from", focus.from},
+                    {"to", focus.to},
+                    {"medium", text_or_null(focus.medium)},
+                    {"on", text_or_null(focus.on)},
+                    {"distance_mm", number(focus.distance_mm)},
+                    {"power", number(focus.power)},
+                    {"radius_mm", number(focus.radius_mm)},
+                    {"irradiance_ratio", number(focus.irradiance_ratio)}});
+  return json;
+}
+
 Json returned_json(const Ghosts& ghosts) {
   Json json = Json::array();
   for (const analysis::ReturnedPath& path : ghosts.returned_paths)
@@ -97,6 +113,7 @@ std::string ghosts_json(const Envelope& envelope, const Ghosts& ghosts, bool wit
   json["delivered"] = number(ghosts.delivered);
   json["rays"] = ghosts.rays;
   json["unlisted"] = {{"paths", ghosts.unlisted_paths}, {"power", number(ghosts.unlisted)}};
+  json["foci"] = foci_json(ghosts);
   json["limit"] = number(ghosts.limit);
   json["culprit"] = culprit_json(ghosts.culprit);
   if (with_returned)

@@ -129,6 +129,30 @@ std::string advice(const Ghosts& ghosts) {
   return sentence + share_of_culprit(ghosts);
 }
 
+std::string place(const analysis::HotFocus& focus) {
+  if (focus.on)
+    return "on " + on_one_line(*focus.on);
+  return fmt::format("in {} after {}", on_one_line(*focus.medium), on_one_line(focus.from));
+}
+
+constexpr const char* caution = "Focused and returned beams can damage optics and blind: ask a laser safety "
+                                "officer, and see IEC 60825-1.";
+
+/// Where beams are brighter than what was launched.
+std::string foci_table(const Ghosts& ghosts, const TextStyle& style) {
+  constexpr std::size_t rows = 5;
+  constexpr int figures = 33; ///< columns of all that is not a name
+  const int widest = (style.width - figures) / 2;
+  Table table({{"bounces at", Align::left}, {"focus", Align::left}, {"radius mm"}, {"irradiance ratio"}});
+  for (std::size_t i = 0; i < std::min(rows, ghosts.foci.size()); ++i) {
+    const analysis::HotFocus& focus = ghosts.foci[i];
+    table.add({focus.bounces.empty() ? "-" : names(focus.bounces, widest), shortened(place(focus), widest),
+               quantity(focus.radius_mm), fmt::format("{:.2g}", focus.irradiance_ratio)});
+  }
+  return "\nFoci in or on glass and on surfaces, irradiance relative to the launched beam\n" +
+         table.text(style.emphasis) + wrapped(caution, style.width);
+}
+
 std::string returned_table(const Ghosts& ghosts, std::size_t rows, const TextStyle& style) {
   std::string text =
       fmt::format("\nThrough the front returns {} of the launched power\n", power(ghosts.returned, style));
@@ -156,6 +180,8 @@ std::string ghosts_text(const assembly::Assembly& assembly, const Ghosts& ghosts
   if (const std::string sentence = advice(ghosts); !sentence.empty())
     text += wrapped(sentence, style.width);
   text += wrapped(certainty(ghosts, options.rows), style.width);
+  if (!ghosts.foci.empty())
+    text += foci_table(ghosts, style);
   if (options.returned)
     text += returned_table(ghosts, options.rows, style);
   if (!warnings.empty())

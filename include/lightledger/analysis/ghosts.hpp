@@ -65,6 +65,19 @@ struct ReturnedPath {
   double power; ///< of launched power
 };
 
+/// A place in a medium or on a surface where light draws together and a pulse may damage it.
+struct HotFocus {
+  std::vector<std::string> bounces; ///< so far; none for the intended beam
+  std::optional<std::string> field;
+  std::string from, to;              ///< the stations before and after
+  std::optional<std::string> medium; ///< that it lies in; none on a surface
+  std::optional<std::string> on;     ///< the station whose surface it lies on; none in a medium
+  double distance_mm;                ///< from the station before
+  double power;                      ///< of what was launched from the field
+  double radius_mm;                  ///< √2 · rms, never below λ/(π NA)
+  double irradiance_ratio;           ///< to that of the launched beam
+};
+
 /// The whole tree, delivered light included; adds up to 1.
 struct GhostLedger {
   double detector = 0.0; ///< (1 − reflectance)(delivered + total)
@@ -96,16 +109,17 @@ struct Ghosts {
   std::uint64_t unlisted_paths = 0;         ///< that bring light and are not in the list
   double unlisted = 0.0;                    ///< their power
   std::vector<ReturnedPath> returned_paths; ///< brightest first
+  std::vector<HotFocus> foci;               ///< brightest first
   std::optional<double> limit;              ///< the file's smallest at_most of `ghosts.total`
   std::optional<GhostCulprit> culprit;
 };
 
 struct GhostOptions {
   int bounces = 2;
-  double floor = 1e-12;             ///< beams with a smaller share of launched power are not followed
+  double floor = 1e-12;               ///< beams with a smaller share of launched power are not followed
   std::optional<std::uint64_t> top{}; ///< how many paths to list; none: all, within reason
   std::optional<std::string> field{}; ///< the light of this field alone: its name, or its number from 1
-  int threads = 0;                  ///< 0: as many as the machine has
+  int threads = 0;                    ///< 0: as many as the machine has
 };
 
 struct GhostsResult {
