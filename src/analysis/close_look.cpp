@@ -18,6 +18,7 @@ constexpr std::uint64_t usual_paths = 10;
 constexpr std::uint64_t most_paths = 100;
 constexpr std::uint64_t rays_for_reflectance = 1024; ///< per field and wavelength
 constexpr std::uint64_t rays_for_pixels = 4096;      ///< at least
+constexpr std::uint64_t rays_in_all = 16'384;        ///< at least
 constexpr std::uint64_t most_rays = 65'536;
 
 std::uint64_t rays(const trace::Train& train, const TracedTree& traced, bool pixels) {
@@ -25,7 +26,7 @@ std::uint64_t rays(const trace::Train& train, const TracedTree& traced, bool pix
     return rays_for_reflectance;
   const assembly::Light& light = train.assembly->light;
   const std::uint64_t groups = light.fields.size() * light.wavelengths.size();
-  return std::clamp(std::max(traced.rays, most_rays) / groups, rays_for_pixels, most_rays);
+  return std::clamp(std::max(traced.rays, rays_in_all) / groups, rays_for_pixels, most_rays);
 }
 
 } // namespace

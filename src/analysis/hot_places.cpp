@@ -9,6 +9,7 @@ namespace lightledger::analysis {
 namespace {
 
 constexpr std::size_t most_foci = 20;
+constexpr std::size_t most_looked_at = 500;
 constexpr int most_bounces = 2;
 /// Fainter beams than this do not outshine the launched beam where they come to a focus of any size.
 constexpr double faintest = 1e-9;
@@ -33,13 +34,23 @@ HotFocus named(const trace::Train& train, const trace::Focus& focus) {
   return hot;
 }
 
+/// The same beam in the same place, of whatever field.
+bool same(const HotFocus& a, const HotFocus& b) {
+  return a.bounces == b.bounces && a.on == b.on && a.from == b.from && a.to == b.to;
+}
+
 } // namespace
 
 std::vector<HotFocus> hot_places(const trace::Train& train, const GhostOptions& options) {
   const trace::PathTree tree(*train.assembly, train.routes, std::min(options.bounces, most_bounces));
   std::vector<HotFocus> places;
-  for (const trace::Focus& focus : trace::hot_foci(train, tree, std::max(options.floor, faintest), most_foci))
-    places.push_back(named(train, focus));
+  for (const trace::Focus& focus :
+       trace::hot_foci(train, tree, std::max(options.floor, faintest), most_looked_at)) {
+    HotFocus hot = named(train, focus);
+    const bool known = std::ranges::any_of(places, [&](const HotFocus& place) { return same(place, hot); });
+    if (!known && places.size() < most_foci)
+      places.push_back(std::move(hot));
+  }
   return places;
 }
 

@@ -9,6 +9,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <set>
 
 namespace lightledger::report {
 namespace {
@@ -138,14 +139,16 @@ std::string place(const analysis::HotFocus& focus) {
 constexpr const char* caution = "Focused and returned beams can damage optics and blind: ask a laser safety "
                                 "officer, and see IEC 60825-1.";
 
-/// Where beams are brighter than what was launched.
+/// Where beams are brighter than what was launched; each place once.
 std::string foci_table(const Ghosts& ghosts, const TextStyle& style) {
   constexpr std::size_t rows = 5;
   constexpr int figures = 33; ///< columns of all that is not a name
   const int widest = (style.width - figures) / 2;
   Table table({{"bounces at", Align::left}, {"focus", Align::left}, {"radius mm"}, {"irradiance ratio"}});
-  for (std::size_t i = 0; i < std::min(rows, ghosts.foci.size()); ++i) {
-    const analysis::HotFocus& focus = ghosts.foci[i];
+  std::set<std::string> places;
+  for (const analysis::HotFocus& focus : ghosts.foci) {
+    if (places.size() == rows || !places.insert(place(focus)).second)
+      continue;
     table.add({focus.bounces.empty() ? "-" : names(focus.bounces, widest), shortened(place(focus), widest),
                quantity(focus.radius_mm), fmt::format("{:.2g}", focus.irradiance_ratio)});
   }
