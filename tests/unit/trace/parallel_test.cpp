@@ -1,4 +1,4 @@
-#include "trace/parallel.hpp"
+#include <lightledger/trace/parallel.hpp>
 
 #include <gtest/gtest.h>
 
