@@ -19,7 +19,7 @@ HotFocus named(const trace::Train& train, const trace::Focus& focus) {
   const auto name = [&](trace::StationId station) { return assembly.stations[station].name; };
   HotFocus hot;
   for (const trace::State& state : focus.bounces)
-    hot.bounces.push_back(name(state.visit));
+    hot.bounces.push_back(trace::Routes::bounce_name(assembly, state));
   hot.field = assembly.light.fields[focus.field].name;
   hot.to = name(focus.to);
   hot.from = focus.from ? name(*focus.from) : hot.to;

@@ -189,6 +189,8 @@ private:
   }
   [[nodiscard]] StationId came_from(const Run& run) const {
     const State state = run.junction.state;
+    if (state.face != Face::front)
+      return state.visit;
     return state.heading == Heading::along ? state.visit - 1 : state.visit + 1;
   }
   [[nodiscard]] bool gas(assembly::MediumId medium) const {

@@ -6,7 +6,11 @@ namespace lightledger::trace {
 namespace {
 
 /// Along the axis, of the run of light that arrives in a state.
-double gap_before(const Bench& bench, State state) {
+double gap_before(const Train& train, State state) {
+  const Bench& bench = train.bench;
+  const assembly::Assembly& assembly = *train.assembly;
+  if (state.face != Face::front)
+    return assembly.surfaces[assembly.stations[state.visit].surface].rear->thickness;
   return state.heading == Heading::along ? bench.gap[state.visit - 1] : bench.gap[state.visit];
 }
 
@@ -17,7 +21,7 @@ std::optional<double> paraxial_image(const Train& train, const PathTree::Way& wa
   ParaxialRay ray(assembly);
   for (std::size_t i = 0; i < way.states.size(); ++i) {
     if (i > 0)
-      ray.advance(gap_before(train.bench, way.states[i]));
+      ray.advance(gap_before(train, way.states[i]));
     if (i + 1 == way.states.size())
       break;
     const Path::Step& step = way.path.steps[i];

@@ -11,13 +11,12 @@ constexpr PathTree::Exit ends(End end) {
   return {false, 0, 0, end};
 }
 
-/// Whether light reflected at a meeting bounces, rather than does what the train is for.
+/// Whether light reflected at a meeting bounces, and does so with any power.
 bool costs_a_bounce(const Assembly& assembly, State state) {
-  const assembly::Station& station = assembly.stations[state.visit];
-  if (const auto* sensor = std::get_if<assembly::Sensor>(&assembly.surfaces[station.surface].effect))
+  const auto& effect = assembly.surfaces[assembly.stations[state.visit].surface].effect;
+  if (const auto* sensor = std::get_if<assembly::Sensor>(&effect))
     return sensor->reflectance > 0.0;
-  return station.intended == Act::pass &&
-         std::holds_alternative<assembly::Interface>(assembly.surfaces[station.surface].effect);
+  return std::holds_alternative<assembly::Interface>(effect) && Routes::bounces(assembly, state);
 }
 
 } // namespace
@@ -50,7 +49,7 @@ void PathTree::connect(const Assembly& assembly, const Routes& routes, JunctionI
   const Act intended = assembly.stations[state.visit].intended;
   junction.op = routes.op(assembly, state);
   junction.detects = intended == Act::detect;
-  junction.main_bounces = intended == Act::bounce;
+  junction.main_bounces = intended == Act::bounce && state.face == Face::front;
   junction.side_bounces = costs_a_bounce(assembly, state);
   junction.main = junction.detects
                       ? ends(End::detected)
@@ -161,7 +160,7 @@ PathTree::Way PathTree::way(PathNumber number) const {
 std::vector<std::string> bounce_names(const Assembly& assembly, const PathTree::Way& way) {
   std::vector<std::string> names;
   for (const std::size_t step : way.bounces)
-    names.push_back(assembly.stations[way.states[step].visit].name);
+    names.push_back(Routes::bounce_name(assembly, way.states[step]));
   return names;
 }
 
