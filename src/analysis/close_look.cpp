@@ -34,14 +34,20 @@ std::uint64_t rays(const trace::Train& train, const TracedTree& traced, bool pix
 void look_closely(const trace::Train& train, const PathTree& tree, const TracedTree& traced,
                   const GhostOptions& options, Ghosts& ghosts) {
   const auto grid = pixel_grid(*train.assembly);
-  const std::uint64_t count = rays(train, traced, grid.has_value());
+  const std::uint64_t count = rays(train, traced, grid || options.maps);
   const std::vector<PathTree::PathNumber> numbers = brightest(tree, traced.total.paths);
   for (std::size_t i = 0; i < ghosts.paths.size(); ++i)
     ghosts.paths[i].defocus_mm = trace::paraxial_image(train, tree.way(numbers[i]));
 
   std::optional<double> image_peak;
-  if (grid && !ghosts.paths.empty())
-    image_peak = brightest_pixel(*grid, trace::land(train, train.path, count, options.threads).rays);
+  std::array<double, 4> area{};
+  if (grid || options.maps) {
+    const std::vector<trace::Landing> image = trace::land(train, train.path, count, options.threads).rays;
+    image_peak = grid ? brightest_pixel(*grid, image) : std::nullopt;
+    area = map_area(*train.assembly, image);
+    if (options.maps)
+      ghosts.image_map = light_map(area, image);
+  }
   const std::size_t closely = std::min<std::uint64_t>(ghosts.paths.size(), options.top.value_or(usual_paths));
   for (std::size_t i = 0; i < std::min<std::size_t>(closely, most_paths); ++i) {
     Ghost& ghost = ghosts.paths[i];
@@ -52,6 +58,8 @@ void look_closely(const trace::Train& train, const PathTree& tree, const TracedT
     const auto peak = grid ? brightest_pixel(*grid, landings.rays) : std::nullopt;
     if (peak && image_peak)
       ghost.peak_ratio = *peak / *image_peak;
+    if (options.maps)
+      ghosts.maps.push_back(light_map(area, landings.rays));
   }
 }
 

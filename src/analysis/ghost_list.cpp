@@ -43,7 +43,10 @@ Ghost ghost(const Assembly& assembly, const PathTree& tree, const TracedTree& tr
             PathTree::PathNumber number) {
   const PathSums& sums = *traced.total.paths.find(number);
   Ghost ghost;
-  ghost.bounces = trace::bounce_names(assembly, tree.way(number));
+  const PathTree::Way way = tree.way(number);
+  ghost.bounces = trace::bounce_names(assembly, way);
+  for (const std::size_t step : way.bounces)
+    ghost.stations.push_back(std::size_t{way.states[step].visit} + 1);
   ghost.power = sums.power;
   if (!traced.path_errors.empty())
     ghost.uncertainty = traced.path_errors[traced.total.paths.place(number)];

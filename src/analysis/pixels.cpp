@@ -98,4 +98,38 @@ std::optional<double> brightest_pixel(const PixelGrid& grid, const std::vector<t
   }
 }
 
+std::array<double, 4> map_area(const assembly::Assembly& assembly, const std::vector<trace::Landing>& rays) {
+  const assembly::Clear& clear = assembly.surfaces[assembly.stations.back().surface].clear;
+  if (const auto half = std::visit(HalfExtents{}, clear.opening))
+    return {clear.at[0] - (*half)[0], clear.at[0] + (*half)[0], clear.at[1] - (*half)[1],
+            clear.at[1] + (*half)[1]};
+  constexpr double least_extent = 1e-6;
+  std::array<double, 4> area{-least_extent, least_extent, -least_extent, least_extent};
+  for (const trace::Landing& ray : rays)
+    area = {std::min(area[0], ray.x), std::max(area[1], ray.x), std::min(area[2], ray.y),
+            std::max(area[3], ray.y)};
+  return area;
+}
+
+DetectorMap light_map(const std::array<double, 4>& area, const std::vector<trace::Landing>& rays) {
+  constexpr double rays_per_cell = 8.0;
+  constexpr double fewest = 24.0;
+  constexpr double most = 256.0;
+  const double width = area[1] - area[0];
+  const double height = area[3] - area[2];
+  const double cells =
+      std::clamp(static_cast<double>(rays.size()) / rays_per_cell, fewest * fewest, most * most);
+  const auto count = [&](double aspect) {
+    return static_cast<std::size_t>(std::clamp(std::round(std::sqrt(cells * aspect)), 1.0, 4.0 * most));
+  };
+  DetectorMap map{area[0], area[1], area[2], area[3], count(width / height), count(height / width), {}};
+  const double pitch_x = width / static_cast<double>(map.columns);
+  const double pitch_y = height / static_cast<double>(map.rows);
+  map.per_mm2.assign(map.columns * map.rows, 0.0);
+  for (const trace::Landing& ray : rays)
+    map.per_mm2[cell(ray.y, area[2], pitch_y, map.rows) * map.columns +
+                cell(ray.x, area[0], pitch_x, map.columns)] += ray.power / (pitch_x * pitch_y);
+  return map;
+}
+
 } // namespace lightledger::analysis

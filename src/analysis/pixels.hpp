@@ -1,8 +1,10 @@
 #pragma once
 
+#include <lightledger/analysis/ghosts.hpp>
 #include <lightledger/assembly/assembly.hpp>
 #include <lightledger/trace/landings.hpp>
 
+#include <array>
 #include <cstdint>
 #include <optional>
 #include <vector>
@@ -23,5 +25,14 @@ struct PixelGrid {
 /// … share their light evenly until one is hit by as many; none where there are fewer rays in all.
 [[nodiscard]] std::optional<double> brightest_pixel(const PixelGrid& grid,
                                                     const std::vector<trace::Landing>& rays);
+
+/// The area that maps of the light show: about the detector's clear area, or where it has no edge about the
+/// rays.
+[[nodiscard]] std::array<double, 4> map_area(const assembly::Assembly& assembly,
+                                             const std::vector<trace::Landing>& rays);
+
+/// The light of rays on an area given by x from, x to, y from, y to; cells as fine as the rays allow.
+[[nodiscard]] DetectorMap light_map(const std::array<double, 4>& area,
+                                    const std::vector<trace::Landing>& rays);
 
 } // namespace lightledger::analysis

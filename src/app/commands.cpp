@@ -6,7 +6,7 @@
 namespace lightledger::app {
 namespace {
 
-constexpr std::array<std::string_view, 3> planned{"polarization", "draw", "report"};
+constexpr std::array<std::string_view, 2> planned{"draw", "report"};
 
 } // namespace
 
@@ -18,6 +18,9 @@ const std::vector<CommandInfo>& commands() {
        "lightledger budget systems/fog-bank-lidar.yaml --json -"},
       {Command::ghosts, "ghosts", "FILE", "Which unintended reflections reach the detector, and how bright?",
        "lightledger ghosts systems/tide-pool-camera.yaml --top 5"},
+      {Command::polarization, "polarization", "FILE",
+       "What happens to the state of polarization, and which station does it?",
+       "lightledger polarization systems/relay-terminal.yaml --against wavelength --maps maps"},
       {Command::coating, "coating", "FILE NAME", "What does a coating do against wavelength and angle?",
        "lightledger coating systems/fog-bank-lidar.yaml lens_ar --wavelengths 500:560:20 --angles 0:30:15"},
       {Command::media, "media", "[NAME]", "Which media are known, and what are n and kappa of one?",

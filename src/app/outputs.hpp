@@ -1,8 +1,11 @@
 #pragma once
 
 #include "answer.hpp"
+#include "folder.hpp"
 #include "options.hpp"
 #include "output.hpp"
+
+#include <lightledger/assembly/diagnostics.hpp>
 
 #include <optional>
 
@@ -18,9 +21,11 @@ public:
   void write(const Answer& answer);
 
 private:
+  void open_folder(const char* option, const std::optional<std::string>& path, assembly::Faults& faults);
   [[nodiscard]] bool stdout_is_taken() const;
 
   std::optional<Output> m_json, m_csv;
+  std::optional<Folder> m_folder;
 };
 
 } // namespace lightledger::app

@@ -75,6 +75,7 @@ private:
   void read_isa(const std::vector<std::string>& values);
   void read_ghosts(const Words& words);
   void read_split(const std::vector<std::string>& values);
+  void read_against(const std::vector<std::string>& values);
   std::vector<double> read_steps(const char* option, const std::vector<std::string>& values);
 
   /// The value of an option that may be given once.
@@ -100,6 +101,8 @@ Options Reader::read(const Words& words) {
   m_options.allow_outside = words.allow_outside;
   read_ghosts(words);
   read_split(words.split);
+  read_against(words.against);
+  m_options.maps = single("--maps", words.maps);
   m_options.incident = single("--incident", words.incident);
   m_options.substrate = single("--substrate", words.substrate);
   m_options.wavelengths_nm = read_steps("--wavelengths", words.wavelengths);
@@ -236,6 +239,19 @@ void Reader::read_split(const std::vector<std::string>& values) {
   else
     note(fmt::format("--split '{}' is no way to split", *word), "wavelength, field",
          std::string(assembly::nearest(*word, {"wavelength", "field"})));
+}
+
+void Reader::read_against(const std::vector<std::string>& values) {
+  const std::optional<std::string> word = single("--against", values);
+  if (!word)
+    return;
+  if (*word == "wavelength")
+    m_options.against = analysis::Against::wavelength;
+  else if (*word == "angle")
+    m_options.against = analysis::Against::angle;
+  else
+    note(fmt::format("--against '{}' is nothing to set the figures against", *word), "wavelength, angle",
+         std::string(assembly::nearest(*word, {"wavelength", "angle"})));
 }
 
 std::vector<double> Reader::read_steps(const char* option, const std::vector<std::string>& values) {

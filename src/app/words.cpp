@@ -39,6 +39,10 @@ const std::vector<OptionInfo>& own_options(Command command) {
   static const std::vector<OptionInfo> none;
   static const std::vector<OptionInfo> budget{
       {"--split", "wavelength|field", "a ledger for each wavelength or field as well", &Words::split}};
+  static const std::vector<OptionInfo> polarization{
+      {"--against", "wavelength|angle", "a table against the wavelength or the field as well",
+       &Words::against},
+      {"--maps", "FOLDER", "maps over the pupil, and the table's charts, into a folder", &Words::maps}};
   static const OptionInfo wavelengths{"--wavelengths", "START:STOP:STEP", "in nm, or one number",
                                       &Words::wavelengths};
   static const std::vector<OptionInfo> coating{
@@ -60,6 +64,8 @@ const std::vector<OptionInfo>& own_options(Command command) {
     return budget;
   case Command::ghosts:
     return ghosts;
+  case Command::polarization:
+    return polarization;
   case Command::coating:
     return coating;
   case Command::media:

@@ -57,6 +57,7 @@ Json ghost_json(const Ghost& ghost) {
           {"dop", number(ghost.dop)},
           {"fringe_modulation", number(ghost.fringe_modulation)},
           {"by_field", by_field_json(ghost)},
+          {"stations", ghost.stations},
           {"defocus_mm", number(ghost.defocus_mm)},
           {"reflectances", std::move(reflectances)},
           {"needed_reflectances", std::move(needed)}};

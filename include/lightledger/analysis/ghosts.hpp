@@ -36,8 +36,9 @@ struct GhostBounce {
 
 /// Light that reaches the detector by one path with bounces (contract §5, ghosts).
 struct Ghost {
-  std::vector<std::string> bounces; ///< in the order of bouncing
-  double power;                     ///< of launched power, before the detector's reflectance
+  std::vector<std::string> bounces;  ///< in the order of bouncing
+  std::vector<std::size_t> stations; ///< their numbers in the train, from 1
+  double power;                      ///< of launched power, before the detector's reflectance
   std::optional<double> uncertainty;
   std::optional<double> relative_power; ///< over delivered
   GhostSpot spot;
@@ -57,6 +58,13 @@ struct GhostCulprit {
   double power;                             ///< of all paths that bounce there
   std::optional<double> reflectance;        ///< there, on the brightest of these paths
   std::optional<double> needed_reflectance; ///< as for a bounce, all its paths helped at once
+};
+
+/// Light on the detector, per launched power and area, over a rectangle of its own x, y.
+struct DetectorMap {
+  double x_from, x_to, y_from, y_to; ///< mm
+  std::size_t columns, rows;
+  std::vector<double> per_mm2; ///< row by row, the row of least y first
 };
 
 /// Light that leaves through the first station by one path.
@@ -109,8 +117,11 @@ struct Ghosts {
   std::uint64_t unlisted_paths = 0;         ///< that bring light and are not in the list
   double unlisted = 0.0;                    ///< their power
   std::vector<ReturnedPath> returned_paths; ///< brightest first
-  std::vector<HotFocus> foci;               ///< brightest first
-  std::optional<double> limit;              ///< the file's smallest at_most of `ghosts.total`
+  /// Where they are asked for: of the image, and of each ghost that was looked at closely.
+  std::optional<DetectorMap> image_map;
+  std::vector<DetectorMap> maps;
+  std::vector<HotFocus> foci;  ///< brightest first
+  std::optional<double> limit; ///< the file's smallest at_most of `ghosts.total`
   std::optional<GhostCulprit> culprit;
 };
 
@@ -119,6 +130,7 @@ struct GhostOptions {
   double floor = 1e-12;               ///< beams with a smaller share of launched power are not followed
   std::optional<std::uint64_t> top{}; ///< how many paths to list; none: all, within reason
   std::optional<std::string> field{}; ///< the light of this field alone: its name, or its number from 1
+  bool maps = false;                  ///< make the maps of light on the detector
   int threads = 0;                    ///< 0: as many as the machine has
 };
 

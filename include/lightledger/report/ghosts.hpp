@@ -3,10 +3,12 @@
 #include <lightledger/analysis/ghosts.hpp>
 #include <lightledger/assembly/assembly.hpp>
 #include <lightledger/report/envelope.hpp>
+#include <lightledger/report/named_file.hpp>
 #include <lightledger/report/text_style.hpp>
 
 #include <chrono>
 #include <string>
+#include <vector>
 
 namespace lightledger::report {
 
@@ -29,5 +31,8 @@ struct GhostsTextOptions {
                                       const std::vector<std::string>& warnings,
                                       std::chrono::duration<double> elapsed, const GhostsTextOptions& options,
                                       const TextStyle& style);
+
+/// Maps as PNG: `image.png`, `ghost-01.png` and so on, and `ghosts.png`, the sum of these ghosts.
+[[nodiscard]] std::vector<NamedFile> ghosts_files(const analysis::Ghosts& ghosts);
 
 } // namespace lightledger::report
