@@ -1,13 +1,16 @@
+// This order: the list of sets, then what includes this file once a set, then the passes.
+// clang-format off
 #include "targets.hpp"
 
 #undef HWY_TARGET_INCLUDE
 #define HWY_TARGET_INCLUDE "trace/kernel/kernel.cpp"
+#include <hwy/foreach_target.h>
+
 #include "arrive-inl.hpp"
 #include "kernel.hpp"
 #include "respond-inl.hpp"
 #include "settle-inl.hpp"
-
-#include <hwy/foreach_target.h>
+// clang-format on
 
 HWY_BEFORE_NAMESPACE();
 namespace lightledger::trace::HWY_NAMESPACE {
