@@ -80,6 +80,7 @@ Ghosts read(const Assembly& assembly, const PathTree& tree, const TracedTree& tr
   ghosts.total = traced.total.ghosts;
   ghosts.uncertainty = traced.ghosts_error;
   ghosts.returned = traced.total.ledger.returned;
+  ghosts.reflectance = traced.total.reflectance;
   ghosts.returned_uncertainty = traced.returned_error;
   ghosts.not_followed = traced.total.ledger.not_followed;
   ghosts.ledger = ledger(traced.total);

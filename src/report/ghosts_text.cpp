@@ -70,12 +70,14 @@ std::string total_line(const Ghosts& ghosts, std::chrono::duration<double> elaps
       error_size(std::abs(ghosts.closure_error)), count(ghosts.rays), duration(elapsed.count()));
 }
 
-/// What is shown of the paths, and what all others bring.
+/// What is shown of the paths, and what all others bring. What the detector reflects may come to it once more,
+/// so that only its share that stays bounds what arrives.
 std::string certainty(const Ghosts& ghosts, std::size_t shown) {
   double listed = 0.0;
   for (std::size_t i = 0; i < std::min(shown, ghosts.paths.size()); ++i)
     listed += ghosts.paths[i].power;
-  const double rest = std::max(ghosts.total - listed, 0.0) + ghosts.not_followed;
+  const double stays = std::max(1.0 - ghosts.reflectance, 1e-3);
+  const double rest = std::max(ghosts.total - listed, 0.0) + ghosts.not_followed / stays;
   std::string sentence = fmt::format("Of {} paths of at most {} bounces, {} bring light. Within the train as "
                                      "written, for the rays sampled",
                                      count(ghosts.paths_considered), ghosts.bounces,

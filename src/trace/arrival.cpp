@@ -21,12 +21,14 @@ Vector turned(const double (&rotation)[3][3], const double (&v)[3][RayBlock::lan
   return {component(rotation[0]), component(rotation[1]), component(rotation[2])};
 }
 
-/// The axis x carried by the smallest rotation of the axis z onto d; of light against the axis, by that of
-/// −z.
+/// The axis x carried by the smallest rotation of the axis z onto d; any transverse vector for light that runs
+/// straight against z.
 Vector double_pole(const Vector& d) {
-  const double side = std::copysign(1.0, d.z);
-  const double pull = d.x / (1.0 + std::abs(d.z));
-  return {1.0 - pull * d.x, -pull * d.y, -side * d.x};
+  constexpr double opposite = 1e-15;
+  if (1.0 + d.z < opposite)
+    return {1.0, 0.0, 0.0};
+  const double pull = d.x / (1.0 + d.z);
+  return {1.0 - pull * d.x, -pull * d.y, -d.x};
 }
 
 /// A row of J with the coherency matrix of the launched light: (row Φ), real and imaginary parts by column.

@@ -109,6 +109,7 @@ struct Ghosts {
   std::optional<double> uncertainty;  ///< standard error of `total`; none for patterns that give none
   double returned = 0.0;
   std::optional<double> returned_uncertainty;
+  double reflectance = 0.0;  ///< of the detector
   double not_followed = 0.0; ///< bounds what any path not traced could bring
   GhostLedger ledger;
   double closure_error = 0.0;
