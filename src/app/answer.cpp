@@ -13,6 +13,7 @@
 #include <lightledger/report/budget.hpp>
 #include <lightledger/report/check.hpp>
 #include <lightledger/report/coating.hpp>
+#include <lightledger/report/ghosts.hpp>
 #include <lightledger/report/media.hpp>
 #include <lightledger/report/polarization.hpp>
 
@@ -92,6 +93,32 @@ Answer answer_budget(const Options& options, const Input& input) {
         return report::budget_text(*input.assembly, *result.budget, remedies, envelope.warnings, elapsed,
                                    style_of(options));
       });
+}
+
+Answer answer_ghosts(const Options& options, const Input& input) {
+  analysis::GhostOptions wanted = options.ghosts;
+  wanted.threads = options.threads;
+  wanted.maps = options.images.has_value();
+  const auto start = std::chrono::steady_clock::now();
+  const analysis::GhostsResult result = analysis::ghosts(*input.assembly, wanted);
+  const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
+  refuse_file(result.faults, input);
+
+  const report::Envelope envelope = envelope_of(options, input, joined(input, result.warnings));
+  report::GhostsTextOptions shown;
+  shown.returned = options.returned;
+  if (wanted.top)
+    shown.rows = *wanted.top;
+  Answer answer = written(
+      options, [&] { return report::ghosts_json(envelope, *result.ghosts, options.returned); },
+      [&] { return report::ghosts_csv(*result.ghosts); },
+      [&] {
+        return report::ghosts_text(*input.assembly, *result.ghosts, envelope.warnings, elapsed, shown,
+                                   style_of(options));
+      });
+  if (options.images)
+    answer.files = report::ghosts_files(*result.ghosts);
+  return answer;
 }
 
 Answer answer_check(const Options& options, const Input& input) {
@@ -189,6 +216,8 @@ Answer answer(const Options& options, const Input& input) {
     return answer_budget(options, input);
   case Command::check:
     return answer_check(options, input);
+  case Command::ghosts:
+    return answer_ghosts(options, input);
   case Command::polarization:
     return answer_polarization(options, input);
   case Command::coating:

@@ -3,7 +3,7 @@
 #include "options.hpp"
 
 #include <lightledger/assembly/assembly.hpp>
-#include <lightledger/report/polarization.hpp>
+#include <lightledger/report/named_file.hpp>
 
 #include <optional>
 #include <string>

@@ -6,7 +6,7 @@
 namespace lightledger::app {
 namespace {
 
-constexpr std::array<std::string_view, 3> planned{"ghosts", "draw", "report"};
+constexpr std::array<std::string_view, 2> planned{"draw", "report"};
 
 } // namespace
 
@@ -16,6 +16,8 @@ const std::vector<CommandInfo>& commands() {
        "lightledger check systems/fog-bank-lidar.yaml"},
       {Command::budget, "budget", "FILE", "How much light arrives, and where did the rest go?",
        "lightledger budget systems/fog-bank-lidar.yaml --json -"},
+      {Command::ghosts, "ghosts", "FILE", "Which unintended reflections reach the detector, and how bright?",
+       "lightledger ghosts systems/tide-pool-camera.yaml --top 5"},
       {Command::polarization, "polarization", "FILE",
        "What becomes of the polarization, and by which station?",
        "lightledger polarization systems/relay-terminal.yaml --against wavelength --maps maps"},

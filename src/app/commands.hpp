@@ -7,7 +7,7 @@
 
 namespace lightledger::app {
 
-enum class Command { check, budget, polarization, coating, media };
+enum class Command { check, budget, ghosts, polarization, coating, media };
 
 /// A command as the user sees it.
 struct CommandInfo {

@@ -1,6 +1,6 @@
 #pragma once
 
-#include <lightledger/report/polarization.hpp>
+#include <lightledger/report/named_file.hpp>
 
 #include <filesystem>
 #include <string>

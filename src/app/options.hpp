@@ -3,6 +3,7 @@
 #include "commands.hpp"
 
 #include <lightledger/analysis/budget.hpp>
+#include <lightledger/analysis/ghosts.hpp>
 #include <lightledger/analysis/polarization.hpp>
 #include <lightledger/assembly/load.hpp>
 
@@ -26,6 +27,9 @@ struct Options {
   bool allow_outside = false; ///< measured curves may lie outside the assembly file's folder
 
   analysis::Split split = analysis::Split::none;
+  analysis::GhostOptions ghosts;
+  bool returned = false;             ///< ghosts: list what leaves through the front too
+  std::optional<std::string> images; ///< the folder for pictures
   analysis::Against against = analysis::Against::nothing;
   std::optional<std::string> maps; ///< a folder
   std::optional<std::string> incident, substrate;

@@ -44,21 +44,26 @@ Outputs::Outputs(const Options& options) {
   open(m_csv, "--csv", options.csv, faults);
   keep_input("--json", m_json, options, faults);
   keep_input("--csv", m_csv, options, faults);
-  try {
-    if (options.maps)
-      m_folder.emplace(*options.maps);
-  } catch (const std::system_error& error) {
-    faults.add(
-        {{},
-         fmt::format("--maps: '{}' is no folder to write into: {}", *options.maps, error.code().message()),
-         {},
-         {}});
-  }
+  open_folder("--maps", options.maps, faults);
+  open_folder("--images", options.images, faults);
   if (m_json && m_csv && m_json->same_place(*m_csv))
     faults.add({{}, "--json and --csv go to the same place", "two different paths", {}});
   if (!faults.none())
     throw InputError(assembly::describe(faults, "lightledger", "") + command_usage(info(options.command)) +
                      '\n');
+}
+
+void Outputs::open_folder(const char* option, const std::optional<std::string>& path, Faults& faults) {
+  if (!path)
+    return;
+  try {
+    m_folder.emplace(*path);
+  } catch (const std::system_error& error) {
+    faults.add({{},
+                fmt::format("{}: '{}' is no folder to write into: {}", option, *path, error.code().message()),
+                {},
+                {}});
+  }
 }
 
 bool Outputs::stdout_is_taken() const {

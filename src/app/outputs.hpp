@@ -5,6 +5,8 @@
 #include "options.hpp"
 #include "output.hpp"
 
+#include <lightledger/assembly/diagnostics.hpp>
+
 #include <optional>
 
 namespace lightledger::app {
@@ -19,6 +21,7 @@ public:
   void write(const Answer& answer);
 
 private:
+  void open_folder(const char* option, const std::optional<std::string>& path, assembly::Faults& faults);
   [[nodiscard]] bool stdout_is_taken() const;
 
   std::optional<Output> m_json, m_csv;

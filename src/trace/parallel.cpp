@@ -2,6 +2,8 @@
 
 #include <lightledger/trace/parallel.hpp>
 
+#include "handover.hpp"
+
 #include <tbb/global_control.h>
 #include <tbb/parallel_for.h>
 #include <tbb/task_arena.h>

@@ -3,6 +3,7 @@
 #include <lightledger/analysis/polarization.hpp>
 #include <lightledger/assembly/assembly.hpp>
 #include <lightledger/report/envelope.hpp>
+#include <lightledger/report/named_file.hpp>
 #include <lightledger/report/text_style.hpp>
 
 #include <chrono>
@@ -25,12 +26,6 @@ namespace lightledger::report {
                                             const analysis::Polarization& polarization,
                                             const std::vector<std::string>& warnings,
                                             std::chrono::duration<double> elapsed, const TextStyle& style);
-
-/// A document to be written into a folder.
-struct NamedFile {
-  std::string name;
-  std::string bytes;
-};
 
 /// The maps of each field as PNG, all of them as `pupil.csv`, and a table against something as CSV and SVG.
 [[nodiscard]] std::vector<NamedFile> polarization_files(const assembly::Assembly& assembly,

@@ -2,6 +2,7 @@
 
 #include <lightledger/assembly/assembly.hpp>
 
+#include <compare>
 #include <cstdint>
 #include <string>
 #include <utility>
@@ -27,7 +28,7 @@ struct State {
   Heading heading;
   Face face = Face::front;
 
-  friend bool operator==(const State&, const State&) = default;
+  friend auto operator<=>(const State&, const State&) = default;
 };
 
 /// Where light ends that meets no further surface of the train.

@@ -1,17 +1,17 @@
+// This order: the list of sets, then what includes this file once a set, then the passes.
+// clang-format off
 #include "targets.hpp"
 
 #undef HWY_TARGET_INCLUDE
 #define HWY_TARGET_INCLUDE "trace/kernel/kernel.cpp"
-// Reads this file once for each of the other instruction sets, before what the last one needs.
-// clang-format off
 #include <hwy/foreach_target.h>
-// clang-format on
 
 #include "arrive-inl.hpp"
 #include "kernel.hpp"
 #include "launch-inl.hpp"
 #include "respond-inl.hpp"
 #include "settle-inl.hpp"
+// clang-format on
 
 HWY_BEFORE_NAMESPACE();
 namespace lightledger::trace::HWY_NAMESPACE {

@@ -105,7 +105,7 @@ TEST(Requirements, OfALaterCommandCannotBeTold) {
   EXPECT_EQ(judgement.verdicts[0].met, std::nullopt);
   EXPECT_THAT(
       judgement.warnings,
-      ElementsAre("ghosts.total cannot be told: its analysis is not available in this version"));
+      ElementsAre("ghosts.total cannot be told: its analysis was not made"));
   EXPECT_FALSE(judgement.all_met());
 }
 
