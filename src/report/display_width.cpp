@@ -1,5 +1,7 @@
 #include "display_width.hpp"
 
+#include "utf8.hpp"
+
 #include <algorithm>
 #include <array>
 #include <cstddef>
@@ -47,34 +49,6 @@ constexpr std::array<Span, 13> double_width{{{0x1100, 0x115F},
 bool holds(std::span<const Span> spans, char32_t character) {
   return std::ranges::any_of(
       spans, [=](const Span& span) { return span.first <= character && character <= span.last; });
-}
-
-struct Character {
-  char32_t code;
-  std::size_t bytes;
-};
-
-std::size_t sequence_length(unsigned char lead) {
-  if (lead >= 0xF0 && lead < 0xF8)
-    return 4;
-  if (lead >= 0xE0 && lead < 0xF0)
-    return 3;
-  return lead >= 0xC0 && lead < 0xE0 ? 2 : 1;
-}
-
-/// The first character of text that is not empty; a byte out of place stands for itself.
-Character first_character(std::string_view text) {
-  const auto byte = [&](std::size_t i) { return static_cast<unsigned char>(text[i]); };
-  const std::size_t length = sequence_length(byte(0));
-  if (length == 1 || length > text.size())
-    return {byte(0), 1};
-  char32_t code = byte(0) & (0xFFU >> (length + 1));
-  for (std::size_t i = 1; i < length; ++i) {
-    if ((byte(i) & 0xC0U) != 0x80U)
-      return {byte(0), 1};
-    code = (code << 6U) | (byte(i) & 0x3FU);
-  }
-  return {code, length};
 }
 
 int columns(char32_t character) {
