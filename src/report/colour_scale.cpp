@@ -8,6 +8,8 @@
 namespace lightledger::report {
 namespace {
 
+/// Greater magnitudes are shown as this one, so that differences of two are finite.
+constexpr double most_magnitude = 1e300;
 constexpr int most_decades = 9;
 /// A scale of positive values starts at zero where the least is below this share of the greatest.
 constexpr double near_zero = 0.3;
@@ -21,8 +23,8 @@ Extremes extremes(std::span<const double> values) {
   for (const double value : values) {
     if (!std::isfinite(value))
       continue;
-    found.least = std::min(found.least, value);
-    found.greatest = std::max(found.greatest, value);
+    found.least = std::max(std::min(found.least, value), -most_magnitude);
+    found.greatest = std::min(std::max(found.greatest, value), most_magnitude);
     if (value > 0.0)
       found.least_positive = std::min(found.least_positive, value);
   }
@@ -93,12 +95,14 @@ ColourScale::ColourScale(Scale scale, std::span<const double> values)
     : m_scale(scale), m_range(range_of(scale, extremes(values))), m_map(&map_of(scale)) {}
 
 double ColourScale::place(double value) const {
-  if (m_scale == Scale::logarithmic) {
-    const double inside = std::clamp(value, m_range.from, m_range.to);
-    return std::log(inside / m_range.from) / std::log(m_range.to / m_range.from);
+  if (m_scale == Scale::cyclic) {
+    const double turns = (value - m_range.from) / m_range.length();
+    return turns - std::floor(turns);
   }
-  const double place = (value - m_range.from) / m_range.length();
-  return m_scale == Scale::cyclic ? place - std::floor(place) : place;
+  const double inside = std::clamp(value, m_range.from, m_range.to);
+  if (m_scale == Scale::logarithmic)
+    return std::log(inside / m_range.from) / std::log(m_range.to / m_range.from);
+  return (inside - m_range.from) / m_range.length();
 }
 
 std::vector<Tick> ColourScale::ticks(int about) const {

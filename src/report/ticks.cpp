@@ -35,7 +35,7 @@ std::string power_label(int exponent) {
 
 Interval drawable(Interval interval) {
   const double magnitude = std::max(std::abs(interval.from), std::abs(interval.to));
-  if (!std::isfinite(interval.from) || !std::isfinite(interval.to) || magnitude > 1e300)
+  if (!std::isfinite(interval.from) || !std::isfinite(interval.to) || magnitude > 1.5e300)
     return {0.0, 1.0};
   if (interval.length() > 1e-12 * magnitude && interval.length() > 1e-300)
     return interval;

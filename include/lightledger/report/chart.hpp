@@ -16,7 +16,7 @@ struct ChartAxis {
   std::string title;
   std::string unit; ///< empty: none is written
   bool logarithmic = false;
-  std::optional<double> from, to; ///< none: what the series need
+  std::optional<double> from{}, to{}; ///< none: what the series need
 };
 
 /// A thin line across the whole chart with its words, as a limit or the light's wavelength.
