@@ -125,7 +125,8 @@ BudgetResult budget(const Assembly& assembly, const BudgetOptions& options) {
     return result;
   const Traced traced = trace::trace(*train, {.threads = options.threads});
   if (traced.total.launched <= 0.0) {
-    const assembly::Mark mark = assembly.document ? assembly.document->locate("light.rays") : assembly::Mark{};
+    const assembly::Mark mark =
+        assembly.document ? assembly.document->locate("light.rays") : assembly::Mark{};
     result.faults.add({mark, "the pattern of rays puts no light on the beam", "a finer pattern", ""});
     return result;
   }

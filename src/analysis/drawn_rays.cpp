@@ -12,16 +12,20 @@ using Eigen::Vector2d;
 using Eigen::Vector3d;
 using trace::RayBlock;
 
-/// Places across the beam, relative to its radius, that show a field without crowding the picture.
+/// Places across the beam, relative to its radius, that show a field without crowding the picture; the
+/// outermost lie just inside the edge, where rounding does not decide over them.
 std::vector<double> places(std::size_t fields, double hole) {
+  constexpr double edge = 0.998;
   const int a_side = fields == 1 ? 3 : fields <= 3 ? 2 : 1;
+  const double inner = hole > 0.0 ? hole + (1.0 - edge) : 0.0;
   std::vector<double> found;
   for (int i = -a_side; i <= a_side; ++i) {
     if (i == 0 && hole > 0.0)
       continue;
-    const double share =
-        hole > 0.0 && a_side > 1 ? (std::abs(i) - 1.0) / (a_side - 1.0) : std::abs(i) / double(a_side);
-    found.push_back(std::copysign(hole + share * (1.0 - hole), i));
+    const int steps = hole > 0.0 ? a_side - 1 : a_side;
+    const int step = hole > 0.0 ? std::abs(i) - 1 : std::abs(i);
+    const double share = steps > 0 ? static_cast<double>(step) / steps : 0.5;
+    found.push_back(std::copysign(inner + share * (edge - inner), i));
   }
   return found;
 }

@@ -10,6 +10,7 @@
 #include <lightledger/report/budget.hpp>
 #include <lightledger/report/check.hpp>
 #include <lightledger/report/coating.hpp>
+#include <lightledger/report/drawing.hpp>
 #include <lightledger/report/media.hpp>
 
 #include <chrono>
@@ -130,6 +131,22 @@ Answer answer_media(const Options& options, const Input& input) {
       [&] { return report::media_text(*result.media, style_of(options)); });
 }
 
+Answer answer_draw(const Options& options, const Input& input) {
+  const analysis::DrawingResult result = analysis::drawing(*input.assembly, {.views = options.views});
+  refuse_file(result.faults, input);
+
+  const report::Envelope envelope = envelope_of(options, input, input.warnings);
+  Answer answer = written(
+      options, [&] { return report::drawing_json(envelope, *result.drawing); },
+      [&] { return report::drawing_csv(*result.drawing); },
+      [&] {
+        return report::drawing_text(*input.assembly, *result.drawing, *options.out, envelope.warnings,
+                                    style_of(options));
+      });
+  answer.out = report::drawing_svg(input.assembly->title, *result.drawing);
+  return answer;
+}
+
 } // namespace
 
 Input read_input(const Options& options) {
@@ -150,6 +167,8 @@ Answer answer(const Options& options, const Input& input) {
     return answer_check(options, input);
   case Command::coating:
     return answer_coating(options, input);
+  case Command::draw:
+    return answer_draw(options, input);
   case Command::media:
     break;
   }

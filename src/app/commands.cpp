@@ -6,7 +6,7 @@
 namespace lightledger::app {
 namespace {
 
-constexpr std::array<std::string_view, 4> planned{"ghosts", "polarization", "draw", "report"};
+constexpr std::array<std::string_view, 3> planned{"ghosts", "polarization", "report"};
 
 } // namespace
 
@@ -19,7 +19,9 @@ const std::vector<CommandInfo>& commands() {
       {Command::coating, "coating", "FILE NAME", "What does a coating do against wavelength and angle?",
        "lightledger coating systems/fog-bank-lidar.yaml lens_ar --wavelengths 500:560:20 --angles 0:30:15"},
       {Command::media, "media", "[NAME]", "Which media are known, and what are n and kappa of one?",
-       "lightledger media fused-silica --wavelengths 400:700:50"}};
+       "lightledger media fused-silica --wavelengths 400:700:50"},
+      {Command::draw, "draw", "FILE", "What does the train look like, to scale and with its rays?",
+       "lightledger draw systems/fog-bank-lidar.yaml --out lidar.svg"}};
   return all;
 }
 

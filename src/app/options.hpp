@@ -3,6 +3,7 @@
 #include "commands.hpp"
 
 #include <lightledger/analysis/budget.hpp>
+#include <lightledger/analysis/drawing.hpp>
 #include <lightledger/assembly/load.hpp>
 
 #include <optional>
@@ -27,6 +28,9 @@ struct Options {
   analysis::Split split = analysis::Split::none;
   std::optional<std::string> incident, substrate;
   std::vector<double> wavelengths_nm, angles_deg; ///< empty where not given
+
+  std::optional<std::string> out;    ///< path of the picture or page, `-` for stdout
+  std::vector<analysis::View> views; ///< empty: the one that shows most
 };
 
 } // namespace lightledger::app

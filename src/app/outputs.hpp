@@ -4,7 +4,12 @@
 #include "options.hpp"
 #include "output.hpp"
 
+#include <lightledger/assembly/diagnostics.hpp>
+
+#include <memory>
 #include <optional>
+#include <string>
+#include <vector>
 
 namespace lightledger::app {
 
@@ -18,9 +23,18 @@ public:
   void write(const Answer& answer);
 
 private:
-  [[nodiscard]] bool stdout_is_taken() const;
+  /// A place and the document that goes there.
+  struct Target {
+    const char* option;
+    std::string Answer::*document;
+    std::unique_ptr<Output> output;
+  };
 
-  std::optional<Output> m_json, m_csv;
+  void open(const char* option, const std::optional<std::string>& path, std::string Answer::*document);
+  void refuse_clashes(const Options& options);
+
+  std::vector<Target> m_targets;
+  assembly::Faults m_faults;
 };
 
 } // namespace lightledger::app

@@ -11,6 +11,8 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <filesystem>
+#include <map>
 #include <utility>
 
 namespace lightledger::app {
@@ -72,6 +74,8 @@ private:
   void read_threads(const std::vector<std::string>& values);
   void read_isa(const std::vector<std::string>& values);
   void read_split(const std::vector<std::string>& values);
+  void read_out(const std::vector<std::string>& values);
+  void read_view(const std::vector<std::string>& values);
   std::vector<double> read_steps(const char* option, const std::vector<std::string>& values);
 
   /// The value of an option that may be given once.
@@ -100,6 +104,8 @@ Options Reader::read(const Words& words) {
   m_options.substrate = single("--substrate", words.substrate);
   m_options.wavelengths_nm = read_steps("--wavelengths", words.wavelengths);
   m_options.angles_deg = read_steps("--angles", words.angles);
+  read_out(words.out);
+  read_view(words.view);
   return m_options;
 }
 
@@ -207,6 +213,26 @@ void Reader::read_split(const std::vector<std::string>& values) {
   else
     note(fmt::format("--split '{}' is no way to split", *word), "wavelength, field",
          std::string(assembly::nearest(*word, {"wavelength", "field"})));
+}
+
+/// Beside the place asked for, the name of the file in the current folder.
+void Reader::read_out(const std::vector<std::string>& values) {
+  m_options.out = single("--out", values);
+  if (m_command == Command::draw && values.empty())
+    m_options.out = std::filesystem::path(m_options.file).stem().string() + ".svg";
+}
+
+void Reader::read_view(const std::vector<std::string>& values) {
+  using analysis::View;
+  static const std::map<std::string_view, std::vector<View>> views{
+      {"x", {View::x}}, {"y", {View::y}}, {"z", {View::z}}, {"all", {View::x, View::y, View::z}}};
+  const std::optional<std::string> word = single("--view", values);
+  if (!word)
+    return;
+  if (const auto found = views.find(*word); found != views.end())
+    m_options.views = found->second;
+  else
+    note(fmt::format("--view '{}' is no view", *word), "x, y, z, all");
 }
 
 std::vector<double> Reader::read_steps(const char* option, const std::vector<std::string>& values) {

@@ -48,6 +48,10 @@ const std::vector<OptionInfo>& own_options(Command command) {
       wavelengths,
       {"--angles", "START:STOP:STEP", "degrees in the medium of incidence, or one number", &Words::angles}};
   static const std::vector<OptionInfo> media{wavelengths};
+  static const std::vector<OptionInfo> draw{
+      {"--out", "PATH", "the drawing; NAME.svg in the current folder without it, - is stdout", &Words::out},
+      {"--view", "x|y|z|all", "look along an axis of the bench; along the best one without it",
+       &Words::view}};
   switch (command) {
   case Command::budget:
     return budget;
@@ -55,6 +59,8 @@ const std::vector<OptionInfo>& own_options(Command command) {
     return coating;
   case Command::media:
     return media;
+  case Command::draw:
+    return draw;
   case Command::check:
     break;
   }

@@ -96,7 +96,7 @@ public:
       m_ties.push_back(highest(ties(view.stations[station], sheet)));
     std::vector<std::size_t> order(m_stations.size());
     std::iota(order.begin(), order.end(), std::size_t{0});
-    std::ranges::stable_sort(order, {}, [&](std::size_t i) { return m_ties[i].point[0]; });
+    std::ranges::stable_sort(order, {}, [&](std::size_t i) { return std::round(m_ties[i].point[0]); });
     m_order = std::move(order);
     m_height = INFINITY;
     for (const Tie& tie : m_ties)
@@ -177,7 +177,10 @@ void each_segment(const std::vector<Vector2d>& points, Add add) {
 }
 
 LabelPlacer placer_of(const DrawnView& view, const Sheet& sheet) {
+  constexpr std::size_t many_stations = 80;
   LabelPlacer placer;
+  if (view.stations.size() > many_stations)
+    return placer;
   const auto forbid = [&](const Segment& segment) { placer.forbid(segment); };
   const auto avoid = [&](const Segment& segment) { placer.avoid(segment); };
   for (const DrawnStation& station : view.stations)

@@ -1,5 +1,6 @@
 #include "display_width.hpp"
 #include "drawing_labels.hpp"
+#include "drawing_words.hpp"
 #include "figures.hpp"
 #include "svg_style.hpp"
 #include "xml.hpp"
@@ -25,22 +26,6 @@ constexpr double margin = 30.0;
 constexpr double most_height = 480.0;         ///< of one view
 constexpr double most_height_of_many = 330.0; ///< of each of several
 constexpr double line_height = 18.0;
-
-const char* name_of(analysis::View view) {
-  return view == analysis::View::x ? "x" : view == analysis::View::y ? "y" : "z";
-}
-
-const char* directions(analysis::View view) {
-  switch (view) {
-  case analysis::View::x:
-    return "seen along x: z to the right, y up";
-  case analysis::View::y:
-    return "seen along y: z to the right, x up";
-  case analysis::View::z:
-    break;
-  }
-  return "seen along z: x to the right, y up";
-}
 
 /// Markup and the room that it takes.
 struct Panel {
@@ -168,10 +153,13 @@ private:
   void paint_hatch(const std::vector<Vector2d>& points, const Vector2d& behind) {
     constexpr double spacing = 7.0;
     constexpr double length = 6.0;
+    constexpr double longest = 1e4;
     std::string strokes;
     double next = 0.5 * spacing;
     for (std::size_t i = 1; i < points.size(); ++i) {
       const Vector2d step = points[i] - points[i - 1];
+      if (!(step.norm() < longest))
+        return;
       for (; next <= step.norm(); next += spacing) {
         const Vector2d foot = points[i - 1] + next * step.normalized();
         strokes += path_of({foot, foot + length * (behind + 0.7 * step.normalized())});
@@ -228,7 +216,7 @@ double scale_for(const Drawing& drawing) {
     scale = std::min(
         {scale, (paper_width - 4.0 * margin) / std::max(size[0], 1e-6), height / std::max(size[1], 1e-6)});
   }
-  return scale;
+  return std::clamp(scale, 1e-12, 1e12);
 }
 
 /// The longest of 1, 2, 5 times a power of ten that takes no more than some px.
@@ -271,7 +259,7 @@ private:
                       fmt::format("translate({} {})", coordinate(x), coordinate(m_height - box.low[1]))}});
     m_xml.raw(panel.markup).close();
     m_height += panel.extent.size()[1] + 1.5 * line_height;
-    text(margin, m_height, directions(view.along));
+    text(margin, m_height, describe_view(view.along));
     m_height += line_height;
   }
 

@@ -44,6 +44,7 @@ constexpr const char* chart_on_dark = R"(.chart text{fill:#e7eaf0}
 
 constexpr const char* drawing_on_light = R"(.drawing{font:12px system-ui,"DejaVu Sans",sans-serif}
 .drawing text{fill:#1c2431}
+.drawing .station text{paint-order:stroke;stroke:#ffffff;stroke-width:3px;stroke-linejoin:round}
 .drawing .title{font-size:15px;font-weight:600}
 .drawing .number{font-weight:600}
 .drawing .paper{fill:#ffffff}
@@ -63,6 +64,7 @@ constexpr const char* drawing_on_light = R"(.drawing{font:12px system-ui,"DejaVu
 )";
 
 constexpr const char* drawing_on_dark = R"(.drawing text{fill:#e7eaf0}
+.drawing .station text{stroke:#141922}
 .drawing .paper{fill:#141922}
 .drawing .glass{fill:#2b4358;stroke:#7d93a6}
 .drawing .surface,.drawing .outline{stroke:#a9c0d4}
