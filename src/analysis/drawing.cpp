@@ -6,6 +6,7 @@
 #include <algorithm>
 #include <array>
 #include <cmath>
+#include <iterator>
 #include <utility>
 
 namespace lightledger::analysis {
@@ -162,6 +163,21 @@ private:
 };
 
 } // namespace
+
+std::vector<PathPicture> path_pictures(const Assembly& assembly, View view,
+                                       const std::vector<trace::Path>& paths) {
+  assembly::Faults faults;
+  const auto train = trace::prepare(assembly, faults);
+  if (!train)
+    return {};
+  const double lead = lead_share * size_of(*train);
+  const auto picture = [&](const trace::Path& path) {
+    return PathPicture{fan(*train, path, view, lead).rays, spot(*train, path)};
+  };
+  std::vector<PathPicture> pictures{picture(train->path)};
+  std::ranges::transform(paths, std::back_inserter(pictures), picture);
+  return pictures;
+}
 
 DrawingResult drawing(const Assembly& assembly, const DrawingOptions& options) {
   DrawingResult result;

@@ -11,6 +11,7 @@ namespace {
 using Eigen::Vector2d;
 using Eigen::Vector3d;
 using trace::RayBlock;
+using trace::Train;
 
 /// Places across the beam, relative to its radius, that show a field without crowding the picture; the
 /// outermost lie just inside the edge, where rounding does not decide over them.
@@ -66,6 +67,8 @@ public:
   }
 
   [[nodiscard]] const std::vector<double>& reach() const { return m_reach; }
+  /// Where the last ray ended, in its surface's frame.
+  [[nodiscard]] const Vector3d& hit() const { return m_hit; }
 
 private:
   [[nodiscard]] RayBlock launched(std::size_t field, const Vector2d& launch) const {
@@ -90,6 +93,7 @@ private:
   }
 
   void note_hit(assembly::SurfaceId surface, const Vector3d& hit, DrawnRay& ray) {
+    m_hit = hit;
     const trace::Frame& frame = m_train.bench.surface[surface];
     ray.points.push_back(frame.origin + frame.axes * hit);
     m_reach[surface] = std::max(m_reach[surface], std::hypot(hit[0], hit[1]));
@@ -105,6 +109,7 @@ private:
   const trace::Plan& m_plan;
   optics::Coherency m_coherency;
   std::vector<double> m_reach;
+  Vector3d m_hit = Vector3d::Zero();
 };
 
 Vector2d on_launch_plane(const trace::Footprint& footprint, View view, double place) {
@@ -112,11 +117,45 @@ Vector2d on_launch_plane(const trace::Footprint& footprint, View view, double pl
   return {footprint.centre[0] + place * half[0], footprint.centre[1] + place * half[1]};
 }
 
+/// Points that cover the unit disc evenly outside a hole: equal areas, a golden angle apart (Vogel, Math.
+/// Biosci. 44, 179 (1979)).
+std::vector<Vector2d> disc_points(double hole) {
+  constexpr int count = 48;
+  constexpr double golden_angle = 2.399963229728653;
+  std::vector<Vector2d> points;
+  for (int i = 0; i < count; ++i) {
+    const double area = (i + 0.5) / count;
+    const double radius = std::sqrt(hole * hole + area * (1.0 - hole * hole));
+    points.emplace_back(radius * std::cos(golden_angle * i), radius * std::sin(golden_angle * i));
+  }
+  return points;
+}
+
+double hole_of(const assembly::Beam& beam) {
+  return beam.fill_stop ? 0.0 : beam.inner / beam.radius;
+}
+
 } // namespace
+
+std::vector<Vector2d> spot(const Train& train, const trace::Path& path) {
+  const assembly::Light& light = train.assembly->light;
+  Follower follower(train, path);
+  std::vector<Vector2d> hits;
+  for (std::size_t field = 0; field < light.fields.size(); ++field)
+    for (const Vector2d& place : disc_points(hole_of(light.beam))) {
+      const trace::Footprint& footprint = train.footprints[field];
+      const Vector2d launch(
+          footprint.centre[0] + place[0] * footprint.first[0] + place[1] * footprint.second[0],
+          footprint.centre[1] + place[0] * footprint.first[1] + place[1] * footprint.second[1]);
+      if (follower.follow(field, launch, 0.0).end == RayEnd::arrived)
+        hits.emplace_back(follower.hit().head<2>());
+    }
+  return hits;
+}
 
 Fan fan(const trace::Train& train, const trace::Path& path, View view, double lead) {
   const assembly::Light& light = train.assembly->light;
-  const double hole = light.beam.fill_stop ? 0.0 : light.beam.inner / light.beam.radius;
+  const double hole = hole_of(light.beam);
   Follower follower(train, path);
   Fan fan;
   for (std::size_t field = 0; field < light.fields.size(); ++field)

@@ -15,4 +15,7 @@ struct Fan {
 /// path of the train. They start `lead` mm before the launch plane, or at an object that is nearer.
 [[nodiscard]] Fan fan(const trace::Train& train, const trace::Path& path, View view, double lead);
 
+/// Where rays of a path that arrive meet the detector's surface, in its own x and y, mm.
+[[nodiscard]] std::vector<Eigen::Vector2d> spot(const trace::Train& train, const trace::Path& path);
+
 } // namespace lightledger::analysis

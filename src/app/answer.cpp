@@ -12,6 +12,7 @@
 #include <lightledger/report/coating.hpp>
 #include <lightledger/report/drawing.hpp>
 #include <lightledger/report/media.hpp>
+#include <lightledger/report/page.hpp>
 
 #include <chrono>
 #include <utility>
@@ -147,6 +148,43 @@ Answer answer_draw(const Options& options, const Input& input) {
   return answer;
 }
 
+/// The budget that the page shows, traced once, and the verdicts on it.
+report::PageContent page_content(const Options& options, const Input& input) {
+  const assembly::Assembly& assembly = *input.assembly;
+  analysis::BudgetResult budget =
+      analysis::budget(assembly, {.split = analysis::Split::both, .threads = options.threads});
+  refuse_file(budget.faults, input);
+  analysis::Judgement verdicts = analysis::judge_all(assembly, *budget.budget);
+  refuse_file(verdicts.faults, input);
+  analysis::DrawingResult drawing = analysis::drawing(assembly);
+  refuse_file(drawing.faults, input);
+
+  report::PageContent content{envelope_of(options, input, joined(input, budget.warnings)),
+                              input.file,
+                              input.text,
+                              std::move(*budget.budget),
+                              std::move(verdicts),
+                              std::move(*drawing.drawing),
+                              {},
+                              {},
+                              {},
+                              {},
+                              {}};
+  content.coatings = analysis::occurring_coatings(assembly, content.budget);
+  content.paths = analysis::path_pictures(assembly, content.drawing.views.front().along, {});
+  return content;
+}
+
+Answer answer_report(const Options& options, const Input& input) {
+  const report::PageContent content = page_content(options, input);
+  Answer answer = written(
+      options, [&] { return report::page_json(*input.assembly, content); },
+      [&] { return report::budget_csv(content.budget); },
+      [&] { return report::page_text(*input.assembly, content, *options.out, style_of(options)); });
+  answer.out = report::page(*input.assembly, content);
+  return answer;
+}
+
 } // namespace
 
 Input read_input(const Options& options) {
@@ -169,6 +207,8 @@ Answer answer(const Options& options, const Input& input) {
     return answer_coating(options, input);
   case Command::draw:
     return answer_draw(options, input);
+  case Command::report:
+    return answer_report(options, input);
   case Command::media:
     break;
   }

@@ -6,7 +6,7 @@
 namespace lightledger::app {
 namespace {
 
-constexpr std::array<std::string_view, 3> planned{"ghosts", "polarization", "report"};
+constexpr std::array<std::string_view, 2> planned{"ghosts", "polarization"};
 
 } // namespace
 
@@ -21,7 +21,9 @@ const std::vector<CommandInfo>& commands() {
       {Command::media, "media", "[NAME]", "Which media are known, and what are n and kappa of one?",
        "lightledger media fused-silica --wavelengths 400:700:50"},
       {Command::draw, "draw", "FILE", "What does the train look like, to scale and with its rays?",
-       "lightledger draw systems/fog-bank-lidar.yaml --out lidar.svg"}};
+       "lightledger draw systems/fog-bank-lidar.yaml --out lidar.svg"},
+      {Command::report, "report", "FILE", "All of it on one page, to look at and to send to a colleague",
+       "lightledger report systems/fog-bank-lidar.yaml --out lidar.html"}};
   return all;
 }
 

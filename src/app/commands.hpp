@@ -7,7 +7,7 @@
 
 namespace lightledger::app {
 
-enum class Command { check, budget, coating, media, draw };
+enum class Command { check, budget, coating, media, draw, report };
 
 /// A command as the user sees it.
 struct CommandInfo {

@@ -218,8 +218,9 @@ void Reader::read_split(const std::vector<std::string>& values) {
 /// Beside the place asked for, the name of the file in the current folder.
 void Reader::read_out(const std::vector<std::string>& values) {
   m_options.out = single("--out", values);
-  if (m_command == Command::draw && values.empty())
-    m_options.out = std::filesystem::path(m_options.file).stem().string() + ".svg";
+  const char* ending = m_command == Command::draw ? ".svg" : m_command == Command::report ? ".html" : nullptr;
+  if (values.empty() && ending != nullptr)
+    m_options.out = std::filesystem::path(m_options.file).stem().string() + ending;
 }
 
 void Reader::read_view(const std::vector<std::string>& values) {

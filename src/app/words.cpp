@@ -52,6 +52,8 @@ const std::vector<OptionInfo>& own_options(Command command) {
       {"--out", "PATH", "the drawing; NAME.svg in the current folder without it, - is stdout", &Words::out},
       {"--view", "x|y|z|all", "look along an axis of the bench; along the best one without it",
        &Words::view}};
+  static const std::vector<OptionInfo> report{
+      {"--out", "PATH", "the page; NAME.html in the current folder without it, - is stdout", &Words::out}};
   switch (command) {
   case Command::budget:
     return budget;
@@ -61,6 +63,8 @@ const std::vector<OptionInfo>& own_options(Command command) {
     return media;
   case Command::draw:
     return draw;
+  case Command::report:
+    return report;
   case Command::check:
     break;
   }

@@ -341,6 +341,10 @@ private:
 
 } // namespace
 
+std::string ray_path(const Drawing& drawing, const DrawnView& view, const DrawnRay& ray) {
+  return path_of(Sheet(view.along, scale_for(drawing))(ray.points));
+}
+
 std::string drawing_svg(const std::string& title, const Drawing& drawing) {
   return Painter(title, drawing).svg();
 }

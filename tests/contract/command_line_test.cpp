@@ -80,7 +80,7 @@ TEST(Refusal, OfAnUnknownCommandSuggestsANearOne) {
 }
 
 TEST(Refusal, OfCommandsOfLaterVersionsSaysSo) {
-  for (const char* command : {"ghosts", "polarization", "report"})
+  for (const char* command : {"ghosts", "polarization"})
     EXPECT_THAT(refusal({command, minimal}), HasSubstr("not available in this version"));
 }
 

@@ -59,7 +59,7 @@ struct Drawing {
 };
 
 struct DrawingOptions {
-  std::vector<View> views; ///< empty: the one that shows most of the axis
+  std::vector<View> views;            ///< empty: the one that shows most of the axis
   std::optional<trace::Path> ghost{}; ///< a path of this assembly's routes whose rays are drawn as well
 };
 
@@ -67,6 +67,18 @@ struct DrawingResult {
   std::optional<Drawing> drawing; ///< none where there are faults
   assembly::Faults faults;        ///< of the layout
 };
+
+/// One path as a picture shows it.
+struct PathPicture {
+  std::vector<DrawnRay> rays;        ///< a fan of each field in the plane of the view
+  std::vector<Eigen::Vector2d> spot; ///< where rays from all over the beam, of all fields, meet the detector:
+                                     ///< in its own x and y, mm
+};
+
+/// Rays and spots of paths of the assembly's routes, the intended one first; empty where the layout has
+/// faults.
+[[nodiscard]] std::vector<PathPicture> path_pictures(const assembly::Assembly& assembly, View view,
+                                                     const std::vector<trace::Path>& paths);
 
 /// Lays the train out and follows a few rays of each field through it, as they really run.
 [[nodiscard]] DrawingResult drawing(const assembly::Assembly& assembly, const DrawingOptions& options = {});

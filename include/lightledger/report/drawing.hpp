@@ -16,6 +16,10 @@ namespace lightledger::report {
 /// 4 has the class `between-3-4`, rays of the first field `field0`.
 [[nodiscard]] std::string drawing_svg(const std::string& title, const analysis::Drawing& drawing);
 
+/// A ray as an SVG path in the coordinates of the group of its view, `g.view`.
+[[nodiscard]] std::string ray_path(const analysis::Drawing& drawing, const analysis::DrawnView& view,
+                                   const analysis::DrawnRay& ray);
+
 /// The lines of the drawing in bench coordinates, as a JSON document.
 [[nodiscard]] std::string drawing_json(const Envelope& envelope, const analysis::Drawing& drawing);
 
