@@ -27,6 +27,7 @@ function drawCoatingPlot(parent, coating, kind, words) {
   const extent = d3.extent(points, (d) => 100 * d[1]);
   const room = 0.08 * (extent[1] - extent[0]) || 0.5;
   const y = d3.scaleLinear().domain([Math.max(0, extent[0] - room), extent[1] + room]).nice(5).range([height - bottom, top]);
+  y.domain([y.domain()[0], Math.min(100, y.domain()[1])]);
   const svg = picture(parent, width, height, `${coating.coating.name}: ${words}`,
     curves.map((curve) => `${curve.component} at ${plain(curve.angle)} degrees from ${perCent(d3.min(curve.points, (d) => d[1]))} to ${perCent(d3.max(curve.points, (d) => d[1]))}`).join("; "));
   svg.append("g").selectAll("line").data(y.ticks(5)).enter().append("line").attr("class", "gridline").attr("x1", left).attr("x2", width - right)

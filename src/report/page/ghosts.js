@@ -235,7 +235,7 @@ function drawGhostTable(parent) {
     (value) => { ghostFilter.least = Number(value); refill(); });
   search.on("input", function () { ghostFilter.words = this.value; refill(); });
   const count = controls.append("span").attr("role", "status").attr("id", "ghost-count");
-  const made = parent.append("div").attr("class", "wide").append("table").attr("id", "ghost-table");
+  const made = parent.append("div").attr("class", "wide").attr("id", "ghost-list").append("table").attr("id", "ghost-table");
   made.append("caption").text("Ghosts, with their power relative to delivered");
   const headings = made.append("thead").append("tr").selectAll("th").data(ghostColumns).enter().append("th").attr("scope", "col")
     .classed("text", (d) => !!d.text);

@@ -36,7 +36,7 @@ function glanceVerdict(parent) {
     : open.length ? counted(open.length, "requirement") + " cannot be told"
     : verdicts.length === 1 ? "The requirement is met" : "All " + verdicts.length + " requirements met";
   const worst = missed[0] || open[0];
-  const words = worst ? `${worst.quantity}: ${quantity(worst.value)}, ${senseWords(worst)} ${plain(worst.limit)}.`
+  const words = worst ? `${quantityWords(worst.quantity)}: ${quantity(worst.value)}, ${senseWords(worst)} ${plain(worst.limit)}.`
     : "Every one by more than its uncertainty.";
   glanceItem(parent, "Requirements", large, missed.length ? "not-met" : open.length ? "open" : "met", words);
 }

@@ -1,15 +1,19 @@
 // What happens to polarization?
 
 const attributionKinds = [
-  {key: "cross_leakage", heading: "cross leakage"},
-  {key: "diattenuation", heading: "diattenuation"},
-  {key: "retardance_deg", heading: "retardance, deg"},
-  {key: "dop_loss", heading: "loss of polarization"}
+  {key: "cross_leakage", heading: "cross leakage", negligible: 1e-6},
+  {key: "diattenuation", heading: "diattenuation", negligible: 1e-6},
+  {key: "retardance_deg", heading: "retardance, deg", negligible: 1e-3},
+  {key: "dop_loss", heading: "loss of polarization", negligible: 1e-6}
 ];
+
+function matters(row, kind) {
+  return row[kind.key] !== null && Math.abs(row[kind.key]) > kind.negligible;
+}
 
 /** The station to which most of the main figure belongs. */
 function worstOffender() {
-  const kind = attributionKinds.find((entry) => polarization.attribution.some((row) => row[entry.key] !== null && Math.abs(row[entry.key]) > 1e-9));
+  const kind = attributionKinds.find((entry) => polarization.attribution.some((row) => matters(row, entry)));
   if (!kind) return null;
   const worst = polarization.attribution.reduce((best, row) => Math.abs(row[kind.key] || 0) > Math.abs(best[kind.key] || 0) ? row : best);
   const number = stationNumber(worst.name);
@@ -54,8 +58,8 @@ function drawEllipses(parent, states) {
   cells.append("rect").attr("class", "ellipse-frame").attr("x", -cell / 2 + 3).attr("y", -cell / 2 + 3).attr("width", cell - 6)
     .attr("height", cell - 6).attr("rx", 4);
   cells.append("text").attr("text-anchor", "middle").attr("y", cell / 2 + 12).text((d) => d.number === null ? "launched" : d.number);
-  cells.filter((d) => d.azimuth !== null && d.dop > 1e-6).each(function (d) {
-    const points = ellipsePoints(d.azimuth, d.ellipticity, 28 * d.dop);
+  cells.filter((d) => d.ellipticity !== null && d.dop > 1e-6).each(function (d) {
+    const points = ellipsePoints(d.azimuth || 0, d.ellipticity, 28 * d.dop);
     const line = points.map((point) => `${point[0].toFixed(2)} ${(-point[1]).toFixed(2)}`);
     d3.select(this).append("path").attr("class", "ellipse").attr("d", "M" + line.join("L"));
     if (Math.abs(d.ellipticity) > 0.5) arrowHead(d3.select(this), points);
@@ -96,9 +100,8 @@ function chiefStates() {
     azimuth: launched.azimuth_deg, ellipticity: launched.ellipticity_deg});
   states.forEach((d) => {
     if (d.number !== null) d.words = stationName(d.number);
-    d.told = d.azimuth === null || d.azimuth === undefined ? "unpolarized"
-      : `azimuth ${quantity(d.azimuth)} deg, ellipticity ${quantity(d.ellipticity)} deg, ${handedness(d.ellipticity)}`;
-    if (d.azimuth === undefined) d.azimuth = null;
+    d.told = d.ellipticity === null ? "unpolarized" : [d.azimuth === null ? "no azimuth" : `azimuth ${quantity(d.azimuth)} deg`,
+      `ellipticity ${quantity(d.ellipticity)} deg`, handedness(d.ellipticity)].join(", ");
   });
   return states;
 }
@@ -106,14 +109,14 @@ function chiefStates() {
 function drawAttribution(parent) {
   const rows = polarization.attribution.map((row) => ({row, number: stationNumber(row.name)}));
   attributionKinds.forEach((kind) => {
-    const values = rows.filter((d) => d.row[kind.key] !== null && Math.abs(d.row[kind.key]) > 1e-12);
-    if (!values.length) return;
-    values.sort((one, other) => Math.abs(other.row[kind.key]) - Math.abs(one.row[kind.key]));
-    drawBars(parent.append("div"), kind, values.slice(0, 12));
+    const size = (d) => Math.abs(d.row[kind.key] || 0);
+    const most = d3.max(rows, size);
+    const values = rows.filter((d) => matters(d.row, kind) && size(d) > 0.002 * most).sort((one, other) => size(other) - size(one));
+    if (values.length) drawBars(parent.append("div"), kind, values.slice(0, 12), rows.length);
   });
 }
 
-function drawBars(parent, kind, values) {
+function drawBars(parent, kind, values, all) {
   const width = 440, line = 22, left = 160, right = 76;
   const height = values.length * line + 10;
   parent.append("h3").text("Who changes " + kind.heading);
@@ -130,6 +133,8 @@ function drawBars(parent, kind, values) {
   bars.append("rect").attr("class", (d) => "bar" + (d.row[kind.key] < 0 ? " negative" : "")).attr("y", 3).attr("height", line - 7)
     .attr("x", (d) => Math.min(x(0), x(d.row[kind.key]))).attr("width", (d) => Math.max(0.5, Math.abs(x(d.row[kind.key]) - x(0))));
   bars.append("text").attr("y", 14).attr("x", (d) => Math.max(x(0), x(d.row[kind.key])) + 5).text((d) => quantity(d.row[kind.key]));
+  if (values.length < all)
+    parent.append("p").attr("class", "note").text(`${counted(all - values.length, "other station")} below ${quantity(0.002 * most)} or not among the first twelve.`);
   svg.append("line").attr("class", "zero").attr("x1", x(0)).attr("x2", x(0)).attr("y1", 2).attr("y2", height - 4);
   const stationBars = bars.filter((d) => d.number !== null);
   pointsAt(stationBars, "station", (d) => d.number);
@@ -172,11 +177,11 @@ function drawPolarization() {
   else parent.append("p").text("The chief ray does not reach the detector, so there is no state to follow.");
   const pair = parent.append("div").attr("class", "side-by-side");
   if (states.length) drawSphere(pair.append("div"), states);
-  drawAttribution(pair.append("div"));
+  drawAttribution(pair);
   if (states.length) foldedTable(parent, "The chief ray's state as a table", [
     {heading: "no.", cell: (d) => d.number === null ? "" : d.number}, {heading: "behind", text: true, cell: (d) => d.words},
     {heading: "DoP", cell: (d) => quantity(d.dop)}, {heading: "azimuth, deg", cell: (d) => quantity(d.azimuth)},
-    {heading: "ellipticity, deg", cell: (d) => quantity(d.ellipticity)}, {heading: "handedness", text: true, cell: (d) => d.azimuth === null ? "" : handedness(d.ellipticity)}], states);
+    {heading: "ellipticity, deg", cell: (d) => quantity(d.ellipticity)}, {heading: "handedness", text: true, cell: (d) => d.ellipticity === null ? "" : handedness(d.ellipticity)}], states);
   foldedTable(parent, "Attribution as a table", [{heading: "station", text: true, cell: (d) => d.name}]
     .concat(attributionKinds.map((kind) => ({heading: kind.heading, cell: (d) => quantity(d[kind.key]), title: (d) => fullPrecision(d[kind.key])}))), polarization.attribution);
   drawMueller(parent);

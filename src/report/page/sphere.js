@@ -1,6 +1,6 @@
 // The Poincaré sphere: a map of all states of polarization, that can be turned.
 
-const sphere = {yaw: -35, pitch: 22, size: 360, radius: 140};
+const sphere = {yaw: -35, pitch: 22, size: 360, radius: 128};
 
 /** Where a point of the unit sphere stands in the picture; z is toward the reader. */
 function onPaper(point) {
@@ -35,17 +35,10 @@ function linePieces(points) {
   return pieces;
 }
 
-/** Points between two states along the shortest way, so that the path stays on the sphere where both do. */
+/** Points on the straight way between two states: what happens within a station is not known here. */
 function between(one, other) {
   const steps = 16;
-  const size = (point) => Math.hypot(point[0], point[1], point[2]);
-  return d3.range(0, steps + 1).map((step) => {
-    const share = step / steps;
-    const mixed = one.map((value, axis) => (1 - share) * value + share * other[axis]);
-    const wanted = (1 - share) * size(one) + share * size(other);
-    const now = size(mixed);
-    return now > 1e-6 ? mixed.map((value) => value * wanted / now) : mixed;
-  });
+  return d3.range(0, steps + 1).map((step) => one.map((value, axis) => value + (other[axis] - value) * step / steps));
 }
 
 function drawSphere(parent, states) {
@@ -65,7 +58,7 @@ function drawSphere(parent, states) {
       drawn.append("path").attr("class", "sphere-line").attr("d", pieces.behind);
       drawn.append("path").attr("class", "sphere-line front").attr("d", pieces.front);
     });
-    [["S1", [1.12, 0, 0]], ["S2", [0, 1.12, 0]], ["S3, right (IEEE)", [0, 0, 1.12]], ["left (IEEE)", [0, 0, -1.14]]].forEach(([words, point]) => {
+    [["S1", [1.2, 0, 0]], ["S2", [0, 1.2, 0]], ["S3, right (IEEE)", [0, 0, 1.24]], ["left (IEEE)", [0, 0, -1.24]]].forEach(([words, point]) => {
       const place = onPaper(point);
       drawn.append("text").attr("class", "quiet").attr("x", place.x).attr("y", place.y + 4).attr("text-anchor", "middle").text(words);
     });
@@ -110,8 +103,8 @@ function labelPoints(drawn, states) {
     if (near) near.numbers.push(number);
     else labels.push({x: place.x, y: place.y, numbers: [number]});
   });
-  drawn.selectAll("text.point-label").data(labels).enter().append("text").attr("class", "point-label").attr("x", (d) => d.x + 8)
-    .attr("y", (d) => d.y - 6).text((d) => ranges(d.numbers));
+  drawn.selectAll("text.point-label").data(labels).enter().append("text").attr("class", "point-label").attr("x", (d) => d.x + 9)
+    .attr("y", (d) => d.y + 4).text((d) => ranges(d.numbers));
 }
 
 /** `1–4, 7` */

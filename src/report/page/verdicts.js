@@ -4,6 +4,24 @@ function senseWords(verdict) {
   return verdict.sense === "at_least" ? "at least" : "at most";
 }
 
+const ghostFigures = {total: "All ghosts together", brightest: "Brightest ghost", returned: "Light that returns", not_followed: "Light not followed"};
+
+/** A path of the JSON in words a reviewer knows; the path itself where there are none. */
+function quantityWords(path) {
+  const budgetPath = path.replace(/^budget\./, "");
+  let found;
+  if (budgetPath === "delivered") return "Delivered";
+  if ((found = budgetPath.match(/^by_field\[(\d+)\]\.delivered$/)) && budget.by_field[found[1]]) return "Delivered of " + fieldName(Number(found[1]));
+  if ((found = budgetPath.match(/^by_wavelength\[(\d+)\]\.delivered$/)) && budget.by_wavelength[found[1]])
+    return `Delivered at ${plain(budget.by_wavelength[found[1]].wavelength_nm)} nm`;
+  if ((found = budgetPath.match(/^stations\.(.*)\.([a-z_]+(?:\.[a-z]+)?)$/)) && stationNumber(found[1]))
+    return `${found[2].replace(/_/g, " ").replace(".", ", ")} at ${stationName(stationNumber(found[1]))}`;
+  if ((found = path.match(/^ghosts\.([a-z_]+)$/)) && ghostFigures[found[1]]) return ghostFigures[found[1]];
+  if ((found = path.match(/^polarization\.(detector|chief)\.([a-z_]+)$/)))
+    return `${found[2].replace(/_deg$/, ", deg").replace(/_/g, " ")} ${found[1] === "detector" ? "at the detector" : "of the chief ray"}`;
+  return path;
+}
+
 /** The section that explains a quantity. */
 function sectionOf(path) {
   if (path.indexOf("ghosts") === 0) return "ghosts";
@@ -60,7 +78,10 @@ function drawVerdicts() {
   rows.each(function (verdict, index) {
     const row = d3.select(this);
     const path = `check.requirements[${index}]`;
-    row.append("th").attr("scope", "row").attr("class", "text").text(verdict.quantity);
+    row.append("th").attr("scope", "row").attr("class", "text").each(function () {
+      d3.select(this).append("div").text(quantityWords(verdict.quantity));
+      d3.select(this).append("div").attr("class", "path").text(verdict.quantity);
+    });
     const word = row.append("td").attr("class", "text");
     word.append("span").attr("class", "word " + verdictClass(verdict.met)).text(verdictWord(verdict.met));
     if (verdict.met !== true) {
