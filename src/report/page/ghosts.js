@@ -43,9 +43,13 @@ function passesFilter(path) {
   return (!words || names.indexOf(words) >= 0) && (path.relative_power || 0) >= ghostFilter.least;
 }
 
+/** Radii below this share of the largest are drawn as that: below a few nanometres a spot is a point. */
+const leastShareOfRadius = 1e-5;
+
 function ghostPoints() {
-  return ghostPaths.map((path, index) => ({path, number: index + 1}))
-    .filter((point) => point.path.relative_power > 0 && point.path.rms_radius_mm > 0);
+  const most = d3.max(ghostPaths, (path) => path.rms_radius_mm || 0) || 1;
+  return ghostPaths.map((path, index) => ({path, number: index + 1, radius: Math.max(path.rms_radius_mm || 0, leastShareOfRadius * most)}))
+    .filter((point) => point.path.relative_power > 0);
 }
 
 function decadeDomain(values) {
@@ -68,7 +72,7 @@ function drawGhostPlot(parent) {
   const figure = parent.append("figure");
   const svg = picture(figure, width, height, "Ghosts: relative power against rms radius",
     "Each point is a ghost. The higher it stands the brighter it is, the further left the smaller its spot.");
-  const x = d3.scaleLog().domain(decadeDomain(points.map((d) => d.path.rms_radius_mm))).range([left, width - right]);
+  const x = d3.scaleLog().domain(decadeDomain(points.map((d) => d.radius))).range([left, width - right]);
   const powers = points.map((d) => d.path.relative_power).concat(limit > 0 ? [limit] : []);
   const y = d3.scaleLog().domain(decadeDomain(powers)).range([height - bottom, top]);
   svg.append("g").attr("class", "axis").attr("transform", `translate(0 ${height - bottom})`).call(decadeAxis(d3.axisBottom, x));
@@ -84,7 +88,7 @@ function drawGhostPlot(parent) {
   }
   const dots = svg.append("g").attr("role", "listbox").attr("aria-label", "Ghosts, brightest first").selectAll("circle")
     .data(points.slice().reverse()).enter().append("circle").attr("class", "dot").attr("role", "option")
-    .attr("r", 5).attr("cx", (d) => x(d.path.rms_radius_mm)).attr("cy", (d) => y(d.path.relative_power))
+    .attr("r", 5).attr("cx", (d) => x(d.radius)).attr("cy", (d) => y(d.path.relative_power))
     .attr("data-ghost", (d) => d.number)
     .attr("aria-label", (d) => `Ghost ${d.number}: ${bounceWords(d.path)}; relative power ${relativeWords(d.path.relative_power)}, ` +
       `rms radius ${quantity(d.path.rms_radius_mm)} mm`);

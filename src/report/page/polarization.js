@@ -174,7 +174,7 @@ function drawPolarization() {
   tellPolarization(parent);
   const states = chiefStates();
   if (states.length) drawEllipses(parent, states);
-  else parent.append("p").text("The chief ray does not reach the detector, so there is no state to follow.");
+  else parent.append("p").text("There is no chief ray whose state could be followed: it misses a surface, or is totally reflected at a lens.");
   const pair = parent.append("div").attr("class", "side-by-side");
   if (states.length) drawSphere(pair.append("div"), states);
   drawAttribution(pair);
