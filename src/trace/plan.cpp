@@ -1,4 +1,6 @@
 #include <lightledger/assembly/films.hpp>
+#include <lightledger/optics/boundary.hpp>
+#include <lightledger/trace/curve.hpp>
 #include <lightledger/trace/plan.hpp>
 
 #include <algorithm>
@@ -14,6 +16,9 @@ using assembly::Assembly;
 using assembly::Side;
 using assembly::Surface;
 using optics::Index;
+
+static_assert(PlanOp::lowest_power == assembly::Asphere::lowest_power);
+static_assert(PlanOp::lowest_power + PlanOp::terms - 1 == assembly::Asphere::highest_power);
 
 constexpr double nm_per_mm = 1e6;
 
@@ -41,12 +46,33 @@ PlanLeg compile(const Leg& leg, const Assembly& assembly, const Bench& bench, do
   return plan;
 }
 
+/// With terms that slope less than this at the hit and at the tangent plane, Newton's root is the nearest.
+constexpr double gentle = 0.3;
+
+double steepest_slope(const PlanOp& op, double r) {
+  double slope = 0.0;
+  for (int k = PlanOp::terms - 1; k >= 0; --k)
+    slope = slope * r + (k + PlanOp::lowest_power) * std::abs(op.a[k]);
+  return slope * r * r;
+}
+
+/// r² within which the terms, all taken with one sign, slope by less than `gentle`; by halving the exponent.
+double gentle_radius_squared(const PlanOp& op) {
+  double low = 1e-12;
+  double high = 1e12;
+  for (int round = 0; round < 60; ++round) {
+    const double middle = std::sqrt(low * high);
+    (steepest_slope(op, middle) < gentle ? low : high) = middle;
+  }
+  return low * low;
+}
+
 struct ShapeCompiler {
   PlanOp& op;
 
   void operator()(const assembly::Plane&) const { op.shape = ShapeKind::plane; }
   void operator()(const assembly::Sphere& sphere) const {
-    op.shape = ShapeKind::conic;
+    op.shape = ShapeKind::sphere;
     op.curvature = 1.0 / sphere.radius;
   }
   void operator()(const assembly::Conic& conic) const {
@@ -59,6 +85,13 @@ struct ShapeCompiler {
     op.curvature = 1.0 / asphere.radius;
     op.conic = asphere.conic;
     std::copy(asphere.terms.begin(), asphere.terms.end(), op.a);
+    for (int k = 0; k < PlanOp::terms; ++k) {
+      if (op.a[k] == 0.0)
+        continue;
+      op.used_terms = k + 1;
+      op.odd_terms |= (k + PlanOp::lowest_power) % 2 != 0;
+    }
+    op.gentle_squared = gentle_radius_squared(op);
   }
 };
 
@@ -185,12 +218,16 @@ private:
 
   void coat(PlanOp& op, const assembly::Layers& written, bool from_substrate, Plan& plan) const {
     const std::vector<optics::Layer> layers = assembly::optical_layers(m_assembly, written, m_wavelength_nm);
-    auto& stack = plan.stacks.emplace_back(std::make_unique<optics::Layer[]>(layers.size()));
+    auto& stack = plan.stacks.emplace_back(std::make_unique<PlanLayer[]>(layers.size()));
+    std::ranges::transform(layers, stack.get(), [](const optics::Layer& layer) {
+      return PlanLayer{layer.index.real(), layer.index.imag(), layer.thickness_nm};
+    });
     // Written from the substrate outward; light that arrives at the outer side meets the last one first.
-    if (from_substrate)
-      std::copy(layers.begin(), layers.end(), stack.get());
-    else
-      std::reverse_copy(layers.begin(), layers.end(), stack.get());
+    if (!from_substrate)
+      std::reverse(stack.get(), stack.get() + layers.size());
+    op.lossless = !op.swallows && std::ranges::all_of(layers, [](const optics::Layer& layer) {
+      return layer.index.imag() == 0.0;
+    });
     op.amplitude = AmplitudeKind::stack;
     op.layers = stack.get();
     op.layer_count = static_cast<std::uint32_t>(layers.size());
@@ -224,7 +261,7 @@ private:
 } // namespace
 
 Plan compile(const Assembly& assembly, const Bench& bench, const Routes& routes, double wavelength_nm) {
-  Plan plan{wavelength_nm, {}, {}, {}, {}};
+  Plan plan{wavelength_nm, {}, {}, {}, {}, {}};
   for (const Leg& leg : routes.legs())
     plan.legs.push_back(compile(leg, assembly, bench, wavelength_nm));
   for (assembly::SurfaceId id = 0; id < assembly.surfaces.size(); ++id) {

@@ -1,7 +1,7 @@
 # lightledger_module(NAME LINKS target...): the library of src/NAME, with its headers in include/lightledger/NAME.
 function(lightledger_module name)
   cmake_parse_arguments(MODULE "" "" "LINKS;PRIVATE_LINKS" ${ARGN})
-  file(GLOB sources CONFIGURE_DEPENDS ${PROJECT_SOURCE_DIR}/src/${name}/*.cpp)
+  file(GLOB_RECURSE sources CONFIGURE_DEPENDS ${PROJECT_SOURCE_DIR}/src/${name}/*.cpp)
   add_library(lightledger_${name} STATIC ${sources})
   target_include_directories(lightledger_${name}
     PUBLIC ${PROJECT_SOURCE_DIR}/include

@@ -1,18 +1,12 @@
 #pragma once
 
 #include <lightledger/assembly/assembly.hpp>
+#include <lightledger/trace/operator.hpp>
 
 #include <span>
 #include <vector>
 
 namespace lightledger::trace {
-
-/// One point of a measured curve, as seen from the side that the light comes from: powers, and phases in rad.
-struct CurvePoint {
-  double x; ///< angle in degrees, or wavelength in nm for a curve that shifts with the angle
-  double reflect_s, reflect_p, transmit_s, transmit_p;
-  double phase_rs, phase_rp, phase_ts, phase_tp;
-};
 
 /// A measured coating at one wavelength, from its front or its back, as the points to interpolate between:
 /// over the angle, or, for a curve that shifts with the angle, over the wavelength.

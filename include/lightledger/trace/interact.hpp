@@ -1,8 +1,9 @@
 #pragma once
 
 #include <lightledger/optics/polarization.hpp>
-#include <lightledger/trace/ledger.hpp>
-#include <lightledger/trace/plan.hpp>
+#include <lightledger/trace/entry.hpp>
+#include <lightledger/trace/instruction_set.hpp>
+#include <lightledger/trace/operator.hpp>
 #include <lightledger/trace/rays.hpp>
 
 namespace lightledger::trace {
@@ -32,7 +33,8 @@ struct StepOut {
 /// intersection, aperture, Fresnel or coating amplitudes in the local s, p basis, both beams, the ledger's
 /// entry. Amplitudes, bases and signs are those of contract §2; Yun, Crabtree & Chipman (Appl. Opt. 50, 2855,
 /// 2011) with u = s as each ray's basis behind the surface.
-void interact(const PlanLeg& leg, const PlanOp& op, const optics::Coherency& coherency, const RayBlock& in,
-              const StepOut& out);
+/// Returns the instruction set that did it.
+InstructionSet interact(const PlanLeg& leg, const PlanOp& op, const optics::Coherency& coherency,
+                        const RayBlock& in, const StepOut& out);
 
 } // namespace lightledger::trace

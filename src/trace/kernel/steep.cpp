@@ -1,4 +1,6 @@
-#include "asphere.hpp"
+#include "steep.hpp"
+
+#include <lightledger/trace/operator.hpp>
 
 #include <algorithm>
 #include <cmath>
@@ -6,6 +8,23 @@
 
 namespace lightledger::trace {
 namespace {
+
+/// The sag of ISO 10110-12 at a distance from the axis, and its slope over that distance.
+struct Sag {
+  double z, slope_over_r;
+  double terms_slope; ///< of the terms alone
+  bool before_equator;
+};
+
+/// o + t d in the surface's frame.
+struct AsphereRay {
+  double o[3], d[3];
+};
+
+struct AsphereHit {
+  double t;
+  bool found;
+};
 
 /// Newton stops at this many units in the last place of the largest coordinate; if rounding keeps it from
 /// there, the cap ends it and the looser bound decides whether it had arrived.
@@ -19,6 +38,21 @@ constexpr double gentle = 0.3;
 constexpr int search_steps = 240;
 constexpr double search_growth = 1.05;
 constexpr double first_search_step = 1.0 / 64.0; ///< of the height over the tangent plane
+
+Sag sag(const PlanOp& op, double r_squared) {
+  const double c = op.curvature;
+  const double e = 1.0 - (1.0 + op.conic) * c * c * r_squared;
+  const double root = std::sqrt(std::max(e, std::numeric_limits<double>::min()));
+  const double r = std::sqrt(r_squared);
+  double terms = 0.0;  // Σ A_i r^(i−3)
+  double slopes = 0.0; // Σ i A_i r^(i−3)
+  for (int k = PlanOp::terms - 1; k >= 0; --k) {
+    terms = terms * r + op.a[k];
+    slopes = slopes * r + (k + PlanOp::lowest_power) * op.a[k];
+  }
+  return {c * r_squared / (1.0 + root) + terms * r_squared * r, c / root + slopes * r, slopes * r_squared,
+          e > 0.0};
+}
 
 /// The ray's height over the surface at a place, and how fast that grows.
 struct Height {
@@ -181,27 +215,14 @@ AsphereHit near_base_conic(const PlanOp& op, const AsphereRay& ray) {
 
 } // namespace
 
-Sag sag(const PlanOp& op, double r_squared) {
-  const double c = op.curvature;
-  const double e = 1.0 - (1.0 + op.conic) * c * c * r_squared;
-  const double root = std::sqrt(std::max(e, std::numeric_limits<double>::min()));
-  const double r = std::sqrt(r_squared);
-  double terms = 0.0;  // Σ A_i r^(i−3)
-  double slopes = 0.0; // Σ i A_i r^(i−3)
-  for (int k = PlanOp::terms - 1; k >= 0; --k) {
-    terms = terms * r + op.a[k];
-    slopes = slopes * r + (k + PlanOp::lowest_power) * op.a[k];
-  }
-  return {c * r_squared / (1.0 + root) + terms * r_squared * r, c / root + slopes * r, slopes * r_squared,
-          e > 0.0};
-}
-
-AsphereHit meet(const PlanOp& op, const AsphereRay& ray) {
-  const AsphereHit quick = near_base_conic(op, ray);
-  if (quick.found && gentle_at(op, ray, quick.t) && gentle_at(op, ray, -ray.o[2] / ray.d[2]))
-    return quick;
-  const AsphereHit careful = search(op, ray);
-  return careful.found ? careful : quick;
+bool meet_steep(const PlanOp& op, const double (&o)[3], const double (&d)[3], double& t) {
+  const AsphereRay ray{{o[0], o[1], o[2]}, {d[0], d[1], d[2]}};
+  AsphereHit hit = near_base_conic(op, ray);
+  if (!hit.found || !gentle_at(op, ray, hit.t) || !gentle_at(op, ray, -ray.o[2] / ray.d[2]))
+    if (const AsphereHit careful = search(op, ray); careful.found)
+      hit = careful;
+  t = hit.found ? hit.t : 0.0;
+  return hit.found;
 }
 
 } // namespace lightledger::trace
