@@ -2,12 +2,15 @@
 
 #undef HWY_TARGET_INCLUDE
 #define HWY_TARGET_INCLUDE "trace/kernel/kernel.cpp"
+// Reads this file once for each of the other instruction sets, before what the last one needs.
+// clang-format off
+#include <hwy/foreach_target.h>
+// clang-format on
+
 #include "arrive-inl.hpp"
 #include "kernel.hpp"
 #include "respond-inl.hpp"
 #include "settle-inl.hpp"
-
-#include <hwy/foreach_target.h>
 
 HWY_BEFORE_NAMESPACE();
 namespace lightledger::trace::HWY_NAMESPACE {
