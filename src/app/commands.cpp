@@ -22,7 +22,7 @@ const std::vector<CommandInfo>& commands() {
        "lightledger media fused-silica --wavelengths 400:700:50"},
       {Command::draw, "draw", "FILE", "What does the train look like, to scale and with its rays?",
        "lightledger draw systems/fog-bank-lidar.yaml --out lidar.svg"},
-      {Command::report, "report", "FILE", "All of it on one page, to look at and to send to a colleague",
+      {Command::report, "report", "FILE", "How does all of it look, on one page ready to send?",
        "lightledger report systems/fog-bank-lidar.yaml --out lidar.html"}};
   return all;
 }
