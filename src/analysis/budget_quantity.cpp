@@ -75,25 +75,25 @@ void for_each_list(const Budget& budget, Visit visit) {
 
 /// The figure of a list at a path. Names may hold dots, so each is tried as it stands.
 template <class Object>
-std::optional<BudgetFigure> figure_in(const List<Object>& list, std::string_view path) {
+std::optional<Figure> figure_in(const List<Object>& list, std::string_view path) {
   for (std::size_t i = 0; i < list.items.size(); ++i)
     for (const Key<Object>& key : list.keys) {
       const auto leads_here = [&](const std::string& item) {
         return path == fmt::format("{}{}.{}", list.name, item, key.name);
       };
       if (leads_here(address(std::nullopt, i)) || leads_here(address(list.name_of(list.items[i]), i)))
-        return BudgetFigure{key.value(list.items[i]), std::nullopt};
+        return Figure{key.value(list.items[i]), std::nullopt};
     }
   return std::nullopt;
 }
 
 } // namespace
 
-std::optional<BudgetFigure> budget_figure(const Budget& budget, std::string_view path) {
+std::optional<Figure> budget_figure(const Budget& budget, std::string_view path) {
   for (const Key<Budget>& key : budget_keys)
     if (path == key.name)
-      return BudgetFigure{key.value(budget), path == "delivered" ? budget.uncertainty : std::nullopt};
-  std::optional<BudgetFigure> figure;
+      return Figure{key.value(budget), path == "delivered" ? budget.uncertainty : std::nullopt};
+  std::optional<Figure> figure;
   for_each_list(budget, [&](const auto& list) {
     if (!figure)
       figure = figure_in(list, path);

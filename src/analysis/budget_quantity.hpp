@@ -1,5 +1,7 @@
 #pragma once
 
+#include "figure.hpp"
+
 #include <lightledger/analysis/budget.hpp>
 
 #include <optional>
@@ -9,15 +11,9 @@
 
 namespace lightledger::analysis {
 
-/// A figure of the budget; both are none where it does not exist (contract §5: null).
-struct BudgetFigure {
-  std::optional<double> value;
-  std::optional<double> uncertainty;
-};
-
 /// The figure at a path in the budget's JSON, without the leading `budget.`; none where no figure can stand
 /// there.
-[[nodiscard]] std::optional<BudgetFigure> budget_figure(const Budget& budget, std::string_view path);
+[[nodiscard]] std::optional<Figure> budget_figure(const Budget& budget, std::string_view path);
 
 /// Every path that leads to a figure of this budget, stations and fields by name where they have one.
 [[nodiscard]] std::vector<std::string> budget_paths(const Budget& budget);

@@ -71,15 +71,26 @@ std::optional<Side> substrate_side(const Assembly& assembly, const assembly::Sur
   return surface.coating->substrate;
 }
 
-/// The substrate at the first station that uses the coating and has a medium there.
+/// The medium on that side, where there is one.
+std::optional<Medium> substrate_at(const Assembly& assembly, const assembly::Surface& surface,
+                                   const Coating* coating) {
+  const std::optional<Side> side = substrate_side(assembly, surface, coating);
+  if (side == Side::before)
+    return assembly.media[surface.before];
+  return side && surface.beyond ? std::optional(assembly.media[*surface.beyond]) : std::nullopt;
+}
+
+/// The substrate at the first station that uses the coating, there or on its rear face, and has a medium
+/// there.
 std::optional<Medium> substrate_in_train(const Assembly& assembly, const Coating* coating) {
   for (const assembly::Station& station : assembly.stations) {
     const assembly::Surface& surface = assembly.surfaces[station.surface];
-    const std::optional<Side> side = substrate_side(assembly, surface, coating);
-    if (side == Side::before)
-      return assembly.media[surface.before];
-    if (side && surface.beyond)
-      return assembly.media[*surface.beyond];
+    if (auto medium = substrate_at(assembly, surface, coating))
+      return medium;
+    if (!surface.rear)
+      continue;
+    if (auto medium = substrate_at(assembly, assembly.surfaces[surface.rear->surface], coating))
+      return medium;
   }
   return std::nullopt;
 }

@@ -6,13 +6,16 @@
 
 #include <lightledger/analysis/coating_curve.hpp>
 #include <lightledger/analysis/medium_table.hpp>
+#include <lightledger/analysis/polarization.hpp>
 #include <lightledger/analysis/requirements.hpp>
 #include <lightledger/report/budget.hpp>
 #include <lightledger/report/check.hpp>
 #include <lightledger/report/coating.hpp>
 #include <lightledger/report/drawing.hpp>
+#include <lightledger/report/ghosts.hpp>
 #include <lightledger/report/media.hpp>
 #include <lightledger/report/page.hpp>
+#include <lightledger/report/polarization.hpp>
 
 #include <chrono>
 #include <utility>
@@ -83,6 +86,32 @@ Answer answer_budget(const Options& options, const Input& input) {
       });
 }
 
+Answer answer_ghosts(const Options& options, const Input& input) {
+  analysis::GhostOptions wanted = options.ghosts;
+  wanted.threads = options.threads;
+  wanted.maps = options.images.has_value();
+  const auto start = std::chrono::steady_clock::now();
+  const analysis::GhostsResult result = analysis::ghosts(*input.assembly, wanted);
+  const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
+  refuse_file(result.faults, input);
+
+  const report::Envelope envelope = envelope_of(options, input, joined(input, result.warnings));
+  report::GhostsTextOptions shown;
+  shown.returned = options.returned;
+  if (wanted.top)
+    shown.rows = *wanted.top;
+  Answer answer = written(
+      options, [&] { return report::ghosts_json(envelope, *result.ghosts, options.returned); },
+      [&] { return report::ghosts_csv(*result.ghosts); },
+      [&] {
+        return report::ghosts_text(*input.assembly, *result.ghosts, envelope.warnings, elapsed, shown,
+                                   style_of(options));
+      });
+  if (options.images)
+    answer.files = report::ghosts_files(*result.ghosts);
+  return answer;
+}
+
 Answer answer_check(const Options& options, const Input& input) {
   const analysis::CheckResult result = analysis::check(*input.assembly, {.threads = options.threads});
   refuse_file(result.faults, input);
@@ -95,6 +124,27 @@ Answer answer_check(const Options& options, const Input& input) {
         return report::check_text(*input.assembly, *result.judgement, envelope.warnings, style_of(options));
       });
   answer.met = result.judgement->all_met();
+  return answer;
+}
+
+Answer answer_polarization(const Options& options, const Input& input) {
+  const auto start = std::chrono::steady_clock::now();
+  const analysis::PolarizationResult result = analysis::polarization(
+      *input.assembly,
+      {.against = options.against, .maps = options.maps.has_value(), .threads = options.threads});
+  const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
+  refuse_file(result.faults, input);
+
+  const report::Envelope envelope = envelope_of(options, input, joined(input, result.warnings));
+  Answer answer = written(
+      options, [&] { return report::polarization_json(envelope, *input.assembly, *result.polarization); },
+      [&] { return report::polarization_csv(*result.polarization); },
+      [&] {
+        return report::polarization_text(*input.assembly, *result.polarization, envelope.warnings, elapsed,
+                                         style_of(options));
+      });
+  if (options.maps)
+    answer.files = report::polarization_files(*input.assembly, *result.polarization);
   return answer;
 }
 
@@ -203,6 +253,10 @@ Answer answer(const Options& options, const Input& input) {
     return answer_budget(options, input);
   case Command::check:
     return answer_check(options, input);
+  case Command::ghosts:
+    return answer_ghosts(options, input);
+  case Command::polarization:
+    return answer_polarization(options, input);
   case Command::coating:
     return answer_coating(options, input);
   case Command::draw:

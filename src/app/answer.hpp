@@ -3,6 +3,7 @@
 #include "options.hpp"
 
 #include <lightledger/assembly/assembly.hpp>
+#include <lightledger/report/named_file.hpp>
 
 #include <optional>
 #include <string>
@@ -23,8 +24,9 @@ struct Input {
 /// What a command has to say; documents that nobody asked for are empty.
 struct Answer {
   std::string text, json, csv;
-  std::string out; ///< the picture or page
-  bool met = true; ///< false where `check` finds a requirement not met, or cannot tell
+  std::string out;                      ///< the picture or page
+  std::vector<report::NamedFile> files; ///< for the folder that was asked for
+  bool met = true;                      ///< false where `check` finds a requirement not met, or cannot tell
 };
 
 /// Runs the command. Throws InputError where the input turns out to be wrong.

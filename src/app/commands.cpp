@@ -1,21 +1,19 @@
 #include "commands.hpp"
 
 #include <algorithm>
-#include <array>
 
 namespace lightledger::app {
-namespace {
-
-constexpr std::array<std::string_view, 2> planned{"ghosts", "polarization"};
-
-} // namespace
-
 const std::vector<CommandInfo>& commands() {
   static const std::vector<CommandInfo> all{
       {Command::check, "check", "FILE", "Is the file sound, and are its requirements met?",
        "lightledger check systems/fog-bank-lidar.yaml"},
       {Command::budget, "budget", "FILE", "How much light arrives, and where did the rest go?",
        "lightledger budget systems/fog-bank-lidar.yaml --json -"},
+      {Command::ghosts, "ghosts", "FILE", "Which unintended reflections reach the detector, and how bright?",
+       "lightledger ghosts systems/tide-pool-camera.yaml --top 5"},
+      {Command::polarization, "polarization", "FILE",
+       "What happens to the state of polarization, and which station does it?",
+       "lightledger polarization systems/relay-terminal.yaml --against wavelength --maps maps"},
       {Command::coating, "coating", "FILE NAME", "What does a coating do against wavelength and angle?",
        "lightledger coating systems/fog-bank-lidar.yaml lens_ar --wavelengths 500:560:20 --angles 0:30:15"},
       {Command::media, "media", "[NAME]", "Which media are known, and what are n and kappa of one?",
@@ -36,12 +34,8 @@ const CommandInfo* find_command(std::string_view name) {
   return found == commands().end() ? nullptr : &*found;
 }
 
-bool is_planned(std::string_view name) {
-  return std::ranges::find(planned, name) != planned.end();
-}
-
 std::vector<std::string_view> command_names() {
-  std::vector<std::string_view> names(planned.begin(), planned.end());
+  std::vector<std::string_view> names;
   for (const CommandInfo& command : commands())
     names.emplace_back(command.name);
   return names;

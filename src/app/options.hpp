@@ -4,6 +4,8 @@
 
 #include <lightledger/analysis/budget.hpp>
 #include <lightledger/analysis/drawing.hpp>
+#include <lightledger/analysis/ghosts.hpp>
+#include <lightledger/analysis/polarization.hpp>
 #include <lightledger/assembly/load.hpp>
 
 #include <optional>
@@ -26,6 +28,11 @@ struct Options {
   bool allow_outside = false; ///< measured curves may lie outside the assembly file's folder
 
   analysis::Split split = analysis::Split::none;
+  analysis::GhostOptions ghosts;
+  bool returned = false;             ///< ghosts: list what leaves through the front too
+  std::optional<std::string> images; ///< the folder for pictures
+  analysis::Against against = analysis::Against::nothing;
+  std::optional<std::string> maps; ///< a folder
   std::optional<std::string> incident, substrate;
   std::vector<double> wavelengths_nm, angles_deg; ///< empty where not given
 

@@ -15,6 +15,8 @@ Outputs::Outputs(const Options& options) {
   open("--json", options.json, &Answer::json);
   open("--csv", options.csv, &Answer::csv);
   open("--out", options.out, &Answer::out);
+  open_folder("--maps", options.maps);
+  open_folder("--images", options.images);
   refuse_clashes(options);
   if (!m_faults.none())
     throw InputError(assembly::describe(m_faults, "lightledger", "") + command_usage(info(options.command)) +
@@ -36,6 +38,20 @@ void Outputs::open(const char* option, const std::optional<std::string>& path,
   }
 }
 
+void Outputs::open_folder(const char* option, const std::optional<std::string>& path) {
+  if (!path)
+    return;
+  try {
+    m_folder.emplace(*path);
+  } catch (const std::system_error& error) {
+    m_faults.add(
+        {{},
+         fmt::format("{}: '{}' is no folder to write into: {}", option, *path, error.code().message()),
+         {},
+         {}});
+  }
+}
+
 void Outputs::refuse_clashes(const Options& options) {
   for (const Target& target : m_targets)
     if (target.output->is_file(options.file))
@@ -51,6 +67,8 @@ void Outputs::refuse_clashes(const Options& options) {
 }
 
 void Outputs::write(const Answer& answer) {
+  if (m_folder)
+    m_folder->write(answer.files);
   bool stdout_is_taken = false;
   for (const Target& target : m_targets)
     if (target.output->is_stdout())

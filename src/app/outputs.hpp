@@ -1,6 +1,7 @@
 #pragma once
 
 #include "answer.hpp"
+#include "folder.hpp"
 #include "options.hpp"
 #include "output.hpp"
 
@@ -31,10 +32,12 @@ private:
   };
 
   void open(const char* option, const std::optional<std::string>& path, std::string Answer::*document);
+  void open_folder(const char* option, const std::optional<std::string>& path);
   void refuse_clashes(const Options& options);
 
   std::vector<Target> m_targets;
   assembly::Faults m_faults;
+  std::optional<Folder> m_folder;
 };
 
 } // namespace lightledger::app

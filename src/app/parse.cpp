@@ -38,9 +38,6 @@ bool asks_for_help(std::string_view word) {
 const CommandInfo& command_of(const std::string& word) {
   if (const CommandInfo* command = find_command(word))
     return *command;
-  if (is_planned(word))
-    refuse({{}, fmt::format("the command '{}' is not available in this version", word), {}, {}},
-           program_usage());
   if (word.starts_with('-'))
     refuse({{}, fmt::format("'{}' stands where the command should", word), "options after the command", {}},
            program_usage());
@@ -53,6 +50,8 @@ const CommandInfo& command_of(const std::string& word) {
           std::string(assembly::nearest(word, command_names()))},
          program_usage());
 }
+
+constexpr std::uint64_t most_paths = 10'000;
 
 /// Turns the words of one command into options, and notes what is wrong with them.
 class Reader {
@@ -73,9 +72,11 @@ private:
   void read_sampling(const Words& words);
   void read_threads(const std::vector<std::string>& values);
   void read_isa(const std::vector<std::string>& values);
+  void read_ghosts(const Words& words);
   void read_split(const std::vector<std::string>& values);
   void read_out(const std::vector<std::string>& values);
   void read_view(const std::vector<std::string>& values);
+  void read_against(const std::vector<std::string>& values);
   std::vector<double> read_steps(const char* option, const std::vector<std::string>& values);
 
   /// The value of an option that may be given once.
@@ -99,7 +100,10 @@ Options Reader::read(const Words& words) {
   m_options.decibels = words.decibels;
   m_options.quiet = words.quiet;
   m_options.allow_outside = words.allow_outside;
+  read_ghosts(words);
   read_split(words.split);
+  read_against(words.against);
+  m_options.maps = single("--maps", words.maps);
   m_options.incident = single("--incident", words.incident);
   m_options.substrate = single("--substrate", words.substrate);
   m_options.wavelengths_nm = read_steps("--wavelengths", words.wavelengths);
@@ -202,6 +206,31 @@ void Reader::read_isa(const std::vector<std::string>& values) {
     note(fmt::format("there is no instruction set '{}'", *word), "portable");
 }
 
+void Reader::read_ghosts(const Words& words) {
+  analysis::GhostOptions& ghosts = m_options.ghosts;
+  if (const auto bounces = single("--bounces", words.bounces)) {
+    if (*bounces == "2" || *bounces == "4")
+      ghosts.bounces = *bounces == "2" ? 2 : 4;
+    else
+      note(fmt::format("--bounces '{}' is not followed", *bounces), "2, 4");
+  }
+  if (const auto floor = single("--floor", words.floor)) {
+    const auto share = finite_number(*floor);
+    if (share && *share >= 0.0 && *share < 1.0)
+      ghosts.floor = *share;
+    else
+      note(fmt::format("--floor '{}' is no share of power", *floor), "a number from 0 to below 1");
+  }
+  if (const auto top = single("--top", words.top)) {
+    ghosts.top = whole_number(*top, 1, most_paths);
+    if (!ghosts.top)
+      note(fmt::format("--top '{}' is no count of paths", *top), "a whole number from 1 to 10 000");
+  }
+  ghosts.field = single("--field", words.field);
+  m_options.images = single("--images", words.images);
+  m_options.returned = words.returned;
+}
+
 void Reader::read_split(const std::vector<std::string>& values) {
   const std::optional<std::string> word = single("--split", values);
   if (!word)
@@ -236,6 +265,19 @@ void Reader::read_view(const std::vector<std::string>& values) {
     note(fmt::format("--view '{}' is no view", *word), "x, y, z, all");
 }
 
+void Reader::read_against(const std::vector<std::string>& values) {
+  const std::optional<std::string> word = single("--against", values);
+  if (!word)
+    return;
+  if (*word == "wavelength")
+    m_options.against = analysis::Against::wavelength;
+  else if (*word == "angle")
+    m_options.against = analysis::Against::angle;
+  else
+    note(fmt::format("--against '{}' is nothing to set the figures against", *word), "wavelength, angle",
+         std::string(assembly::nearest(*word, {"wavelength", "angle"})));
+}
+
 std::vector<double> Reader::read_steps(const char* option, const std::vector<std::string>& values) {
   constexpr std::size_t most_values = 100'000;
   const std::optional<std::string> word = single(option, values);
@@ -267,7 +309,7 @@ std::variant<std::string, Options> parse(const std::vector<std::string>& argumen
   try {
     options = reader.read(sort_words(command.command, {arguments.begin() + 1, arguments.end()}));
   } catch (const CLI::ParseError&) {
-    refuse({{}, "a switch takes no value", "--db, --quiet or --allow-outside alone", {}},
+    refuse({{}, "a switch takes no value", "--db, --quiet, --returned or --allow-outside alone", {}},
            command_usage(command));
   }
   if (!reader.faults().none())

@@ -39,6 +39,10 @@ const std::vector<OptionInfo>& own_options(Command command) {
   static const std::vector<OptionInfo> none;
   static const std::vector<OptionInfo> budget{
       {"--split", "wavelength|field", "a ledger for each wavelength or field as well", &Words::split}};
+  static const std::vector<OptionInfo> polarization{
+      {"--against", "wavelength|angle", "a table against the wavelength or the field as well",
+       &Words::against},
+      {"--maps", "FOLDER", "maps over the pupil, and the table's charts, into a folder", &Words::maps}};
   static const OptionInfo wavelengths{"--wavelengths", "START:STOP:STEP", "in nm, or one number",
                                       &Words::wavelengths};
   static const std::vector<OptionInfo> coating{
@@ -54,9 +58,20 @@ const std::vector<OptionInfo>& own_options(Command command) {
        &Words::view}};
   static const std::vector<OptionInfo> report{
       {"--out", "PATH", "the page; NAME.html in the current folder without it, - is stdout", &Words::out}};
+  static const std::vector<OptionInfo> ghosts{
+      {"--bounces", "2|4", "follow at most so many; 2 without it", &Words::bounces},
+      {"--floor", "X", "leave beams below this share of the launched power; 1e-12", &Words::floor},
+      {"--top", "N", "list the N brightest paths", &Words::top},
+      {"--field", "NAME", "the light of one field alone: its name, or its number from 1", &Words::field},
+      {"--returned", nullptr, "list what leaves through the front too", nullptr, &Words::returned},
+      {"--images", "FOLDER", "pictures of the listed ghosts on the detector", &Words::images}};
   switch (command) {
   case Command::budget:
     return budget;
+  case Command::ghosts:
+    return ghosts;
+  case Command::polarization:
+    return polarization;
   case Command::coating:
     return coating;
   case Command::media:

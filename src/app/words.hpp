@@ -12,10 +12,12 @@ struct Words {
   std::vector<std::string> positionals;
   std::vector<std::string> unknown; ///< options that the command does not have
   std::vector<std::string> json, csv, rays, accuracy, threads, isa, set;
-  std::vector<std::string> split, incident, substrate, wavelengths, angles;
+  std::vector<std::string> bounces, floor, top, field, images;
+  std::vector<std::string> split, against, maps, incident, substrate, wavelengths, angles;
   std::vector<std::string> out, view;
   bool decibels = false;
   bool quiet = false;
+  bool returned = false;
   bool allow_outside = false;
 };
 

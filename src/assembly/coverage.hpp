@@ -27,6 +27,8 @@ public:
   /// A fault where measured curves of this file do not reach one of the light's wavelengths.
   void check_measured(const Measured& measured, std::string_view file, Mark use);
 
+  /// The first of the light's wavelengths at which the medium is opaque; none where it never is.
+  [[nodiscard]] std::optional<double> opaque_at_nm(MediumId id) { return known(id).opaque_nm; }
   /// Whether the medium is a gas at all wavelengths; none where that is not known.
   [[nodiscard]] std::optional<bool> gas(MediumId id);
 

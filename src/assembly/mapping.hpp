@@ -42,8 +42,6 @@ public:
 
   /// Refuses a key for a reason, the message being `'key' reason`. Whether it stands here.
   bool forbid(std::string_view key, std::string_view reason, std::string_view accepted = {});
-  /// A key of the assembly file that this version does not know how to follow. Whether it stands here.
-  bool unavailable(std::string_view key) { return forbid(key, "is not available in this version"); }
   /// The one key of several alternatives that stands here; none, and a fault, where more than one does.
   std::optional<std::string_view> one_of(const Keys& keys, std::string_view accepted);
   /// The same where one must stand.

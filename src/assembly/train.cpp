@@ -73,12 +73,14 @@ void Train::read_first_visit(Mapping& station, Does does, Next next) {
   Station result{};
   result.name = read_name(station);
   result.surface = static_cast<SurfaceId>(m_assembly.surfaces.size());
-  Met met{result.name, result.surface, does, false, 0, {}};
+  Met met{result.name, result.surface, does, false, false, 0, {}};
   const bool arriving_known = m_current_known;
   const std::size_t faults = m_reader.fault_count();
-  const Surface surface = read_surface(station, does);
+  Surface surface = read_surface(station, does);
+  const auto rear = does == Does::reflect ? read_rear(station, result.name, surface) : std::nullopt;
   met.media_known =
       arriving_known && m_reader.fault_count() == faults && (does != Does::refract || surface.beyond);
+  met.rear = rear.has_value();
   met.before = surface.before;
   met.beyond = surface.beyond;
   if (does == Does::stop)
@@ -90,8 +92,11 @@ void Train::read_first_visit(Mapping& station, Does does, Next next) {
   station.finish();
   if (!result.name.empty())
     m_met[result.name] = met;
-  if (m_reader.fault_count() == 0) // else nothing will come of it, so nothing is kept
+  if (m_reader.fault_count() == 0) { // else nothing will come of it, so nothing is kept
     m_assembly.surfaces.push_back(surface);
+    if (rear)
+      m_assembly.surfaces.push_back(*rear);
+  }
   keep(station, does, std::move(result), next);
 }
 
@@ -119,12 +124,15 @@ std::string Train::new_name(Value value, const std::string& name) {
                    "a name of its own for every station",
                    {}};
     });
+  if (const auto front = std::as_const(m_rears).find(name); front != m_rears.end())
+    m_reader.fault(m_reader.mark(value),
+                   fmt::format("the rear face of {} is called {}", quoted(front->second), quoted(name)),
+                   "a name of its own for every station");
   return name;
 }
 
 /// The action of a station, which a mapping of that name may stand for.
 Train::Does Train::read_does(Mapping& station) {
-  station.unavailable("rear");
   const auto value = station.take("does");
   const Does does = value ? action(*value, actions) : Does::refract;
   std::vector<std::string_view> written;

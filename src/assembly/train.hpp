@@ -42,6 +42,7 @@ private:
     SurfaceId surface = 0;
     Does does = Does::unavailable; ///< on the first visit
     bool media_known = false;
+    bool rear = false; ///< it is the front of a plate
     MediumId before = 0;
     std::optional<MediumId> beyond;
 
@@ -69,12 +70,16 @@ private:
   void forbid_surface_keys(Mapping& station, const Met* met);
   void arrive_again(const Met& met, Mark mark);
   void refract_again(Mapping& station, const Met* met);
+  void refuse_passing_plate(const Met& met, Mark mark);
   [[nodiscard]] std::string between(const Met& met) const;
 
   Surface read_surface(Mapping& station, Does does);
   Effect read_effect(Mapping& station, Does does);
   void read_refracting(Mapping& station, Surface& surface);
   void read_reflecting(Mapping& station, Surface& surface);
+  std::optional<Surface> read_rear(Mapping& station, const std::string& name, Surface& front);
+  void check_plate(const Mapping& station, const Surface& front);
+  void reserve_rear_name(const Mapping& station, const std::string& name);
   Sensor read_sensor(Mapping& station);
 
   std::optional<CoatingWritten> read_coating(Mapping& station);
@@ -94,7 +99,8 @@ private:
   std::vector<bool> m_coating_used;
   bool m_actions_known = true; ///< of all stations so far
   bool m_stop_met = false;
-  std::map<std::string, Met> m_met; ///< all stations so far, by name
+  std::map<std::string, Met> m_met;           ///< all stations so far, by name
+  std::map<std::string, std::string> m_rears; ///< the fronts of all rear faces so far, by the rear's name
 };
 
 } // namespace lightledger::assembly

@@ -11,9 +11,9 @@ namespace lightledger::assembly {
 namespace {
 
 const std::vector<std::string_view> actions{"refract", "reflect"};
-constexpr std::array<std::string_view, 11> surface_keys{"radius",    "conic", "asphere",    "tilt",
-                                                        "shift",     "clear", "coating",    "backing",
-                                                        "roughness", "loss",  "reflectance"};
+constexpr std::array<std::string_view, 12> surface_keys{"radius", "conic",     "asphere", "tilt",
+                                                        "shift",  "clear",     "coating", "backing",
+                                                        "rear",   "roughness", "loss",    "reflectance"};
 
 } // namespace
 
@@ -28,6 +28,8 @@ void Train::read_again(Mapping& station, Next next) {
     station.call("a reflecting station with 'again'");
   if (does == Does::refract)
     refract_again(station, met);
+  if (does == Does::refract && met != nullptr && met->rear)
+    refuse_passing_plate(*met, m_reader.mark(earlier));
   forbid_surface_keys(station, met);
   m_current_known = m_current_known && does != Does::unavailable;
   Station result{};
@@ -105,6 +107,13 @@ void Train::arrive_again(const Met& met, Mark mark) {
   m_reader.fault(
       mark, fmt::format("the light arrives in {}, but {}", m_assembly.media[m_current].name, between(met)));
   m_current_known = false;
+}
+
+/// Light that passes the front of a plate meets its rear face, which no station can stand for.
+void Train::refuse_passing_plate(const Met& met, Mark mark) {
+  m_reader.fault(
+      mark, fmt::format("the light would pass {}, behind which its 'rear' stands", quoted(met.first_visit)),
+      fmt::format("{} without 'rear', and that face as a station of its own", quoted(met.first_visit)));
 }
 
 void Train::refract_again(Mapping& station, const Met* met) {

@@ -15,6 +15,8 @@ constexpr std::string_view substrate_forms =
 
 void Train::read_refracting(Mapping& station, Surface& surface) {
   const auto into = station.need("into");
+  station.forbid("rear",
+                 "belongs to a reflecting station; at this one the back face is a station of its own");
   const auto coating = read_coating(station);
   surface.roughness_nm = station.number_or(0.0, "roughness", Unit::nanometres, Bound::not_negative);
   surface.beyond = into ? m_media.named(*into) : std::nullopt;

@@ -25,7 +25,7 @@ std::string verdict_word(const Verdict& verdict) {
 
 /// Angles, counts and errors are no fractions of power and have no level in dB.
 bool is_fraction(std::string_view quantity) {
-  constexpr std::array<std::string_view, 4> others{"incidence_deg", "rays", "closure_error", "uncertainty"};
+  constexpr std::array<std::string_view, 4> others{"_deg", "rays", "closure_error", "uncertainty"};
   return std::ranges::none_of(
       others, [&](std::string_view other) { return quantity.find(other) != std::string_view::npos; });
 }

@@ -52,7 +52,7 @@ public:
   /// The launch ellipse of a field, or none; then failure() tells why.
   std::optional<Footprint> footprint(const Field& field) {
     const auto half = half_lengths(m_clear);
-    const auto centre = aim_at_centre(field);
+    const auto centre = aim_at(field, stop_centre());
     if (!half || !centre)
       return std::nullopt;
     const Source source(m_assembly.light, field);
@@ -66,6 +66,19 @@ public:
     const Vector2d first = 0.5 * (*right - *left);
     const Vector2d second = 0.5 * (*up - *down);
     return Footprint{{middle[0], middle[1]}, {first[0], first[1]}, {second[0], second[1]}};
+  }
+
+  /// The launch point from which a field's ray meets the stop at a point of it. From the axial field, whose
+  /// ray runs near the axis, out to the field wanted.
+  std::optional<Vector2d> aim_at(const Field& field, const Vector2d& target) {
+    const auto share_of = [&](double share) {
+      return Source(m_assembly.light, Field{{share * field.at[0], share * field.at[1]}, 1.0, {}});
+    };
+    const auto axial = newton(share_of(0.0), target, Vector2d::Zero());
+    if (!axial)
+      return std::nullopt;
+    return follow(
+        *axial, [&](double share, const Vector2d& start) { return newton(share_of(share), target, start); });
   }
 
   [[nodiscard]] const std::string& failure() const { return m_failure; }
@@ -165,19 +178,6 @@ private:
     return launch;
   }
 
-  /// From the axial field, whose centre ray runs near the axis, out to the field wanted.
-  std::optional<Vector2d> aim_at_centre(const Field& field) {
-    const auto share_of = [&](double share) {
-      return Source(m_assembly.light, Field{{share * field.at[0], share * field.at[1]}, 1.0, {}});
-    };
-    const auto axial = newton(share_of(0.0), stop_centre(), Vector2d::Zero());
-    if (!axial)
-      return std::nullopt;
-    return follow(*axial, [&](double share, const Vector2d& start) {
-      return newton(share_of(share), stop_centre(), start);
-    });
-  }
-
   std::optional<Vector2d> aim_outward(const Source& source, const Vector2d& centre, const Vector2d& edge) {
     return follow(centre, [&](double share, const Vector2d& start) {
       return newton(source, stop_centre() + share * edge, start);
@@ -236,6 +236,17 @@ std::optional<std::vector<Footprint>> footprints(const Assembly& assembly, const
                         assembly.stations[*stop].name, aimer.failure()));
   }
   return all.size() == fields.size() ? std::optional(std::move(all)) : std::nullopt;
+}
+
+std::optional<std::array<double, 2>> chief_launch(const Assembly& assembly, const Path& path,
+                                                  const Plan& plan, const Field& field) {
+  const auto stop = first_stop(assembly);
+  if (!stop)
+    return assembly.light.beam.at;
+  const auto launch = Aimer(assembly, path, plan, *stop).aim_at(field, Vector2d::Zero());
+  if (!launch)
+    return std::nullopt;
+  return std::array{(*launch)[0], (*launch)[1]};
 }
 
 } // namespace lightledger::trace

@@ -66,6 +66,13 @@ Matrix3d reflected(const Matrix3d& axes, const Vector3d& normal) {
   return behind;
 }
 
+/// Behind the front by the plate's thickness, as seen by light that arrives along `arrival` times the front's
+/// normal; parallel to its vertex's tangent plane but for the wedge.
+Frame rear_face(const assembly::Rear& rear, const Frame& front, double arrival) {
+  return {front.origin + arrival * rear.thickness * front.axes.col(2),
+          front.axes * rotation({rear.wedge_deg[0], rear.wedge_deg[1], 0.0})};
+}
+
 /// Walks the axis from station to station and notes where everything stands.
 class Surveyor {
 public:
@@ -115,6 +122,8 @@ private:
     frame.origin =
         m_axis.origin + m_axis.axes.leftCols<2>() * Eigen::Map<const Eigen::Vector2d>(surface.shift.data());
     m_arrival[station.surface] = std::copysign(1.0, m_axis.axes.col(2).dot(frame.axes.col(2)));
+    if (surface.rear)
+      m_bench.surface[surface.rear->surface] = rear_face(*surface.rear, frame, m_arrival[station.surface]);
   }
 
   [[nodiscard]] Side side(const Station& station) const {
@@ -132,6 +141,8 @@ private:
       return fault(visit, "",
                    fmt::format("'{}' is met from its side in {}, but the light arrives in {}", station.name,
                                m_assembly.media[here].name, m_assembly.media[m_medium].name));
+    if (surface.rear && from == Side::beyond)
+      return fault(visit, "", fmt::format("'{}' is met from behind, where its 'rear' stands", station.name));
     if (station.intended == Act::pass)
       m_medium = from == Side::before ? beyond : surface.before;
     return true;

@@ -1,5 +1,7 @@
 #include <lightledger/trace/parallel.hpp>
 
+#include "handover.hpp"
+
 #include <tbb/global_control.h>
 #include <tbb/parallel_for.h>
 #include <tbb/task_arena.h>
@@ -7,18 +9,35 @@
 namespace lightledger::trace {
 
 void parallel_jobs(std::size_t count, const std::function<void(std::size_t)>& job) {
-  tbb::parallel_for(std::size_t{0}, count, job);
+  Handover to_jobs;
+  Handover from_jobs;
+  to_jobs.give();
+  tbb::parallel_for(std::size_t{0}, count, [&](std::size_t number) {
+    to_jobs.take();
+    job(number);
+    from_jobs.give();
+  });
+  from_jobs.take();
 }
 
 void with_threads(int threads, const std::function<void()>& work) {
+  Handover to_work;
+  Handover from_work;
+  const auto handed_over = [&] {
+    to_work.take();
+    work();
+    from_work.give();
+  };
+  to_work.give();
   if (threads <= 0) {
-    tbb::task_arena().execute(work);
-    return;
+    tbb::task_arena().execute(handed_over);
+  } else {
+    // A number asked for holds also where the machine has fewer cores.
+    const tbb::global_control allowed(tbb::global_control::max_allowed_parallelism,
+                                      static_cast<std::size_t>(threads));
+    tbb::task_arena(threads).execute(handed_over);
   }
-  // A number asked for holds also where the machine has fewer cores.
-  const tbb::global_control allowed(tbb::global_control::max_allowed_parallelism,
-                                    static_cast<std::size_t>(threads));
-  tbb::task_arena(threads).execute(work);
+  from_work.take();
 }
 
 } // namespace lightledger::trace

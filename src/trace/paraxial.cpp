@@ -30,12 +30,15 @@ ParaxialRay::ParaxialRay(const Assembly& assembly)
 }
 
 void ParaxialRay::meet(const assembly::Station& station, Side from) {
-  const assembly::Surface& surface = m_assembly.surfaces[station.surface];
+  meet(m_assembly.surfaces[station.surface], from, station.intended == Act::bounce);
+}
+
+void ParaxialRay::meet(const assembly::Surface& surface, Side from, bool bounces) {
   const double sign = from == Side::before ? 1.0 : -1.0;
   const double c = sign * std::visit([](const auto& shape) { return curvature(shape); }, surface.shape);
   double next = m_index;
   double power = 0.0;
-  if (station.intended == Act::bounce) {
+  if (bounces) {
     power = -2.0 * m_index * c;
   } else if (std::holds_alternative<assembly::Interface>(surface.effect)) {
     next = index(from == Side::before ? *surface.beyond : surface.before);
@@ -46,11 +49,15 @@ void ParaxialRay::meet(const assembly::Station& station, Side from) {
   m_largest_slope = std::max(m_largest_slope, std::abs(m_height * power));
 }
 
-std::optional<double> ParaxialRay::image_distance() const {
+std::optional<double> ParaxialRay::signed_image_distance() const {
   if (std::abs(m_slope) <= parallel())
     return std::nullopt;
-  const double distance = -m_height * m_index / m_slope;
-  return distance >= 0.0 ? std::optional(distance) : std::nullopt;
+  return -m_height * m_index / m_slope;
+}
+
+std::optional<double> ParaxialRay::image_distance() const {
+  const std::optional<double> distance = signed_image_distance();
+  return distance && *distance >= 0.0 ? distance : std::nullopt;
 }
 
 const char* ParaxialRay::why_no_image() const {

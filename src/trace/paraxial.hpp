@@ -14,10 +14,14 @@ public:
 
   /// Refraction or reflection by the vertex curvature of a station's surface, met from one of its sides.
   void meet(const assembly::Station& station, assembly::Side from);
+  /// Refraction or, where it bounces, reflection by a surface.
+  void meet(const assembly::Surface& surface, assembly::Side from, bool bounces);
   void advance(double gap) { m_height += gap * m_slope / m_index; }
 
   /// From the last station met to the image, in mm; none where it is virtual or infinitely far.
   [[nodiscard]] std::optional<double> image_distance() const;
+  /// The same, negative where the image is virtual; none where it is infinitely far.
+  [[nodiscard]] std::optional<double> signed_image_distance() const;
   [[nodiscard]] const char* why_no_image() const;
 
 private:

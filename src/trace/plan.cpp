@@ -23,9 +23,8 @@ static_assert(PlanOp::lowest_power + PlanOp::terms - 1 == assembly::Asphere::hig
 constexpr double nm_per_mm = 1e6;
 
 PlanLeg compile(const Leg& leg, const Assembly& assembly, const Bench& bench, double wavelength_nm) {
-  const Frame& from =
-      leg.launch ? bench.arriving.front() : bench.surface[assembly.stations[leg.from].surface];
-  const Frame& to = bench.surface[assembly.stations[leg.to].surface];
+  const Frame& from = leg.launch ? bench.arriving.front() : bench.surface[leg.from];
+  const Frame& to = bench.surface[leg.to];
   const bool aligned = from.axes == to.axes;
   Eigen::Matrix3d turn = Eigen::Matrix3d::Identity(); // exact where no axis turns
   if (!aligned)

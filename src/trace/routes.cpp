@@ -9,7 +9,8 @@ using assembly::MediumId;
 using assembly::Side;
 
 constexpr std::size_t place(State state) {
-  return 2 * std::size_t{state.visit} + (state.heading == Heading::against ? 1 : 0);
+  const std::size_t face = 3 * std::size_t{state.visit} + static_cast<std::size_t>(state.face);
+  return 2 * face + (state.heading == Heading::against ? 1 : 0);
 }
 
 constexpr Side other(Side side) {
@@ -23,9 +24,11 @@ Routes::Routes(const Assembly& assembly, std::vector<Side> from)
   for (StationId visit = 0; visit < m_stations; ++visit)
     m_exit.push_back(assembly.stations[visit].intended == Act::pass ? other(m_entry[visit]) : m_entry[visit]);
   lay_legs(assembly);
+  lay_legs_in_plates(assembly);
   for (StationId visit = 0; visit < m_stations; ++visit)
-    for (const Heading heading : {Heading::along, Heading::against})
-      m_meetings.push_back(meeting(assembly, {visit, heading}));
+    for (const Face face : {Face::front, Face::rear, Face::inside})
+      for (const Heading heading : {Heading::along, Heading::against})
+        m_meetings.push_back(meeting(assembly, {visit, heading, face}));
 }
 
 void Routes::lay_legs(const Assembly& assembly) {
@@ -33,11 +36,25 @@ void Routes::lay_legs(const Assembly& assembly) {
     const assembly::Surface& surface = assembly.surfaces[assembly.stations[visit].surface];
     return m_exit[visit] == Side::before ? surface.before : surface.beyond.value_or(surface.before);
   };
-  m_legs.push_back({true, 0, 0, assembly.light.medium});
+  const auto surface = [&](StationId visit) { return assembly.stations[visit].surface; };
+  m_legs.push_back({true, 0, surface(0), assembly.light.medium});
   for (StationId visit = 1; visit < m_stations; ++visit)
-    m_legs.push_back({false, visit - 1, visit, medium_behind(visit - 1)});
+    m_legs.push_back({false, surface(visit - 1), surface(visit), medium_behind(visit - 1)});
   for (StationId visit = 1; visit < m_stations; ++visit)
-    m_legs.push_back({false, visit, visit - 1, medium_behind(visit - 1)});
+    m_legs.push_back({false, surface(visit), surface(visit - 1), medium_behind(visit - 1)});
+}
+
+void Routes::lay_legs_in_plates(const Assembly& assembly) {
+  m_into_plate.resize(assembly.surfaces.size());
+  for (assembly::SurfaceId front = 0; front < assembly.surfaces.size(); ++front) {
+    const auto& rear = assembly.surfaces[front].rear;
+    if (!rear)
+      continue;
+    const MediumId plate = assembly.surfaces[rear->surface].before;
+    m_into_plate[front] = static_cast<LegId>(m_legs.size());
+    m_legs.push_back({false, front, rear->surface, plate});
+    m_legs.push_back({false, rear->surface, front, plate});
+  }
 }
 
 Hop Routes::next(State state, Act act) const {
@@ -54,22 +71,61 @@ Hop Routes::next(State state, Act act) const {
 }
 
 OpId Routes::op(const Assembly& assembly, State state) const {
-  const Side met = state.heading == Heading::along ? m_entry[state.visit] : m_exit[state.visit];
-  return 2 * assembly.stations[state.visit].surface + (met == Side::beyond ? 1 : 0);
+  const assembly::SurfaceId surface = assembly.stations[state.visit].surface;
+  if (state.face == Face::rear)
+    return 2 * assembly.surfaces[surface].rear.value().surface;
+  const Side outside = state.heading == Heading::along ? m_entry[state.visit] : m_exit[state.visit];
+  const Side met = state.face == Face::inside ? other(outside) : outside;
+  return 2 * surface + (met == Side::beyond ? 1 : 0);
+}
+
+bool Routes::bounces(const Assembly& assembly, State state) {
+  return state.face != Face::front || assembly.stations[state.visit].intended != Act::bounce;
+}
+
+std::string Routes::bounce_name(const Assembly& assembly, State state) {
+  const std::string& name = assembly.stations[state.visit].name;
+  return state.face == Face::rear ? name + " rear" : name;
 }
 
 Routes::Meeting Routes::meeting(const Assembly& assembly, State state) const {
   const assembly::Station& station = assembly.stations[state.visit];
   const assembly::Surface& surface = assembly.surfaces[station.surface];
-  const bool along = state.heading == Heading::along;
+  if (state.face != Face::front && !surface.rear)
+    return {End::absorbed, End::absorbed, End::absorbed}; // where there is no plate, nothing comes
+  if (state.face != Face::front)
+    return meeting_in_plate(state, m_into_plate[station.surface]);
   if (station.intended == Act::detect)
     return {End::absorbed, backward(state.visit), End::detected};
   if (station.intended == Act::bounce)
-    return {End::leaked, along ? forward(state.visit) : backward(state.visit), End::absorbed};
-  const Hop across = along ? forward(state.visit) : backward(state.visit);
+    return {behind_mirror(assembly, state), onward(state), End::absorbed};
   if (std::holds_alternative<Interface>(surface.effect))
-    return {across, turned_back(assembly, state), End::absorbed};
-  return {across, End::absorbed, End::absorbed};
+    return {onward(state), turned_back(assembly, state), End::absorbed};
+  return {onward(state), End::absorbed, End::absorbed};
+}
+
+/// Light that passes a mirror is lost, unless a plate's rear face stands behind.
+Hop Routes::behind_mirror(const Assembly& assembly, State state) const {
+  const assembly::SurfaceId surface = assembly.stations[state.visit].surface;
+  if (!assembly.surfaces[surface].rear)
+    return End::leaked;
+  return Onward{{state.visit, state.heading, Face::rear}, m_into_plate[surface]};
+}
+
+/// Between the faces of a plate: what passes the rear is lost, and what passes the front from inside joins
+/// what the front reflects.
+Routes::Meeting Routes::meeting_in_plate(State state, LegId into_plate) const {
+  const auto to = [&](Face face, LegId leg) -> Hop {
+    return Onward{{state.visit, state.heading, face}, leg};
+  };
+  if (state.face == Face::rear)
+    return {End::leaked, to(Face::inside, into_plate + 1), End::absorbed};
+  return {onward(state), to(Face::rear, into_plate), End::absorbed};
+}
+
+/// As the train means it, in the light's heading.
+Hop Routes::onward(State state) const {
+  return state.heading == Heading::along ? forward(state.visit) : backward(state.visit);
 }
 
 /// Light reflected where it should pass joins the leg that leaves the surface on the same side on another

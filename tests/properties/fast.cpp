@@ -2,8 +2,7 @@
 
 #include "reference/disc.hpp"
 #include "reference/launch.hpp"
-
-#include <lightledger/trace/interact.hpp>
+#include "support/walk.hpp"
 
 #include <Eigen/Geometry>
 #include <algorithm>
@@ -85,21 +84,14 @@ Run run(const trace::Train& train, const RayBlock& launched, std::size_t wavelen
   Run result{trace::Ledger(train.assembly->stations.size()), {}, 0};
   result.ledger.launched = std::accumulate(launched.w, launched.w + launched.count, 0.0);
   RayBlock block = launched;
-  for (const trace::Path::Step& step : trace::intended_path(*train.assembly, train.routes).steps) {
-    if (block.alive == 0)
-      break;
-    trace::Entry entry;
-    trace::StepOut out;
-    out.entry = &entry;
-    out.bounces = step.act == trace::Act::bounce;
-    (out.bounces ? out.bounce : out.pass) = &block;
-    trace::interact(plan.legs[step.leg], plan.ops[step.op], coherency, block, out);
-    result.ledger.enter(step.visit, entry);
-    if (meddle)
-      meddle(step.visit, block);
-    result.behind.push_back(block);
-    ++result.reached;
-  }
+  support::follow(trace::intended_path(*train.assembly, train.routes).steps, plan, coherency, block,
+                  [&](const trace::Path::Step& step, const trace::Entry& entry, const trace::Tape&) {
+                    result.ledger.enter(step.visit, entry);
+                    if (meddle)
+                      meddle(step.visit, block);
+                    result.behind.push_back(block);
+                    ++result.reached;
+                  });
   return result;
 }
 

@@ -29,6 +29,14 @@ Frame vertex(const assembly::Surface& surface, const Frame& arriving) {
           arriving.axes * rotation(surface.tilt_deg)};
 }
 
+/// The back face of a plate: behind the front as the light arrives, parallel to it but for the wedge.
+Frame rear_face(const assembly::Rear& rear, const Frame& front, const Frame& arriving) {
+  const Vector normal = front.axes.col(2);
+  const Vector inward = normal.dot(arriving.axes.col(2)) > 0.0 ? normal : Vector(-normal);
+  return {front.origin + rear.thickness * inward,
+          front.axes * rotation({rear.wedge_deg[0], rear.wedge_deg[1], 0.0})};
+}
+
 /// The side that an axis arrives at, by the way it crosses the surface on the first visit and on this one.
 assembly::Side side(const Place& first, const Frame& arriving) {
   const Vector normal = first.surface.axes.col(2);
@@ -46,6 +54,7 @@ Place place(const assembly::Station& station, const Frame& arriving, const Frame
   here.leaving.axes =
       axes_behind(arriving.axes, here.surface.axes.col(2), station.intended) * rotation(station.turn_deg);
   here.gap = 0.0;
+  here.rear = {};
   return here;
 }
 
@@ -54,11 +63,17 @@ Place place_of(const assembly::Assembly& assembly, std::size_t i, const Bench& l
                const Frame& arriving) {
   const assembly::Station& station = assembly.stations[i];
   const std::size_t first = first_visit(assembly, i);
-  if (first == i)
-    return place(station, arriving, vertex(assembly.surfaces.at(station.surface), arriving),
-                 assembly::Side::before);
+  const assembly::Surface& surface = assembly.surfaces.at(station.surface);
+  if (first == i) {
+    Place here = place(station, arriving, vertex(surface, arriving), assembly::Side::before);
+    if (surface.rear)
+      here.rear = rear_face(*surface.rear, here.surface, arriving);
+    return here;
+  }
   const Place& there = laid_out.stations[first];
-  return place(station, arriving, there.surface, side(there, arriving));
+  Place here = place(station, arriving, there.surface, side(there, arriving));
+  here.rear = there.rear;
+  return here;
 }
 
 /// A paraxial ray in the meridional plane: its height, and its index times slope (positive away from the
@@ -105,6 +120,8 @@ void require_arrival_in(assembly::MediumId medium, const assembly::Surface& surf
   const bool before = from == assembly::Side::before;
   if ((before ? surface.before : surface.beyond.value_or(surface.before)) != medium)
     throw std::domain_error("the axis comes back to a surface in another medium");
+  if (surface.rear && !before)
+    throw std::domain_error("the axis comes back to a plate from behind");
 }
 
 } // namespace
@@ -163,8 +180,8 @@ Bench moved(const Bench& bench, const Frame& motion) {
   };
   Bench result;
   for (const Place& place : bench.stations)
-    result.stations.push_back(
-        {carry(place.arriving), carry(place.surface), carry(place.leaving), place.from, place.gap});
+    result.stations.push_back({carry(place.arriving), carry(place.surface), carry(place.leaving), place.from,
+                               place.gap, carry(place.rear)});
   return result;
 }
 

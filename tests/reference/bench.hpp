@@ -15,6 +15,7 @@ struct Place {
   Frame arriving, surface, leaving;
   assembly::Side from; ///< the side of the surface that the axis arrives at; `before` on its first visit
   double gap;          ///< in mm along the leaving axis; a focus, or a surface met again, found
+  Frame rear;          ///< of a plate: the vertex and axes of its back face
 };
 
 struct Bench {

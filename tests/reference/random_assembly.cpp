@@ -152,8 +152,12 @@ private:
     const std::size_t first = m_result.stations.size() - 1;
     mirror(8.0);
     const auto& beyond = m_result.surfaces[m_result.stations[first].surface].beyond;
-    const bool transparent = beyond && !contains(m_shelf.metals, *beyond);
-    again(first, transparent && m_dice.chance(0.5) ? Act::pass : Act::bounce);
+    const bool passable = beyond && !contains(m_shelf.metals, *beyond) && !rear_of(first);
+    again(first, passable && m_dice.chance(0.5) ? Act::pass : Act::bounce);
+  }
+
+  [[nodiscard]] const std::optional<assembly::Rear>& rear_of(std::size_t station) const {
+    return m_result.surfaces[m_result.stations[station].surface].rear;
   }
 
   /// Meets the surface of an earlier station again; false, and nothing happens, where the axis does not come
@@ -224,6 +228,24 @@ private:
       coat(surface, metallic ? 0.4 : 0.8);
     }
     add(surface, Act::bounce);
+    if (surface.beyond && contains(m_shelf.glasses, *surface.beyond) && m_dice.chance(0.6))
+      rear_face();
+  }
+
+  /// Makes the mirror added last the front of a plate.
+  void rear_face() {
+    Surface& front = m_result.surfaces.back();
+    front.rear = {static_cast<assembly::SurfaceId>(m_result.surfaces.size()),
+                  m_size * m_dice.between(0.2, 1.5),
+                  {m_dice.around_zero(1.0), m_dice.around_zero(1.0)}};
+    Surface rear;
+    rear.effect = assembly::Interface{};
+    rear.clear = front.clear;
+    rear.before = *front.beyond;
+    rear.beyond = front.before;
+    if (m_dice.chance(0.6))
+      rear.coating = coating(any_coating(), m_dice.one_of({assembly::Side::before, assembly::Side::beyond}));
+    m_result.surfaces.push_back(rear);
   }
 
   void detector() {

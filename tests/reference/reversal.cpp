@@ -87,6 +87,8 @@ Surface turned_round(Surface surface) {
   surface.shape = std::visit(FromBehind{}, surface.shape);
   surface.clear.at[1] = -surface.clear.at[1];
   turn_element_round(surface.effect);
+  if (surface.rear)
+    surface.rear->wedge_deg[1] = -surface.rear->wedge_deg[1];
   return surface;
 }
 
@@ -105,6 +107,8 @@ Reversed reversed(const assembly::Assembly& assembly, const Bench& bench) {
     const Place& place = bench.stations[i];
     Surface& surface = result.assembly.surfaces[station.surface];
     surface = on_the_way_back(surface, place, station.intended);
+    if (surface.rear)
+      result.assembly.surfaces[surface.rear->surface].clear = surface.clear;
     station.turn_deg = turn_back(place, station.intended);
     station.gap = i > 0 ? bench.stations[i - 1].gap : 0.0;
     if (result.assembly.stations.empty()) {

@@ -16,7 +16,6 @@ namespace lightledger::reference {
 namespace {
 
 using assembly::Act;
-using assembly::Station;
 using assembly::Surface;
 
 /// The plane of incidence: s = unit(k × N), any transverse vector where the ray meets the surface squarely;
@@ -73,8 +72,8 @@ public:
     m_launched = basis * coherency_matrix(assembly.light.polarization) * basis.transpose();
   }
 
-  /// Visits a station; false where the ray ends.
-  bool visit(const Station& station, const Place& place);
+  /// Meets a surface; false where the ray ends.
+  bool visit(const Encounter& encounter);
 
   RayRecord record;
 
@@ -83,9 +82,9 @@ private:
   [[nodiscard]] Eigen::Matrix3cd coherency() const { return m_throughput * m_P * m_launched * m_P.adjoint(); }
   [[nodiscard]] double power() const { return coherency().trace().real(); }
 
-  bool arrive(const Surface& surface, const Place& place, Step& step);
+  bool arrive(const Surface& surface, const Frame& frame, Step& step);
   void travel(double distance, Step& step);
-  void meet_interface(const Station& station, const Surface& surface, Step& step);
+  void meet_interface(Act act, const Surface& surface, Step& step);
   void meet_element(const Element& element, Step& step);
   void divide(Act act, const PlaneOfIncidence& plane, const Interface& interface, Step& step) const;
   void go_on(Act act, const PlaneOfIncidence& plane, const Interface& interface);
@@ -118,8 +117,8 @@ void Walk::travel(double distance, Step& step) {
 }
 
 /// False where the ray misses the surface or falls outside its clear area.
-bool Walk::arrive(const Surface& surface, const Place& place, Step& step) {
-  const Meeting meeting = meet(surface.shape, place.surface, m_ray);
+bool Walk::arrive(const Surface& surface, const Frame& frame, Step& step) {
+  const Meeting meeting = meet(surface.shape, frame, m_ray);
   record.doubtful |= meeting.doubtful;
   record.steep |= meeting.steep;
   if (!meeting.hit) {
@@ -130,7 +129,7 @@ bool Walk::arrive(const Surface& surface, const Place& place, Step& step) {
   step.hit = true;
   step.optical_path = m_optical_path;
   step.point = meeting.hit->point;
-  step.local_point = place.surface.local(step.point);
+  step.local_point = frame.local(step.point);
   m_ray.point = step.point;
   m_normal = meeting.hit->normal;
   const auto [cosine, sine] = plane_of_incidence(m_ray.direction, m_normal).angle;
@@ -188,8 +187,7 @@ void Walk::divide(Act act, const PlaneOfIncidence& plane, const Interface& inter
     step.aside = opaque ? 0.0 : transmitted;
 }
 
-void Walk::meet_interface(const Station& station, const Surface& surface, Step& step) {
-  const Act act = station.intended;
+void Walk::meet_interface(Act act, const Surface& surface, Step& step) {
   const PlaneOfIncidence plane = plane_of_incidence(m_ray.direction, m_normal);
   const Interface interface = interface_at(m_assembly, surface, plane.angle, m_wavelength_nm);
   record.doubtful |= interface.doubtful;
@@ -212,21 +210,23 @@ void Walk::meet_element(const Element& element, Step& step) {
   m_P = element.field * m_P;
 }
 
-bool Walk::visit(const Station& station, const Place& place) {
-  const Surface surface = seen_from(place.from, m_assembly.surfaces.at(station.surface));
+bool Walk::visit(const Encounter& encounter) {
+  const auto& [id, frame, from, act] = encounter;
+  const Surface surface = seen_from(from, m_assembly.surfaces.at(id));
   Step step;
   step.incident = power();
-  const bool arrived = arrive(surface, place, step);
+  const bool arrived = arrive(surface, frame, step);
   if (arrived && std::holds_alternative<assembly::Interface>(surface.effect))
-    meet_interface(station, surface, step);
+    meet_interface(act, surface, step);
   else if (arrived) {
-    const bool on_the_way_back = place.from == assembly::Side::beyond;
+    const bool on_the_way_back = from == assembly::Side::beyond;
     if (const auto acts =
-            element(surface.effect, place.surface.axes, m_ray.direction, on_the_way_back, m_wavelength_nm))
+            element(surface.effect, frame.axes, m_ray.direction, on_the_way_back, m_wavelength_nm))
       meet_element(*acts, step);
     thin_out(surface, 0.0, step);
   }
-  m_medium = medium_behind(m_assembly, station, place.from);
+  if (act == Act::pass)
+    m_medium = surface.beyond.value_or(surface.before);
   step.direction = m_ray.direction;
   step.P = m_P;
   record.steps.push_back(step);
@@ -235,17 +235,26 @@ bool Walk::visit(const Station& station, const Place& place) {
 
 } // namespace
 
-RayRecord trace(const Bench& bench, const assembly::Assembly& assembly, double wavelength_nm,
-                const Ray& ray) {
+RayRecord follow(const std::vector<Encounter>& path, const assembly::Assembly& assembly, double wavelength_nm,
+                 const Ray& ray) {
   Walk walk(assembly, wavelength_nm, ray);
-  for (std::size_t i = 0; i < assembly.stations.size(); ++i) {
-    const assembly::Station& station = assembly.stations[i];
-    if (!walk.visit(station, bench.stations.at(i)))
+  for (const Encounter& encounter : path) {
+    if (!walk.visit(encounter))
       break;
-    if (station.intended == Act::detect)
+    if (encounter.act == Act::detect)
       walk.record.delivered = walk.record.steps.back().onward;
   }
   return walk.record;
+}
+
+RayRecord trace(const Bench& bench, const assembly::Assembly& assembly, double wavelength_nm,
+                const Ray& ray) {
+  std::vector<Encounter> path;
+  for (std::size_t i = 0; i < assembly.stations.size(); ++i) {
+    const Place& place = bench.stations.at(i);
+    path.push_back({assembly.stations[i].surface, place.surface, place.from, assembly.stations[i].intended});
+  }
+  return follow(path, assembly, wavelength_nm, ray);
 }
 
 } // namespace lightledger::reference

@@ -40,6 +40,18 @@ struct RayRecord {
   [[nodiscard]] bool comparable() const { return !doubtful && !steep; }
 };
 
+/// A meeting of light with a surface, wherever it comes from: at which of its sides, and what it does there.
+struct Encounter {
+  assembly::SurfaceId surface;
+  Frame frame; ///< of the surface, on the bench
+  assembly::Side from;
+  assembly::Act act;
+};
+
+/// Follows a ray of unit power from meeting to meeting, in the light's state of polarization.
+[[nodiscard]] RayRecord follow(const std::vector<Encounter>& path, const assembly::Assembly& assembly,
+                               double wavelength_nm, const Ray& ray);
+
 /// Follows a ray of unit power along the train, in the light's state of polarization.
 [[nodiscard]] RayRecord trace(const Bench& bench, const assembly::Assembly& assembly, double wavelength_nm,
                               const Ray& ray);

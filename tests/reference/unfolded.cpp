@@ -18,6 +18,7 @@ Surface own_surface(const Surface& shared, const Place& place) {
   const Vector vertex = place.arriving.local(place.surface.origin);
   own.tilt_deg = angles_of(place.arriving.axes.transpose() * axes);
   own.shift = {vertex.x(), vertex.y()};
+  own.rear.reset(); // it stands behind the surface's first visit
   return own;
 }
 

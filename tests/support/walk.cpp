@@ -83,6 +83,34 @@ Eigen::Matrix3cd polarization_matrix(const trace::Train& train, const Walk& walk
          entrance.transpose().cast<std::complex<double>>();
 }
 
+std::vector<trace::Path::Step> meetings(const trace::Train& train, const std::vector<trace::Act>& acts) {
+  std::vector<trace::Path::Step> steps;
+  trace::Hop hop = trace::Onward{train.routes.start(), trace::Routes::launch_leg};
+  for (const trace::Act act : acts) {
+    const auto& [state, leg] = std::get<trace::Onward>(hop);
+    steps.push_back({leg, train.routes.op(*train.assembly, state), state.visit, act});
+    hop = train.routes.next(state, act);
+  }
+  return steps;
+}
+
+void follow(const std::vector<trace::Path::Step>& steps, const trace::Plan& plan,
+            const optics::Coherency& coherency, RayBlock& block, const Seen& seen) {
+  for (const trace::Path::Step& step : steps) {
+    if (block.alive == 0)
+      return;
+    trace::Entry entry;
+    trace::Tape tape;
+    trace::StepOut out;
+    out.entry = &entry;
+    out.tape = &tape;
+    out.bounces = step.act == trace::Act::bounce;
+    (out.bounces ? out.bounce : out.pass) = &block;
+    trace::interact(plan.legs[step.leg], plan.ops[step.op], coherency, block, out);
+    seen(step, entry, tape);
+  }
+}
+
 Walk walk(const trace::Train& train, const RayBlock& launched, optics::State state, std::size_t wavelength) {
   const trace::Plan& plan = train.plans.at(wavelength);
   const optics::Coherency coherency = optics::coherency(state);
@@ -90,19 +118,12 @@ Walk walk(const trace::Train& train, const RayBlock& launched, optics::State sta
   for (int lane = 0; lane < launched.count; ++lane)
     walk.ledger.launched += launched.w[lane];
   RayBlock block = launched;
-  for (const trace::Path::Step& step : trace::intended_path(*train.assembly, train.routes).steps) {
-    if (block.alive == 0)
-      break;
-    trace::Entry entry;
-    trace::StepOut out;
-    out.entry = &entry;
-    out.tape = &walk.tapes.emplace_back();
-    out.bounces = step.act == trace::Act::bounce;
-    (out.bounces ? out.bounce : out.pass) = &block;
-    trace::interact(plan.legs[step.leg], plan.ops[step.op], coherency, block, out);
-    walk.ledger.enter(step.visit, entry);
-    walk.behind.push_back(block);
-  }
+  follow(trace::intended_path(*train.assembly, train.routes).steps, plan, coherency, block,
+         [&](const trace::Path::Step& step, const trace::Entry& entry, const trace::Tape& tape) {
+           walk.ledger.enter(step.visit, entry);
+           walk.tapes.push_back(tape);
+           walk.behind.push_back(block);
+         });
   return walk;
 }
 

@@ -6,6 +6,7 @@
 
 #include <Eigen/Core>
 #include <array>
+#include <functional>
 #include <memory>
 #include <string>
 #include <vector>
@@ -25,6 +26,17 @@ struct Ready {
 /// One ray as a block: a point and a direction (made unit) in the first station's arriving frame, with the
 /// double-pole basis, unit Jones matrix and weight 1.
 [[nodiscard]] trace::RayBlock ray(const std::array<double, 3>& point, const std::array<double, 3>& direction);
+
+/// The meetings of light that acts as told, from the launch on, by the route table; throws where it ends
+/// before.
+[[nodiscard]] std::vector<trace::Path::Step> meetings(const trace::Train& train,
+                                                      const std::vector<trace::Act>& acts);
+
+/// Takes a block from meeting to meeting while rays are left in it; `seen` is told of each, with the block
+/// behind it.
+using Seen = std::function<void(const trace::Path::Step&, const trace::Entry&, const trace::Tape&)>;
+void follow(const std::vector<trace::Path::Step>& steps, const trace::Plan& plan,
+            const optics::Coherency& coherency, trace::RayBlock& block, const Seen& seen);
 
 /// A block taken along the intended path, step by step, with all that can be learnt on the way.
 struct Walk {

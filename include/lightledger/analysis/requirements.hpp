@@ -1,6 +1,8 @@
 #pragma once
 
 #include <lightledger/analysis/budget.hpp>
+#include <lightledger/analysis/ghosts.hpp>
+#include <lightledger/analysis/polarization.hpp>
 #include <lightledger/assembly/assembly.hpp>
 #include <lightledger/assembly/diagnostics.hpp>
 
@@ -35,10 +37,14 @@ struct Judgement {
   [[nodiscard]] bool all_met() const;
 };
 
-/// Holds the requirements of an assembly against its budget. Quantities are paths in the JSON of a command,
-/// with stations and fields by name or by index: `budget.delivered`,
-/// `budget.stations.fold.incidence_deg.max`, `budget.by_wavelength[1].delivered`; `delivered` for short.
-[[nodiscard]] Judgement judge_all(const assembly::Assembly& assembly, const Budget& budget);
+/// Holds the requirements of an assembly against its budget and, where one of them asks for it, its ghosts and
+/// what happens to polarization. Quantities are paths in the JSON of a command, with stations and fields by
+/// name or by index: `budget.delivered`, `budget.stations.fold.incidence_deg.max`,
+/// `budget.by_wavelength[1].delivered`, `ghosts.total`, `ghosts.paths[0].by_field.corner.power`,
+/// `polarization.detector.cross_leakage`; `delivered` for short.
+[[nodiscard]] Judgement judge_all(const assembly::Assembly& assembly, const Budget& budget,
+                                  const Polarization* polarization = nullptr,
+                                  const Ghosts* ghosts = nullptr);
 
 struct CheckResult {
   std::optional<Judgement> judgement; ///< none where there are faults

@@ -90,8 +90,8 @@ struct Ideal {
   Powers s, p;
 };
 
-/// Curves from a coater: points on a grid of wavelengths and angles, bilinear between them. The front is the side
-/// that the light of the measurement came from.
+/// Curves from a coater: points on a grid of wavelengths and angles, bilinear between them. The front is the
+/// side that the light of the measurement came from.
 struct Measured {
   struct Powers {
     double s, p;
@@ -102,8 +102,9 @@ struct Measured {
   };
   struct Point {
     Powers reflect, transmit;
-    Powers reflect_back; ///< met from the other side; 1 − T − A of the front where the file has no such columns
-    Phases phases;       ///< those of an ideal coating where the file has none
+    Powers
+        reflect_back; ///< met from the other side; 1 − T − A of the front where the file has no such columns
+    Phases phases;    ///< those of an ideal coating where the file has none
   };
 
   std::vector<double> wavelengths_nm; ///< ascending
@@ -183,6 +184,13 @@ struct Rotator {
 };
 using Effect = std::variant<Interface, Opening, Sensor, Polarizer, Retarder, Rotator>;
 
+/// The plane back face of a plate whose front reflects: a surface of its own that no station visits.
+struct Rear {
+  SurfaceId surface; ///< its media and coating: `before` is the plate, `beyond` what lies behind
+  double thickness;  ///< mm from vertex to vertex, along the front's normal
+  std::array<double, 2> wedge_deg{}; ///< [a, b] turns it about its vertex by Rx(a) Ry(b), from parallel
+};
+
 struct Surface {
   Shape shape;
   Clear clear;
@@ -194,6 +202,7 @@ struct Surface {
   std::array<double, 2> shift{};
   double roughness_nm = 0.0;
   double loss = 0.0;
+  std::optional<Rear> rear; ///< of a reflecting surface with a transparent medium beyond
 };
 
 /// What light does at a visit.
@@ -204,9 +213,9 @@ struct Focus {};
 struct UpToSurface {};
 using Gap = std::variant<double, Focus, UpToSurface>;
 
-/// One visit of the light to a surface, in the order of the train. The first station of a surface is the visit
-/// that its tilt, shift and media are stated for; later ones (`again`) meet it where the axis meets the plane
-/// tangent to its vertex.
+/// One visit of the light to a surface, in the order of the train. The first station of a surface is the
+/// visit that its tilt, shift and media are stated for; later ones (`again`) meet it where the axis meets the
+/// plane tangent to its vertex.
 struct Station {
   std::string name;
   SurfaceId surface;

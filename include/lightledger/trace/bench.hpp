@@ -18,7 +18,8 @@ struct Frame {
 /// Where everything stands, by the axis rule of contract §2. The bench's own coordinates are those of the
 /// axis as it arrives at the first station.
 struct Bench {
-  std::vector<Frame> surface;       ///< per surface: vertex, and the surface's own axes after shift and tilt
+  /// Per surface, rear faces included: its vertex, and its own axes after shift, tilt and wedge.
+  std::vector<Frame> surface;
   std::vector<Frame> arriving;      ///< per station: its point of the axis, and the axes as the light arrives
   std::vector<assembly::Side> from; ///< per station: the side of the surface that the light arrives at
   std::vector<Frame> leaving;       ///< per station: the same point, the axes after reflection and turn

@@ -8,6 +8,7 @@
 #include <algorithm>
 #include <array>
 #include <cstdint>
+#include <optional>
 #include <utility>
 #include <variant>
 #include <vector>
@@ -93,6 +94,7 @@ struct SamplingOptions {
   std::uint64_t shifts = 0; ///< which set of shifts scatters the rays
   /// Chunks get no fewer rays than this where there are several; 0: sixteen chunks always.
   std::uint64_t rays_per_chunk = 0;
+  std::optional<assembly::Sampling> instead{}; ///< of the light's own sampling
 };
 
 /// Puts a survey to the light's own samples of rays. They are cut into a list of chunks that does not depend
@@ -108,7 +110,7 @@ public:
   using Found = typename Survey::Found;
 
   Sampling(const Train& train, const Survey& survey, const SamplingOptions& options = {})
-      : m_light(train.assembly->light), m_survey(survey), m_options(options),
+      : m_light(light(train, options)), m_survey(survey), m_options(options),
         m_pupil(m_light, options.shifts) {
     for (Group& group : groups(train, m_pupil)) {
       Sample<Found> sample{std::move(group), {}};
@@ -142,6 +144,13 @@ private:
   static constexpr std::uint64_t most_chunks = 16;
   static constexpr std::uint64_t first_count = 4096;
   static constexpr std::uint64_t largest_count = std::uint64_t{1} << 20;
+
+  [[nodiscard]] static assembly::Light light(const Train& train, const SamplingOptions& options) {
+    assembly::Light light = train.assembly->light;
+    if (options.instead)
+      light.sampling = *options.instead;
+    return light;
+  }
 
   [[nodiscard]] Tally<Found> blank(const Group& group) const { return {0.0, 0, m_survey.blank(group)}; }
 
@@ -199,7 +208,7 @@ private:
     return tally;
   }
 
-  const assembly::Light& m_light;
+  assembly::Light m_light;
   const Survey& m_survey;
   SamplingOptions m_options;
   Pupil m_pupil;

@@ -145,5 +145,62 @@ TEST(FillStop, LeavesTheBeamToTheStop) {
   EXPECT_FALSE(train("  - {name: eye, does: detect}\n").light.beam.fill_stop);
 }
 
+const std::string splitter =
+    "  - {name: fold, does: reflect, tilt: [45, 0, 0], backing: fused-silica, coating: half, "
+    "clear: {diameter: 20}, rear: {thickness: 0.5 in, wedge: [0, 30 arcmin]}, gap: 5}\n"
+    "  - {name: eye, does: detect}\n";
+
+TEST(Rear, IsASurfaceOfItsOwnThatNoStationVisits) {
+  const Assembly assembly = train(splitter);
+  ASSERT_EQ(assembly.surfaces.size(), 3U);
+  ASSERT_EQ(assembly.stations.size(), 2U);
+  const auto& rear = assembly.surfaces[assembly.stations[0].surface].rear;
+  ASSERT_TRUE(rear);
+  EXPECT_EQ(rear->surface, 1U);
+  EXPECT_EQ(assembly.stations[1].surface, 2U);
+  EXPECT_DOUBLE_EQ(rear->thickness, 12.7);
+  EXPECT_EQ(rear->wedge_deg, (std::array<double, 2>{0.0, 0.5}));
+}
+
+TEST(Rear, LiesBetweenThePlateAndWhatIsBeforeIt) {
+  const Assembly assembly = train(splitter);
+  const Surface& face = assembly.surfaces.at(1);
+  EXPECT_EQ(assembly.media[face.before].name, "fused-silica");
+  ASSERT_TRUE(face.beyond);
+  EXPECT_EQ(assembly.media[*face.beyond].name, "air");
+  EXPECT_TRUE(std::holds_alternative<Plane>(face.shape));
+  EXPECT_FALSE(face.coating);
+}
+
+TEST(Rear, HasTheClearAreaOfTheFront) {
+  const Assembly assembly = train(splitter);
+  ASSERT_TRUE(std::holds_alternative<Clear::Disc>(assembly.surfaces.at(1).clear.opening));
+  EXPECT_EQ(std::get<Clear::Disc>(assembly.surfaces[1].clear.opening).radius, 10.0);
+}
+
+TEST(Rear, HasLayersThatStandOnThePlate) {
+  const Loaded loaded =
+      load_text("train.yaml", "coatings: {ar: {layers: [{medium: SiO2, thickness: 90}]}}\n"
+                              "light: {wavelengths: [532], beam: {radius: 5}}\ntrain:\n"
+                              "  - {name: fold, does: reflect, tilt: [45, 0, 0], backing: fused-silica, "
+                              "rear: {thickness: 2, coating: ar}, gap: 5}\n"
+                              "  - {name: eye, does: detect}\n");
+  ASSERT_EQ(loaded.report(), "");
+  ASSERT_TRUE(loaded.assembly->surfaces[1].coating);
+  EXPECT_EQ(loaded.assembly->surfaces[1].coating->substrate, Side::before);
+}
+
+TEST(Rear, HasAnAddress) {
+  const Loaded loaded = load_text("train.yaml",
+                                  "coatings: {half: {ideal: {reflect: 0.5}}}\n"
+                                  "light: {wavelengths: [532], beam: {radius: 5}}\ntrain:\n" +
+                                      splitter,
+                                  {{"fold.rear.thickness", "4"}, {"fold.rear.wedge[0]", "2"}});
+  ASSERT_EQ(loaded.report(), "");
+  const auto& rear = loaded.assembly->surfaces[0].rear;
+  EXPECT_EQ(rear->thickness, 4.0);
+  EXPECT_EQ(rear->wedge_deg, (std::array<double, 2>{2.0, 0.5}));
+}
+
 } // namespace
 } // namespace lightledger::assembly

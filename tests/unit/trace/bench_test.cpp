@@ -5,6 +5,8 @@
 #include <gtest/gtest.h>
 
 #include <Eigen/LU>
+#include <cmath>
+#include <numbers>
 #include <string>
 
 namespace lightledger::trace {
@@ -116,6 +118,41 @@ TEST(Bench, AnAxisInAMirrorsPlaneIsAFaultAtItsTilt) {
   ASSERT_EQ(faults.count(), 1U);
   EXPECT_NE(faults.kept()[0].message.find("plane of mirror 'fold'"), std::string::npos);
   EXPECT_EQ(faults.kept()[0].mark.line, 3);
+}
+
+TEST(Bench, ARearFaceStandsBehindItsFrontAlongTheNormal) {
+  const Bench bench = laid_out("- {name: splitter, does: reflect, tilt: [45, 0, 0], shift: [1, 0], "
+                               "backing: fused-silica, rear: {thickness: 3}, gap: 20}\n"
+                               "- {name: end, does: detect}\n");
+  expect_near(bench.surface[1].origin, Vector3d(1, 0, 0) + 3 / std::numbers::sqrt2 * Vector3d(0, -1, 1));
+  EXPECT_EQ(bench.surface[1].axes, bench.surface[0].axes);
+}
+
+TEST(Bench, ARearFaceIsBehindAlsoWhereTheFrontFacesTheOtherWay) {
+  const Bench bench = laid_out("- {name: splitter, does: reflect, tilt: [180, 0, 0], backing: fused-silica, "
+                               "rear: {thickness: 3}, gap: 20}\n"
+                               "- {name: end, does: detect}\n");
+  expect_near(bench.surface[1].origin, {0, 0, 3});
+}
+
+TEST(Bench, AWedgeTurnsTheRearFaceAboutTheFrontsOwnAxes) {
+  const Bench bench = laid_out("- {name: splitter, does: reflect, tilt: [0, 0, 90], backing: fused-silica, "
+                               "rear: {thickness: 3, wedge: [30, 0]}, gap: 20}\n"
+                               "- {name: end, does: detect}\n");
+  // Rz(90) carries the front's own x to y; about it Rx(30) sends the normal z to (sin 30, 0, cos 30).
+  expect_near(bench.surface[1].axes.col(2), {0.5, 0, std::sqrt(0.75)});
+}
+
+TEST(Bench, APlateCannotBeMetFromBehind) {
+  const assembly::Faults faults = layout_faults(
+      "- {name: splitter, does: reflect, tilt: [45, 0, 0], backing: air, rear: {thickness: 1}, gap: 5}\n"
+      "- {name: one, does: reflect, tilt: [-45, 0, 0], backing: Al, gap: 5}\n"
+      "- {name: two, does: reflect, tilt: [-45, 0, 0], backing: Al, gap: 10}\n"
+      "- {name: three, does: reflect, tilt: [-45, 0, 0], backing: Al}\n"
+      "- {again: splitter, does: reflect, gap: 5}\n"
+      "- {name: end, does: detect}\n");
+  ASSERT_EQ(faults.count(), 1U);
+  EXPECT_EQ(faults.kept()[0].message, "'splitter again' is met from behind, where its 'rear' stands");
 }
 
 } // namespace

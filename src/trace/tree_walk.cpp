@@ -1,0 +1,191 @@
+#include "tree_walk.hpp"
+
+#include "reflecting_detector.hpp"
+
+namespace lightledger::trace {
+namespace {
+
+/// Beams on the side that cost no bounce and hang in each other.
+constexpr std::size_t most_free_sides = 4;
+
+double launched(const RayBlock& block) {
+  double power = 0.0;
+  for (int lane = 0; lane < block.count; ++lane)
+    power += block.w[lane];
+  return power;
+}
+
+} // namespace
+
+TreeSetting::TreeSetting(const Train& of_train, const PathTree& of_paths, double cut_below)
+    : train(of_train), tree(of_paths), floor(cut_below), reflectance(detector_reflectance(of_train)),
+      coherency(optics::coherency(of_train.assembly->light.polarization)), reader(of_train),
+      detectors(reflecting_detectors(of_train)) {}
+
+TreeWalk::TreeWalk(const TreeSetting& setting, std::size_t wavelength, TreeFound& found,
+                   TreeObserver* observer)
+    : m_setting(setting), m_tree(setting.tree), m_plan(setting.train.plans[wavelength]),
+      m_detector(setting.detectors[wavelength]), m_found(found), m_observer(observer),
+      m_levels(new Level[static_cast<std::size_t>(m_tree.bounces()) + most_free_sides + 2]) {}
+
+void TreeWalk::run(const RayBlock& block) {
+  m_faintest = m_setting.floor * launched(block);
+  see_image(block);
+  m_levels[0].block[0] = block;
+  m_levels[0].first = 0;
+  follow(m_tree.start(), 0, {m_tree.bounces(), 0});
+  m_found.paths += m_paths;
+  m_found.returned += m_returned;
+  m_found.cut += m_cut;
+}
+
+/// What arrives as intended, for the comparison of each ghost with it.
+void TreeWalk::see_image(const RayBlock& block) {
+  RayBlock& rays = m_levels[0].block[0];
+  rays = block;
+  for (PathTree::Exit exit = m_tree.start(); exit.onward && rays.alive != 0;
+       exit = m_tree.junction(exit.to).main) {
+    const PathTree::Junction& junction = m_tree.junction(exit.to);
+    StepOut out;
+    out.bounces = junction.main_bounces;
+    (out.bounces ? out.bounce : out.pass) = &rays;
+    interact(m_plan.legs[exit.leg], m_plan.ops[junction.op], m_setting.coherency, rays, out);
+  }
+  m_setting.reader.read(rays, m_image);
+}
+
+/// Follows the beam of a level to its end, and at each fork first the beam on the side.
+void TreeWalk::follow(PathTree::Exit exit, std::size_t depth, Place place) {
+  double power = 0.0;
+  while (exit.onward) {
+    const PathTree::Junction& junction = m_tree.junction(exit.to);
+    if (PathTree::follows_side(junction, place.left))
+      power = fork(exit, depth, place);
+    else
+      power = pass(exit.leg, junction, depth);
+    exit = junction.main;
+    if (exit.onward && cut_off(exit, power, place))
+      return;
+  }
+  if (exit.end == End::detected)
+    arrive(m_levels[depth].block[m_levels[depth].first], place);
+  else
+    end(exit.end, power, place);
+}
+
+/// A meeting at which only the main beam is followed; the power of what goes on.
+double TreeWalk::pass(LegId leg, const PathTree::Junction& junction, std::size_t depth) {
+  Level& level = m_levels[depth];
+  RayBlock& in = level.block[level.first];
+  if (m_observer != nullptr)
+    level.block[1 - level.first] = in;
+  Entry entry;
+  StepOut out;
+  out.entry = &entry;
+  out.bounces = junction.main_bounces;
+  (out.bounces ? out.bounce : out.pass) = &in;
+  interact(m_plan.legs[leg], m_plan.ops[junction.op], m_setting.coherency, in, out);
+  if (m_observer != nullptr)
+    m_observer->see({leg, junction, level.block[1 - level.first], in, m_bounced});
+  enter(entry);
+  TreeLedger& ledger = m_found.ledger;
+  if (junction.detects)
+    ledger.not_followed += m_setting.reflectance * entry.onward;
+  else
+    (junction.side_bounces ? ledger.not_followed : ledger.leaked) += entry.aside;
+  return entry.onward;
+}
+
+/// A meeting at which both beams are followed.
+double TreeWalk::fork(const PathTree::Exit& exit, std::size_t depth, Place& place) {
+  const PathTree::Junction& junction = m_tree.junction(exit.to);
+  Level& level = m_levels[depth];
+  RayBlock& in = level.block[level.first];
+  RayBlock& on = level.block[1 - level.first];
+  RayBlock& side = m_levels[depth + 1].block[0];
+  m_levels[depth + 1].first = 0;
+  Entry entry;
+  StepOut out;
+  out.entry = &entry;
+  out.bounces = junction.main_bounces;
+  out.pass = out.bounces ? &side : &on;
+  out.bounce = out.bounces ? &on : &side;
+  const PlanOp& op = junction.detects ? m_detector : m_plan.ops[junction.op];
+  interact(m_plan.legs[exit.leg], op, m_setting.coherency, in, out);
+  if (m_observer != nullptr)
+    m_observer->see({exit.leg, junction, in, on, m_bounced});
+  enter(entry);
+  if (!junction.detects) { // a detector's are those of what it lets through
+    m_found.ledger.scattered += entry.turned_scattered;
+    m_found.ledger.extra += entry.turned_extra;
+  }
+  level.first = 1 - level.first;
+  const Place aside{PathTree::left_aside(junction, place.left), place.number};
+  if (junction.side_bounces)
+    m_bounced.push_back(exit.to);
+  branch(junction.side, entry.turned, depth + 1, aside);
+  if (junction.side_bounces)
+    m_bounced.pop_back();
+  place.number += m_tree.paths(junction.side, aside.left);
+  return entry.onward;
+}
+
+void TreeWalk::branch(const PathTree::Exit& exit, double power, std::size_t depth, Place place) {
+  if (!exit.onward)
+    end(exit.end, power, place);
+  else if (!cut_off(exit, power, place))
+    follow(exit, depth, place);
+}
+
+/// Whether a beam is not worth following: nothing is left of it, or so little that it is given up. What goes
+/// on as intended never is.
+bool TreeWalk::cut_off(const PathTree::Exit& exit, double power, Place place) {
+  if (power > 0.0 && !(bounced(place) && power < m_faintest))
+    return false;
+  if (power > 0.0)
+    m_cut.append(place.number, place.number + m_tree.paths(exit, place.left));
+  m_found.ledger.not_followed += power;
+  return true;
+}
+
+void TreeWalk::end(End end, double power, Place place) {
+  TreeLedger& ledger = m_found.ledger;
+  switch (end) {
+  case End::returned:
+    ledger.returned += power;
+    if (power > 0.0)
+      m_returned.append(place.number, PathSums{.power = power});
+    break;
+  case End::leaked:
+    ledger.leaked += power;
+    break;
+  default:
+    ledger.absorbed += power;
+    break;
+  }
+}
+
+void TreeWalk::arrive(const RayBlock& rays, Place place) {
+  if (rays.alive == 0)
+    return;
+  m_setting.reader.read(rays, m_arrival);
+  const PathSums sums = m_setting.reader.sums(m_arrival, m_image);
+  if (!bounced(place)) {
+    m_found.image += sums;
+  } else if (sums.power > 0.0) {
+    m_found.ghosts += sums.power;
+    m_paths.append(place.number, sums);
+  }
+}
+
+void TreeWalk::enter(const Entry& entry) {
+  TreeLedger& ledger = m_found.ledger;
+  ledger.missed += entry.missed;
+  ledger.clipped += entry.clipped;
+  ledger.absorbed += entry.absorbed;
+  ledger.scattered += entry.scattered;
+  ledger.extra += entry.extra;
+  ledger.bulk += entry.bulk;
+}
+
+} // namespace lightledger::trace
