@@ -1,12 +1,14 @@
+#include "bounce_path.hpp"
 #include "drawn_rays.hpp"
 #include "profile.hpp"
 
 #include <lightledger/trace/tracer.hpp>
 
+#include <fmt/format.h>
+
 #include <algorithm>
 #include <array>
 #include <cmath>
-#include <iterator>
 #include <utility>
 
 namespace lightledger::analysis {
@@ -63,16 +65,16 @@ bool glass(const Train& train, assembly::MediumId medium) {
 }
 
 /// The section of a body's face from one edge to the other.
-Polyline whole(const DrawnStation& station) {
+Polyline whole(const std::vector<Polyline>& section) {
   Polyline line;
-  for (const Polyline& piece : station.section)
+  for (const Polyline& piece : section)
     line.insert(line.end(), piece.begin(), piece.end());
   return line;
 }
 
 /// The contour of a body between two faces. The edge of the smaller face goes on flat until it is as high as
 /// that of the larger one; from there the rim runs straight.
-Polyline joined(const DrawnStation& front, const DrawnStation& rear) {
+Polyline joined(const std::vector<Polyline>& front, const std::vector<Polyline>& rear) {
   Polyline first = whole(front);
   Polyline second = whole(rear);
   if (first.size() < 2 || second.size() < 2)
@@ -100,11 +102,11 @@ class ViewMaker {
 public:
   ViewMaker(const Train& train, View view) : m_train(train), m_view{view, {}, {}, {}, {}} {}
 
-  DrawnView make(const DrawingOptions& options) {
+  DrawnView make(const std::optional<trace::Path>& ghost_path) {
     const double lead = lead_share * size_of(m_train);
     Fan direct = fan(m_train, m_train.path, m_view.along, lead);
-    if (options.ghost) {
-      Fan ghost = fan(m_train, *options.ghost, m_view.along, lead);
+    if (ghost_path) {
+      Fan ghost = fan(m_train, *ghost_path, m_view.along, lead);
       m_view.ghost_rays = std::move(ghost.rays);
       for (std::size_t i = 0; i < direct.reach.size(); ++i)
         direct.reach[i] = std::max(direct.reach[i], ghost.reach[i]);
@@ -112,8 +114,11 @@ public:
     m_view.rays = std::move(direct.rays);
     for (StationId visit = 0; visit < m_train.assembly->stations.size(); ++visit)
       m_view.stations.push_back(station(visit, direct.reach));
-    for (StationId visit = 1; visit < m_view.stations.size(); ++visit)
-      add_glass(visit);
+    for (StationId visit = 0; visit < m_view.stations.size(); ++visit) {
+      add_plate(visit);
+      if (visit > 0)
+        add_glass(visit);
+    }
     return std::move(m_view);
   }
 
@@ -133,7 +138,25 @@ private:
             direction,
             std::copysign(1.0, toward) * frame.axes.col(2),
             section(surface, frame, direction, std::max(beyond_rays * reach[station.surface], least_reach)),
+            rear_section(surface, reach[station.surface]),
             outline(surface, frame)};
+  }
+
+  /// The plane rear face of a plate, as large as its front.
+  [[nodiscard]] std::vector<Polyline> rear_section(const assembly::Surface& front, double reach) const {
+    if (!front.rear)
+      return {};
+    assembly::Surface face = m_train.assembly->surfaces[front.rear->surface];
+    face.clear = front.clear;
+    const trace::Frame& frame = m_train.bench.surface[front.rear->surface];
+    return section(face, frame, across(frame, m_view.along), std::max(beyond_rays * reach, least_reach));
+  }
+
+  void add_plate(StationId visit) {
+    const DrawnStation& station = m_view.stations[visit];
+    Polyline contour = joined(station.section, station.rear);
+    if (station.first_visit == visit && !contour.empty())
+      m_view.glass.push_back({visit, visit, std::move(contour)});
   }
 
   [[nodiscard]] std::size_t first_visit(assembly::SurfaceId surface) const {
@@ -153,7 +176,7 @@ private:
     for (const DrawnGlass& body : m_view.glass)
       if (faces(body.front, body.rear) == faces(front, visit))
         return;
-    Polyline contour = joined(m_view.stations[front], m_view.stations[visit]);
+    Polyline contour = joined(m_view.stations[front].section, m_view.stations[visit].section);
     if (!contour.empty())
       m_view.glass.push_back({front, visit, std::move(contour)});
   }
@@ -165,7 +188,7 @@ private:
 } // namespace
 
 std::vector<PathPicture> path_pictures(const Assembly& assembly, View view,
-                                       const std::vector<trace::Path>& paths) {
+                                       const std::vector<Bounces>& ghosts) {
   assembly::Faults faults;
   const auto train = trace::prepare(assembly, faults);
   if (!train)
@@ -175,7 +198,10 @@ std::vector<PathPicture> path_pictures(const Assembly& assembly, View view,
     return PathPicture{fan(*train, path, view, lead).rays, spot(*train, path)};
   };
   std::vector<PathPicture> pictures{picture(train->path)};
-  std::ranges::transform(paths, std::back_inserter(pictures), picture);
+  for (const Bounces& ghost : ghosts) {
+    const auto path = path_of_bounces(assembly, train->routes, ghost);
+    pictures.push_back(path ? picture(*path) : PathPicture{});
+  }
   return pictures;
 }
 
@@ -184,13 +210,19 @@ DrawingResult drawing(const Assembly& assembly, const DrawingOptions& options) {
   const auto train = trace::prepare(assembly, result.faults);
   if (!train)
     return result;
+  std::optional<trace::Path> ghost;
+  if (options.ghost && !(ghost = path_of_bounces(assembly, train->routes, *options.ghost))) {
+    result.faults.add(
+        {{}, fmt::format("no path bounces at {}", fmt::join(*options.ghost, ", then ")), "", ""});
+    return result;
+  }
   Drawing drawing{{}, {}, train->plans.front().wavelength_nm};
   for (const assembly::Field& field : assembly.light.fields)
     drawing.fields.push_back(field.name);
   const std::vector<View> views =
       options.views.empty() ? std::vector<View>{best_view(*train)} : options.views;
   for (const View view : views)
-    drawing.views.push_back(ViewMaker(*train, view).make(options));
+    drawing.views.push_back(ViewMaker(*train, view).make(ghost));
   result.drawing = std::move(drawing);
   return result;
 }

@@ -57,7 +57,7 @@ public:
       interact(m_plan.legs[step.leg], m_plan.ops[step.op], m_coherency, block, out);
       if (entry.missed > 0.0)
         return ended(std::move(ray), RayEnd::missed);
-      note_hit(m_train.assembly->stations[step.visit].surface, row(tape.hit), ray);
+      note_hit(surface_of(step.op), row(tape.hit), ray);
       if (entry.clipped > 0.0)
         return ended(std::move(ray), RayEnd::clipped);
       if (block.alive == 0)
@@ -98,6 +98,9 @@ private:
     ray.points.push_back(frame.origin + frame.axes * hit);
     m_reach[surface] = std::max(m_reach[surface], std::hypot(hit[0], hit[1]));
   }
+
+  /// Each surface has two operators, one a side.
+  static assembly::SurfaceId surface_of(trace::OpId op) { return op / 2; }
 
   static DrawnRay ended(DrawnRay ray, RayEnd end) {
     ray.end = end;

@@ -26,6 +26,11 @@ Json station_json(const DrawnStation& station) {
           {"outline_mm", line_json(station.outline)}};
 }
 
+std::string rear_name(const DrawnView& view, const DrawnGlass& body) {
+  const std::string& name = view.stations[body.rear].name;
+  return body.front == body.rear ? name + " rear" : name;
+}
+
 Json rays_json(const std::vector<DrawnRay>& rays) {
   Json json = Json::array();
   for (const DrawnRay& ray : rays)
@@ -40,7 +45,7 @@ Json view_json(const DrawnView& view) {
     stations.push_back(station_json(station));
   Json glass = Json::array();
   for (const DrawnGlass& body : view.glass)
-    glass.push_back({{"between", {view.stations[body.front].name, view.stations[body.rear].name}},
+    glass.push_back({{"between", {view.stations[body.front].name, rear_name(view, body)}},
                      {"contour_mm", line_json(body.contour)}});
   Json json{{"along", name_of(view.along)},
             {"stations", std::move(stations)},

@@ -46,7 +46,7 @@ public:
   Panel paint() {
     paint_axis();
     for (const analysis::DrawnGlass& body : m_view.glass)
-      line(fmt::format("glass between-{}-{}", body.front + 1, body.rear + 1), m_sheet(body.contour), true);
+      line(kind_of(body), m_sheet(body.contour), true);
     paint_rays();
     const Labels labels = label(m_view, m_sheet);
     for (std::size_t i = 0; i < m_view.stations.size(); ++i)
@@ -115,7 +115,9 @@ private:
       return paint_stop(station);
     for (const analysis::Polyline& piece : station.section)
       line(kind_of(station), m_sheet(piece));
-    if (station.does == "reflect")
+    for (const analysis::Polyline& piece : station.rear)
+      line("surface", m_sheet(piece));
+    if (station.does == "reflect" && station.rear.empty())
       for (const analysis::Polyline& piece : station.section)
         paint_hatch(m_sheet(piece), m_sheet(station.normal).normalized());
   }
@@ -123,6 +125,11 @@ private:
   [[nodiscard]] bool seen_obliquely(const DrawnStation& station) const {
     constexpr double edge_on = 0.14;
     return std::abs(station.normal[static_cast<int>(m_view.along)]) > edge_on;
+  }
+
+  static std::string kind_of(const analysis::DrawnGlass& body) {
+    return body.front == body.rear ? fmt::format("glass plate-{}", body.front + 1)
+                                   : fmt::format("glass between-{}-{}", body.front + 1, body.rear + 1);
   }
 
   static const char* kind_of(const DrawnStation& station) {

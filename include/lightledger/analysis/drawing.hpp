@@ -2,7 +2,6 @@
 
 #include <lightledger/assembly/assembly.hpp>
 #include <lightledger/assembly/diagnostics.hpp>
-#include <lightledger/trace/routes.hpp>
 
 #include <Eigen/Core>
 #include <optional>
@@ -25,12 +24,14 @@ struct DrawnStation {
   Eigen::Vector3d across;     ///< unit vector in its plane that is seen at full length; zero if seen face-on
   Eigen::Vector3d normal;     ///< of its vertex, with the arriving light
   std::vector<Polyline> section; ///< the surface within its clear area, cut along `across`; two with a hole
+  std::vector<Polyline> rear;    ///< the section of a plate's rear face; empty without one
   Polyline outline;              ///< the edge of the clear area, closed; empty where it is unlimited
 };
 
-/// What lies between two stations in a medium that is no gas: both sections, joined at their edges.
+/// What lies between two stations in a medium that is no gas, or between the faces of a plate: both sections,
+/// joined at their edges.
 struct DrawnGlass {
-  std::size_t front, rear; ///< numbers of the stations, from 0
+  std::size_t front, rear; ///< numbers of the stations, from 0; the same twice for a plate
   Polyline contour;
 };
 
@@ -49,7 +50,7 @@ struct DrawnView {
   std::vector<DrawnStation> stations;
   std::vector<DrawnGlass> glass;
   std::vector<DrawnRay> rays;
-  std::vector<DrawnRay> ghost_rays; ///< of the path asked for; empty without one
+  std::vector<DrawnRay> ghost_rays; ///< of the ghost asked for; empty without one
 };
 
 struct Drawing {
@@ -58,14 +59,17 @@ struct Drawing {
   double wavelength_nm;                           ///< of the rays: the light's first
 };
 
+/// The bounces of a ghost by their names, as `analysis::Ghost` lists them.
+using Bounces = std::vector<std::string>;
+
 struct DrawingOptions {
-  std::vector<View> views;            ///< empty: the one that shows most of the axis
-  std::optional<trace::Path> ghost{}; ///< a path of this assembly's routes whose rays are drawn as well
+  std::vector<View> views;        ///< empty: the one that shows most of the axis
+  std::optional<Bounces> ghost{}; ///< whose rays are drawn as well
 };
 
 struct DrawingResult {
   std::optional<Drawing> drawing; ///< none where there are faults
-  assembly::Faults faults;        ///< of the layout
+  assembly::Faults faults;        ///< of the layout, or a ghost that is none
 };
 
 /// One path as a picture shows it.
@@ -75,10 +79,10 @@ struct PathPicture {
                                      ///< in its own x and y, mm
 };
 
-/// Rays and spots of paths of the assembly's routes, the intended one first; empty where the layout has
-/// faults.
+/// Rays and spots of the intended path, then of ghosts; empty where the layout has faults. A ghost that the
+/// routes do not hold has none.
 [[nodiscard]] std::vector<PathPicture> path_pictures(const assembly::Assembly& assembly, View view,
-                                                     const std::vector<trace::Path>& paths);
+                                                     const std::vector<Bounces>& ghosts);
 
 /// Lays the train out and follows a few rays of each field through it, as they really run.
 [[nodiscard]] DrawingResult drawing(const assembly::Assembly& assembly, const DrawingOptions& options = {});

@@ -13,7 +13,7 @@ namespace lightledger::report {
 /// The drawing as an SVG document, true to scale, with a scale bar; several views stand below each other. It
 /// follows the reader's light or dark setting, text is text. What belongs to a station is a group whose id is
 /// its number (with several views `x-1`, `y-1`, …), of the class `station`; the glass between stations 3 and
-/// 4 has the class `between-3-4`, rays of the first field `field0`.
+/// 4 has the class `between-3-4`, that of a plate `plate-3`, rays of the first field `field0`.
 [[nodiscard]] std::string drawing_svg(const std::string& title, const analysis::Drawing& drawing);
 
 /// A ray as an SVG path in the coordinates of the group of its view, `g.view`.
