@@ -1,8 +1,8 @@
 #include "answer.hpp"
 
-#include "help.hpp"
+#include "answer_parts.hpp"
+#include "answer_pictures.hpp"
 #include "input_error.hpp"
-#include "terminal.hpp"
 
 #include <lightledger/analysis/coating_curve.hpp>
 #include <lightledger/analysis/medium_table.hpp>
@@ -11,10 +11,8 @@
 #include <lightledger/report/budget.hpp>
 #include <lightledger/report/check.hpp>
 #include <lightledger/report/coating.hpp>
-#include <lightledger/report/drawing.hpp>
 #include <lightledger/report/ghosts.hpp>
 #include <lightledger/report/media.hpp>
-#include <lightledger/report/page.hpp>
 #include <lightledger/report/polarization.hpp>
 
 #include <chrono>
@@ -22,52 +20,6 @@
 
 namespace lightledger::app {
 namespace {
-
-using assembly::Faults;
-using Warnings = std::vector<std::string>;
-
-/// The documents asked for, each made by its writer only then.
-template <class Json, class Csv, class Text>
-Answer written(const Options& options, Json json, Csv csv, Text text) {
-  Answer answer;
-  if (options.json)
-    answer.json = json();
-  if (options.csv)
-    answer.csv = csv();
-  if (!options.quiet)
-    answer.text = text();
-  return answer;
-}
-
-report::TextStyle style_of(const Options& options) {
-  report::TextStyle style = style_of_stdout();
-  style.decibels = options.decibels;
-  return style;
-}
-
-report::Envelope envelope_of(const Options& options, const Input& input, Warnings warnings) {
-  const std::optional<std::string> title =
-      input.assembly ? std::optional(input.assembly->title) : std::nullopt;
-  return {LIGHTLEDGER_VERSION, info(options.command).name, title, std::move(warnings)};
-}
-
-/// The warnings of reading the file, then those of the analysis.
-Warnings joined(const Input& input, const Warnings& later) {
-  Warnings all = input.warnings;
-  all.insert(all.end(), later.begin(), later.end());
-  return all;
-}
-
-void refuse_file(const Faults& faults, const Input& input) {
-  if (!faults.none())
-    throw InputError(assembly::describe(faults, input.file, input.text));
-}
-
-void refuse_request(const Faults& faults, const Options& options) {
-  if (!faults.none())
-    throw InputError(assembly::describe(faults, "lightledger", "") + command_usage(info(options.command)) +
-                     '\n');
-}
 
 Answer answer_budget(const Options& options, const Input& input) {
   const auto start = std::chrono::steady_clock::now();
@@ -180,59 +132,6 @@ Answer answer_media(const Options& options, const Input& input) {
       options, [&] { return report::media_json(envelope, *result.media); },
       [&] { return report::media_csv(*result.media); },
       [&] { return report::media_text(*result.media, style_of(options)); });
-}
-
-Answer answer_draw(const Options& options, const Input& input) {
-  const analysis::DrawingResult result = analysis::drawing(*input.assembly, {.views = options.views});
-  refuse_file(result.faults, input);
-
-  const report::Envelope envelope = envelope_of(options, input, input.warnings);
-  Answer answer = written(
-      options, [&] { return report::drawing_json(envelope, *result.drawing); },
-      [&] { return report::drawing_csv(*result.drawing); },
-      [&] {
-        return report::drawing_text(*input.assembly, *result.drawing, *options.out, envelope.warnings,
-                                    style_of(options));
-      });
-  answer.out = report::drawing_svg(input.assembly->title, *result.drawing);
-  return answer;
-}
-
-/// The budget that the page shows, traced once, and the verdicts on it.
-report::PageContent page_content(const Options& options, const Input& input) {
-  const assembly::Assembly& assembly = *input.assembly;
-  analysis::BudgetResult budget =
-      analysis::budget(assembly, {.split = analysis::Split::both, .threads = options.threads});
-  refuse_file(budget.faults, input);
-  analysis::Judgement verdicts = analysis::judge_all(assembly, *budget.budget);
-  refuse_file(verdicts.faults, input);
-  analysis::DrawingResult drawing = analysis::drawing(assembly);
-  refuse_file(drawing.faults, input);
-
-  report::PageContent content{envelope_of(options, input, joined(input, budget.warnings)),
-                              input.file,
-                              input.text,
-                              std::move(*budget.budget),
-                              std::move(verdicts),
-                              std::move(*drawing.drawing),
-                              {},
-                              {},
-                              {},
-                              {},
-                              {}};
-  content.coatings = analysis::occurring_coatings(assembly, content.budget);
-  content.paths = analysis::path_pictures(assembly, content.drawing.views.front().along, {});
-  return content;
-}
-
-Answer answer_report(const Options& options, const Input& input) {
-  const report::PageContent content = page_content(options, input);
-  Answer answer = written(
-      options, [&] { return report::page_json(*input.assembly, content); },
-      [&] { return report::budget_csv(content.budget); },
-      [&] { return report::page_text(*input.assembly, content, *options.out, style_of(options)); });
-  answer.out = report::page(*input.assembly, content);
-  return answer;
 }
 
 } // namespace

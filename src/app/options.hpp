@@ -36,8 +36,9 @@ struct Options {
   std::optional<std::string> incident, substrate;
   std::vector<double> wavelengths_nm, angles_deg; ///< empty where not given
 
-  std::optional<std::string> out;    ///< path of the picture or page, `-` for stdout
-  std::vector<analysis::View> views; ///< empty: the one that shows most
+  std::optional<std::string> out;     ///< path of the picture or page, `-` for stdout
+  std::vector<analysis::View> views;  ///< empty: the one that shows most
+  std::optional<std::uint64_t> ghost; ///< rank of the ghost to draw, from 1
 };
 
 } // namespace lightledger::app

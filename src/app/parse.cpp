@@ -76,6 +76,7 @@ private:
   void read_split(const std::vector<std::string>& values);
   void read_out(const std::vector<std::string>& values);
   void read_view(const std::vector<std::string>& values);
+  void read_ghost(const std::vector<std::string>& values);
   void read_against(const std::vector<std::string>& values);
   std::vector<double> read_steps(const char* option, const std::vector<std::string>& values);
 
@@ -110,6 +111,7 @@ Options Reader::read(const Words& words) {
   m_options.angles_deg = read_steps("--angles", words.angles);
   read_out(words.out);
   read_view(words.view);
+  read_ghost(words.ghost);
   return m_options;
 }
 
@@ -263,6 +265,16 @@ void Reader::read_view(const std::vector<std::string>& values) {
     m_options.views = found->second;
   else
     note(fmt::format("--view '{}' is no view", *word), "x, y, z, all");
+}
+
+void Reader::read_ghost(const std::vector<std::string>& values) {
+  constexpr std::uint64_t most_ghosts = 10'000;
+  const std::optional<std::string> word = single("--ghost", values);
+  if (!word)
+    return;
+  m_options.ghost = whole_number(*word, 1, most_ghosts);
+  if (!m_options.ghost)
+    note(fmt::format("--ghost '{}' is no rank of a ghost", *word), "a whole number from 1 to 10000");
 }
 
 void Reader::read_against(const std::vector<std::string>& values) {

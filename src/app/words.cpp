@@ -54,8 +54,8 @@ const std::vector<OptionInfo>& own_options(Command command) {
   static const std::vector<OptionInfo> media{wavelengths};
   static const std::vector<OptionInfo> draw{
       {"--out", "PATH", "the drawing; NAME.svg in the current folder without it, - is stdout", &Words::out},
-      {"--view", "x|y|z|all", "look along an axis of the bench; along the best one without it",
-       &Words::view}};
+      {"--view", "x|y|z|all", "look along an axis of the bench; along the best one without it", &Words::view},
+      {"--ghost", "K", "the rays of the K-th brightest ghost as well", &Words::ghost}};
   static const std::vector<OptionInfo> report{
       {"--out", "PATH", "the page; NAME.html in the current folder without it, - is stdout", &Words::out}};
   static const std::vector<OptionInfo> ghosts{

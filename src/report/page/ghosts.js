@@ -29,7 +29,7 @@ function tellGhosts(parent) {
     `${ghosts.paths_traced} bring light. Together they bring ${relativeWords(ghosts.total)} of the launched power` +
     (ghosts.uncertainty === null ? "" : ` (± ${errorSize(ghosts.uncertainty)})`) +
     `, ${relativeWords(ghosts.total / budget.delivered)} of what is delivered.`,
-  `${perCent(ghosts.returned)} returns through the first station.`];
+  culpritWords(), `${perCent(ghosts.returned)} returns through the first station.`].filter((words) => words);
   parent.append("p").text(sentences.join(" "));
   parent.append("p").attr("id", "not-followed").text(
     `Not followed: ${relativeWords(ghosts.not_followed)} of the launched power. No path that was left out can bring more than that.`);
@@ -130,17 +130,56 @@ function reflectanceAt(name) {
   return row.does === "refract" && arrives > 0 ? row.aside / arrives : null;
 }
 
+/** Each bounce with its reflectance, as this path meets it where that is known. */
+function bouncesOf(path) {
+  return path.bounces.map((name, index) => ({
+    words: stationNumber(name) === null ? name : stationName(stationNumber(name)),
+    now: path.reflectances ? path.reflectances[index] : reflectanceAt(name),
+    needed: path.needed_reflectances ? path.needed_reflectances[index] : null
+  })).filter((bounce) => bounce.now !== null && bounce.now !== undefined);
+}
+
 /** What would cure a ghost: its power goes as the product of the reflectances it bounces from. */
 function cureWords(path) {
+  const bounces = bouncesOf(path);
+  if (!bounces.length) return "";
+  const known = bounces.filter((bounce) => bounce.needed !== null);
+  if (known.length) return "Any one of these alone keeps the limit on ghosts: " +
+    known.map((bounce) => `${bounce.words} from R = ${quantity(bounce.now)} to at most ${quantity(bounce.needed)}`).join("; ") + ".";
   const limit = ghostLimit();
-  const wanted = limit !== null ? limit / path.relative_power : 0.1;
-  if (limit !== null && wanted >= 1) return "It is within the requirement.";
-  const known = path.bounces.map((name) => ({name, now: reflectanceAt(name)})).filter((entry) => entry.now !== null);
-  if (!known.length) return "Its reflectances are not in the ledger.";
-  const aim = limit !== null ? "To meet the requirement" : "To make it ten times fainter";
-  const cures = known.map((entry) => `${stationNumber(entry.name)} ${entry.name} from R = ${quantity(entry.now)} to ≤ ${quantity(entry.now * wanted)}`);
-  return `${aim}, bring ${cures.join(", or ")}` +
-    (known.length > 1 ? `; or both by a factor ${quantity(Math.sqrt(1 / wanted))}.` : ".");
+  if (limit !== null && path.relative_power <= limit) return "It is within the requirement.";
+  const factor = limit !== null ? path.relative_power / limit : 10;
+  return (limit !== null ? "To meet the requirement, bring " : "To make it ten times fainter, bring ") +
+    bounces.map((bounce) => `${bounce.words} from R = ${quantity(bounce.now)} to at most ${quantity(bounce.now / factor)}`).join(", or ") +
+    (bounces.length > 1 ? `; or both down by a factor ${quantity(Math.sqrt(factor))}.` : ".");
+}
+
+/** The surface that has its hand in most of the ghosts' light. */
+function culpritWords() {
+  const culprit = ghosts.culprit;
+  if (!culprit) return "";
+  const number = stationNumber(culprit.name);
+  return `${number === null ? culprit.name : stationName(number)} takes part in ${perCent(culprit.power / ghosts.total)} of it` +
+    (culprit.reflectance === null ? "." : `, reflecting ${perCent(culprit.reflectance)}.`) +
+    (culprit.needed_reflectance === null || culprit.needed_reflectance === undefined ? ""
+      : ` At most ${perCent(culprit.needed_reflectance)} there would keep the limit.`);
+}
+
+/** Places where light draws together inside the train. */
+function drawFoci(parent) {
+  const foci = ghosts.foci || [];
+  if (!foci.length) return;
+  const name = (words) => stationNumber(words) === null ? words : stationName(stationNumber(words));
+  const details = parent.append("details").attr("id", "foci");
+  details.append("summary").text(`Where light draws together: ${counted(foci.length, "place")}`);
+  details.append("p").attr("class", "caution").text("Geometrical estimates for comparison. Whether a place is harmed, or harms, is for a laser safety officer and IEC 60825-1 to say.");
+  table(details.append("div").attr("class", "wide"), "Brightest first; irradiance relative to that of the launched beam", [
+    {heading: "between", text: true, cell: (d) => `${name(d.from)} and ${name(d.to)}`},
+    {heading: "on or in", text: true, cell: (d) => d.on !== null ? name(d.on) : d.medium},
+    {heading: "behind, mm", cell: (d) => quantity(d.distance_mm)},
+    {heading: "by", text: true, cell: (d) => d.bounces.length ? "bounces at " + d.bounces.map(name).join(", ") : "the intended beam"},
+    {heading: "power", cell: (d) => relativeWords(d.power)}, {heading: "radius, mm", cell: (d) => quantity(d.radius_mm)},
+    {heading: "irradiance", cell: (d) => relativeWords(d.irradiance_ratio)}], foci);
 }
 
 function drawSpot(parent, number) {
@@ -299,5 +338,6 @@ function drawGhosts() {
   if (ghostPoints().length) drawGhostPlot(pair.append("div"));
   drawGhostDetail(pair.append("div").attr("id", "ghost-detail").attr("aria-live", "polite"));
   drawGhostTable(parent);
+  drawFoci(parent);
   drawGhostRays();
 }
