@@ -123,7 +123,7 @@ BudgetResult budget(const Assembly& assembly, const BudgetOptions& options) {
   const auto train = trace::prepare(assembly, result.faults);
   if (!train)
     return result;
-  const Traced traced = trace::trace(*train, {.threads = options.threads});
+  const Traced traced = trace::trace(*train, {.threads = options.threads, .progress = options.progress});
   if (traced.total.launched <= 0.0) {
     const assembly::Mark mark =
         assembly.document ? assembly.document->locate("light.rays") : assembly::Mark{};

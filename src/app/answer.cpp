@@ -3,10 +3,12 @@
 #include "answer_parts.hpp"
 #include "answer_pictures.hpp"
 #include "input_error.hpp"
+#include "progress_bar.hpp"
 
 #include <lightledger/analysis/coating_curve.hpp>
 #include <lightledger/analysis/medium_table.hpp>
 #include <lightledger/analysis/polarization.hpp>
+#include <lightledger/analysis/remedy.hpp>
 #include <lightledger/analysis/requirements.hpp>
 #include <lightledger/report/budget.hpp>
 #include <lightledger/report/check.hpp>
@@ -21,10 +23,17 @@
 namespace lightledger::app {
 namespace {
 
+/// What an analysis of rays gives, its progress shown meanwhile.
+template <class Analysis>
+auto watched(const Options& options, Analysis analysis) {
+  ProgressBar bar(!options.quiet);
+  return analysis(analysis::BudgetOptions{options.split, options.threads, &bar});
+}
+
 Answer answer_budget(const Options& options, const Input& input) {
   const auto start = std::chrono::steady_clock::now();
   const analysis::BudgetResult result =
-      analysis::budget(*input.assembly, {.split = options.split, .threads = options.threads});
+      watched(options, [&](const auto& asked) { return analysis::budget(*input.assembly, asked); });
   const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
   refuse_file(result.faults, input);
 
@@ -33,7 +42,9 @@ Answer answer_budget(const Options& options, const Input& input) {
       options, [&] { return report::budget_json(envelope, *result.budget); },
       [&] { return report::budget_csv(*result.budget); },
       [&] {
-        return report::budget_text(*input.assembly, *result.budget, envelope.warnings, elapsed,
+        const auto remedies =
+            analysis::remedies(*input.assembly, *result.budget, {.threads = options.threads});
+        return report::budget_text(*input.assembly, *result.budget, remedies, envelope.warnings, elapsed,
                                    style_of(options));
       });
 }
@@ -65,7 +76,8 @@ Answer answer_ghosts(const Options& options, const Input& input) {
 }
 
 Answer answer_check(const Options& options, const Input& input) {
-  const analysis::CheckResult result = analysis::check(*input.assembly, {.threads = options.threads});
+  const analysis::CheckResult result =
+      watched(options, [&](const auto& asked) { return analysis::check(*input.assembly, asked); });
   refuse_file(result.faults, input);
 
   const report::Envelope envelope = envelope_of(options, input, joined(input, result.warnings));
@@ -127,11 +139,14 @@ Answer answer_media(const Options& options, const Input& input) {
   const analysis::MediumTableResult result = analysis::medium_table(options.name, options.wavelengths_nm);
   refuse_request(result.faults, options);
 
-  const report::Envelope envelope = envelope_of(options, input, {});
+  Warnings warnings;
+  if (!options.changes.empty())
+    warnings.emplace_back("media reads no assembly: --set, --rays and --accuracy change nothing here");
+  const report::Envelope envelope = envelope_of(options, input, std::move(warnings));
   return written(
       options, [&] { return report::media_json(envelope, *result.media); },
       [&] { return report::media_csv(*result.media); },
-      [&] { return report::media_text(*result.media, style_of(options)); });
+      [&] { return report::media_text(*result.media, envelope.warnings, style_of(options)); });
 }
 
 } // namespace

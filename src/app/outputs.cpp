@@ -2,11 +2,13 @@
 
 #include "help.hpp"
 #include "input_error.hpp"
+#include "interruption.hpp"
 
 #include <lightledger/assembly/diagnostics.hpp>
 
 #include <fmt/format.h>
 
+#include <algorithm>
 #include <system_error>
 
 namespace lightledger::app {
@@ -67,20 +69,26 @@ void Outputs::refuse_clashes(const Options& options) {
 }
 
 void Outputs::write(const Answer& answer) {
-  if (m_folder)
-    m_folder->write(answer.files);
-  bool stdout_is_taken = false;
-  for (const Target& target : m_targets)
-    if (target.output->is_stdout())
-      stdout_is_taken = true;
-    else
-      target.output->stage(answer.*target.document);
-  for (const Target& target : m_targets)
-    target.output->publish();
-  for (const Target& target : m_targets)
-    if (target.output->is_stdout())
-      target.output->stage(answer.*target.document);
-  if (!stdout_is_taken)
+  const auto stage = [&](Output::Kind kind) {
+    for (const Target& target : m_targets)
+      if (target.output->kind() == kind)
+        target.output->stage(answer.*target.document);
+  };
+  stage(Output::Kind::device);
+  {
+    const Uninterrupted together;
+    if (m_folder)
+      m_folder->write(answer.files);
+    stage(Output::Kind::file);
+    for (const Target& target : m_targets)
+      target.output->publish();
+    files_are_written();
+  }
+  stage(Output::Kind::standard_output);
+  const auto takes_stdout = [](const Target& target) {
+    return target.output->kind() == Output::Kind::standard_output;
+  };
+  if (std::ranges::none_of(m_targets, takes_stdout))
     Output("-").stage(answer.text);
 }
 

@@ -2,6 +2,7 @@
 
 #include <lightledger/assembly/assembly.hpp>
 #include <lightledger/assembly/diagnostics.hpp>
+#include <lightledger/trace/progress.hpp>
 
 #include <array>
 #include <cstdint>
@@ -67,6 +68,7 @@ struct Budget {
 struct BudgetOptions {
   Split split = Split::none;
   int threads = 0; ///< 0: as many as the machine has
+  trace::Progress* progress = nullptr;
 };
 
 struct BudgetResult {
