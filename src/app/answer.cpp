@@ -1,9 +1,9 @@
 #include "answer.hpp"
 
-#include "help.hpp"
+#include "answer_parts.hpp"
+#include "answer_pictures.hpp"
 #include "input_error.hpp"
 #include "progress_bar.hpp"
-#include "terminal.hpp"
 
 #include <lightledger/analysis/coating_curve.hpp>
 #include <lightledger/analysis/medium_table.hpp>
@@ -22,52 +22,6 @@
 
 namespace lightledger::app {
 namespace {
-
-using assembly::Faults;
-using Warnings = std::vector<std::string>;
-
-/// The documents asked for, each made by its writer only then.
-template <class Json, class Csv, class Text>
-Answer written(const Options& options, Json json, Csv csv, Text text) {
-  Answer answer;
-  if (options.json)
-    answer.json = json();
-  if (options.csv)
-    answer.csv = csv();
-  if (!options.quiet)
-    answer.text = text();
-  return answer;
-}
-
-report::TextStyle style_of(const Options& options) {
-  report::TextStyle style = style_of_stdout();
-  style.decibels = options.decibels;
-  return style;
-}
-
-report::Envelope envelope_of(const Options& options, const Input& input, Warnings warnings) {
-  const std::optional<std::string> title =
-      input.assembly ? std::optional(input.assembly->title) : std::nullopt;
-  return {LIGHTLEDGER_VERSION, info(options.command).name, title, std::move(warnings)};
-}
-
-/// The warnings of reading the file, then those of the analysis.
-Warnings joined(const Input& input, const Warnings& later) {
-  Warnings all = input.warnings;
-  all.insert(all.end(), later.begin(), later.end());
-  return all;
-}
-
-void refuse_file(const Faults& faults, const Input& input) {
-  if (!faults.none())
-    throw InputError(assembly::describe(faults, input.file, input.text));
-}
-
-void refuse_request(const Faults& faults, const Options& options) {
-  if (!faults.none())
-    throw InputError(assembly::describe(faults, "lightledger", "") + command_usage(info(options.command)) +
-                     '\n');
-}
 
 /// What an analysis of rays gives, its progress shown meanwhile.
 template <class Analysis>
@@ -222,6 +176,10 @@ Answer answer(const Options& options, const Input& input) {
     return answer_polarization(options, input);
   case Command::coating:
     return answer_coating(options, input);
+  case Command::draw:
+    return answer_draw(options, input);
+  case Command::report:
+    return answer_report(options, input);
   case Command::media:
     break;
   }
