@@ -2,7 +2,7 @@
 
 #include <algorithm>
 #include <optional>
-#include <ranges>
+#include <span>
 #include <variant>
 
 namespace lightledger::analysis {
@@ -112,7 +112,7 @@ std::vector<Remedy> remedies(const Assembly& assembly, const Budget& budget, con
   if (!(as_it_is > 0.0))
     return found;
   const std::optional<double> limit = missed_limit(assembly, budget);
-  for (const std::size_t station : stations | std::views::take(most_remedies)) {
+  for (const std::size_t station : std::span(stations).first(std::min(stations.size(), most_remedies))) {
     const double ratio = delivered(with_perfect_coating(sampled, station), options) / as_it_is;
     const bool reflects = assembly.stations[station].intended == Act::bounce;
     const Remedy better = remedy(station, reflects, budget.delivered * ratio, limit);

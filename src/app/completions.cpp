@@ -166,7 +166,7 @@ std::string zsh_completion() {
 _lightledger() {{
   local -a commands
   commands=(
-{})
+{}  )
   if (( CURRENT == 2 )); then
     _describe command commands
     return

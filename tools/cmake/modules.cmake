@@ -18,13 +18,17 @@ function(lightledger_tests name)
     file(GLOB_RECURSE found CONFIGURE_DEPENDS ${PROJECT_SOURCE_DIR}/tests/${folder}/*.cpp)
     list(APPEND sources ${found})
   endforeach()
+  set(sanitized 0)
+  if(LIGHTLEDGER_SANITIZE)
+    set(sanitized 1)
+  endif()
   add_executable(${name} ${sources})
   target_include_directories(${name} PRIVATE ${PROJECT_SOURCE_DIR}/tests ${PROJECT_SOURCE_DIR}/src)
   target_compile_definitions(${name} PRIVATE
     LIGHTLEDGER_SOURCE_DIR="${PROJECT_SOURCE_DIR}"
     LIGHTLEDGER_PROGRAM="$<TARGET_FILE:lightledger>"
     LIGHTLEDGER_BUILD_DIR="${PROJECT_BINARY_DIR}"
-    LIGHTLEDGER_SANITIZED=$<BOOL:${LIGHTLEDGER_SANITIZE}>)
+    LIGHTLEDGER_SANITIZED=${sanitized})
   target_link_libraries(${name} PRIVATE ${TESTS_LINKS})
   add_test(NAME ${name} COMMAND ${name} WORKING_DIRECTORY ${PROJECT_SOURCE_DIR})
 endfunction()
