@@ -8,6 +8,7 @@
 #include <lightledger/trace/tree.hpp>
 
 #include <memory>
+#include <optional>
 #include <vector>
 
 namespace lightledger::trace {
@@ -23,6 +24,8 @@ struct TreeSetting {
   optics::Coherency coherency;
   ArrivalReader reader;
   std::vector<PlanOp> detectors; ///< per wavelength, reflecting
+  /// Per wavelength and operator, what it reflects at normal incidence: a guess of what it reflects at all.
+  std::vector<std::vector<double>> reflects;
 };
 
 /// A run of light from one meeting to the next.
@@ -57,7 +60,8 @@ private:
   /// The rays of one beam, before and behind a meeting in turn.
   struct Level {
     RayBlock block[2];
-    int first; ///< which of them holds the rays
+    int first;      ///< which of them holds the rays
+    LaneMap launch; ///< of each lane, the lane in which its ray was launched
   };
   /// Where in the tree a beam is: bounces left, and the number of the first path that starts here.
   struct Place {
@@ -66,13 +70,14 @@ private:
   };
 
   void see_image(const RayBlock& block);
-  void follow(PathTree::Exit exit, std::size_t depth, Place place);
+  void follow(PathTree::Exit exit, double power, std::size_t depth, Place place);
   double pass(LegId leg, const PathTree::Junction& junction, std::size_t depth);
   double fork(const PathTree::Exit& exit, std::size_t depth, Place& place);
+  std::optional<double> pass_by(const PathTree::Exit& exit, double power, std::size_t depth, Place& place);
   void branch(const PathTree::Exit& exit, double power, std::size_t depth, Place place);
   bool cut_off(const PathTree::Exit& exit, double power, Place place);
   void end(End end, double power, Place place);
-  void arrive(const RayBlock& rays, Place place);
+  void arrive(const Level& level, Place place);
   void enter(const Entry& entry);
   [[nodiscard]] bool bounced(Place place) const { return place.left < m_tree.bounces(); }
 
@@ -85,6 +90,7 @@ private:
   std::unique_ptr<Level[]> m_levels;
   double m_faintest = 0.0;
   Arrival m_image, m_arrival;
+  const std::vector<double>& m_reflects;
   PathTable m_paths, m_returned;
   PathSpans m_cut;
   std::vector<PathTree::JunctionId> m_bounced;
