@@ -57,6 +57,21 @@ std::vector<std::vector<double>> reflected_squarely(const Train& train) {
   return all;
 }
 
+std::vector<double> prospects(const PathTree& tree, const std::vector<double>& reflects) {
+  std::vector<double> all;
+  for (PathTree::JunctionId id = 0; id < tree.junctions(); ++id) {
+    double best = 0.0;
+    PathTree::Exit exit{true, 0, id, End::absorbed};
+    for (; exit.onward; exit = tree.junction(exit.to).main) {
+      const PathTree::Junction& junction = tree.junction(exit.to);
+      best = std::max(best, junction.side_bounces ? reflects[junction.op] : 0.0);
+      best = std::max(best, junction.side.onward && !junction.side_bounces ? 1.0 : 0.0);
+    }
+    all.push_back(exit.end == End::detected ? 1.0 : best);
+  }
+  return all;
+}
+
 /// Where most lanes hold no ray any more, moves those that do together.
 void close_ranks(RayBlock& block, LaneMap& launch) {
   constexpr int worth_it = 8; ///< fewer lanes are one step of the kernel
@@ -87,14 +102,17 @@ void close_ranks(RayBlock& block, LaneMap& launch) {
 TreeSetting::TreeSetting(const Train& of_train, const PathTree& of_paths, double cut_below)
     : train(of_train), tree(of_paths), floor(cut_below), reflectance(detector_reflectance(of_train)),
       coherency(optics::coherency(of_train.assembly->light.polarization)), reader(of_train),
-      detectors(reflecting_detectors(of_train)), reflects(reflected_squarely(of_train)) {}
+      detectors(reflecting_detectors(of_train)), reflects(reflected_squarely(of_train)) {
+  for (const std::vector<double>& of_plan : reflects)
+    prospects.push_back(lightledger::trace::prospects(tree, of_plan));
+}
 
 TreeWalk::TreeWalk(const TreeSetting& setting, std::size_t wavelength, TreeFound& found,
                    TreeObserver* observer)
     : m_setting(setting), m_tree(setting.tree), m_plan(setting.train.plans[wavelength]),
       m_detector(setting.detectors[wavelength]), m_found(found), m_observer(observer),
       m_levels(new Level[static_cast<std::size_t>(m_tree.bounces()) + most_free_sides + 2]),
-      m_reflects(setting.reflects[wavelength]) {}
+      m_reflects(setting.reflects[wavelength]), m_prospects(setting.prospects[wavelength]) {}
 
 void TreeWalk::run(const RayBlock& block) {
   m_faintest = m_setting.floor * launched(block);
@@ -240,10 +258,13 @@ void TreeWalk::branch(const PathTree::Exit& exit, double power, std::size_t dept
     follow(exit, power, depth, place);
 }
 
-/// Whether a beam is not worth following: nothing is left of it, or so little that it is given up. What goes
-/// on as intended never is.
+/// Whether a beam is not worth following: nothing is left of it, or so little that what it may bring is given
+/// up. What goes on as intended never is.
 bool TreeWalk::cut_off(const PathTree::Exit& exit, double power, Place place) {
-  if (power > 0.0 && !(bounced(place) && power < m_faintest))
+  // On its way back it may bring nothing and yet tell what returns, unless it is faint itself.
+  constexpr double faint_itself = 1e-3;
+  const double prospect = power * std::max(m_prospects[exit.to], faint_itself);
+  if (power > 0.0 && !(bounced(place) && prospect < m_faintest))
     return false;
   if (power > 0.0)
     m_cut.append(place.number, place.number + m_tree.paths(exit, place.left));

@@ -19,13 +19,16 @@ struct TreeSetting {
 
   const Train& train;
   const PathTree& tree;
-  double floor;       ///< beams with a smaller share of the launched power are cut off
+  double floor;       ///< beams that may bring a smaller share of the launched power are cut off
   double reflectance; ///< of the detector
   optics::Coherency coherency;
   ArrivalReader reader;
   std::vector<PlanOp> detectors; ///< per wavelength, reflecting
   /// Per wavelength and operator, what it reflects at normal incidence: a guess of what it reflects at all.
   std::vector<std::vector<double>> reflects;
+  /// Per wavelength and meeting, the share of the light on its way there that may at most reach the detector
+  /// by one path: all where it goes there by itself, else what its strongest bounce on the way reflects.
+  std::vector<std::vector<double>> prospects;
 };
 
 /// A run of light from one meeting to the next.
@@ -91,6 +94,7 @@ private:
   double m_faintest = 0.0;
   Arrival m_image, m_arrival;
   const std::vector<double>& m_reflects;
+  const std::vector<double>& m_prospects;
   PathTable m_paths, m_returned;
   PathSpans m_cut;
   std::vector<PathTree::JunctionId> m_bounced;
