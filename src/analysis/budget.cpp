@@ -80,7 +80,7 @@ void split_by_wavelength(const Assembly& assembly, const Traced& traced, Split s
     const Ledger ledger =
         part(traced, [&](const trace::GroupLedger& group) { return group.wavelength == i; });
     budget.by_wavelength.push_back({wavelengths[i].nm, ledger.delivered()});
-    if (split == Split::wavelength)
+    if (split == Split::wavelength || split == Split::both)
       budget.ledgers.push_back({wavelengths[i].nm, {}, station_budgets(assembly, ledger)});
   }
 }
@@ -90,7 +90,7 @@ void split_by_field(const Assembly& assembly, const Traced& traced, Split split,
   for (std::size_t i = 0; i < fields.size(); ++i) {
     const Ledger ledger = part(traced, [&](const trace::GroupLedger& group) { return group.field == i; });
     budget.by_field.push_back({fields[i].name, fields[i].at, ledger.delivered()});
-    if (split == Split::field)
+    if (split == Split::field || split == Split::both)
       budget.ledgers.push_back({{}, fields[i].name, station_budgets(assembly, ledger)});
   }
 }
@@ -123,7 +123,7 @@ BudgetResult budget(const Assembly& assembly, const BudgetOptions& options) {
   const auto train = trace::prepare(assembly, result.faults);
   if (!train)
     return result;
-  const Traced traced = trace::trace(*train, {.threads = options.threads});
+  const Traced traced = trace::trace(*train, {.threads = options.threads, .progress = options.progress});
   if (traced.total.launched <= 0.0) {
     const assembly::Mark mark =
         assembly.document ? assembly.document->locate("light.rays") : assembly::Mark{};

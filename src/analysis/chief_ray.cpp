@@ -112,7 +112,7 @@ std::optional<double> size(const std::optional<optics::Oriented>& oriented) {
 ChiefStation describe_station(const Train& train, const ChiefWalk& walk, std::size_t i) {
   const optics::Stokes launched = optics::stokes(train.assembly->light.polarization);
   const optics::Stokes stokes =
-      optics::apply(optics::mueller(optics::coherency_of(walk.so_far[i], walk.weight[i])), launched);
+      optics::through(optics::mueller(optics::coherency_of(walk.so_far[i], walk.weight[i])), launched);
   return {train.assembly->stations[i].name,       stokes,
           optics::degree_of_polarization(stokes), optics::azimuth_deg(stokes),
           optics::ellipticity_deg(stokes),        size(optics::diattenuation(walk.did[i])),

@@ -73,7 +73,7 @@ struct ProperFigures {
 ProperFigures proper_figures(const double* sums, State launched) {
   const optics::PauliCoherency t = coherency_at(sums);
   const Mueller m = optics::mueller(t);
-  const optics::Stokes out = optics::apply(m, optics::stokes(launched));
+  const optics::Stokes out = optics::through(m, optics::stokes(launched));
   ProperFigures figures;
   figures.diattenuation = optics::diattenuation(m);
   if (const auto parts = optics::decompose(m)) {
@@ -137,7 +137,7 @@ SumFigures evaluate(const std::vector<GroupSums>& groups, State launched, double
   SumFigures figures;
   DetectorFigures& d = figures.detector;
   d.mueller = detector_mueller(all.arriving(), parity);
-  d.stokes = optics::apply(d.mueller, optics::stokes(launched));
+  d.stokes = optics::through(d.mueller, optics::stokes(launched));
   d.dop = optics::degree_of_polarization(d.stokes);
   d.azimuth_deg = optics::azimuth_deg(d.stokes);
   d.ellipticity_deg = optics::ellipticity_deg(d.stokes);

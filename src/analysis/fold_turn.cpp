@@ -78,6 +78,10 @@ std::array<double, 3> angles_of(const Eigen::Matrix3d& r) {
           degrees * std::atan2(-r(0, 1), r(0, 0))};
 }
 
+std::array<double, 3> turned_first(double angle_deg, const std::array<double, 3>& angles_deg) {
+  return angles_of(trace::rotation({0.0, 0.0, angle_deg}) * trace::rotation(angles_deg));
+}
+
 bool met_once(const Assembly& assembly, std::size_t station) {
   return std::ranges::count(assembly.stations, assembly.stations[station].surface,
                             &assembly::Station::surface) == 1;
@@ -102,8 +106,14 @@ std::optional<FoldTurn> fold_turn(const trace::Train& train, const ChiefWalk& wa
     const double left = turning(angle);
     if (left > 0.5 * now || (best && left > best->retardance_deg - as_good_deg))
       continue;
-    const auto& tilt = assembly.surfaces[assembly.stations[i].surface].tilt_deg;
-    best = {i, angle, angles_of(trace::rotation({0.0, 0.0, angle}) * trace::rotation(tilt)), left, now};
+    const assembly::Station& station = assembly.stations[i];
+    // The frame behind keeps its x by the rule of the axis; to turn along, it must be turned back.
+    best = {i,
+            angle,
+            turned_first(angle, assembly.surfaces[station.surface].tilt_deg),
+            turned_first(-angle, station.turn_deg),
+            left,
+            now};
   }
   return best;
 }

@@ -76,7 +76,7 @@ public:
     for (std::size_t i = 0; i < m_plates.size(); ++i)
       k = optics::product(m_parts[i + 1], optics::product(m_plates[i].at(axes[i]), k));
     const optics::Complex crossed = m_crossing[0] * k[1] + m_crossing[1] * k[2] + m_crossing[2] * k[3];
-    const double power = optics::apply(optics::mueller(k), optics::stokes(m_state))[0];
+    const double power = optics::through(optics::mueller(k), optics::stokes(m_state))[0];
     return power > 0.0 ? std::norm(crossed) / power : 1.0;
   }
 

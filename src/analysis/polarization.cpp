@@ -78,7 +78,7 @@ PolarizationResult polarization(const Assembly& assembly, const PolarizationOpti
   if (!train)
     return result;
   const PolarizationSurvey survey(*train, all_sets(assembly));
-  Sampling sampling(*train, survey, {.rays_per_chunk = rays_per_chunk});
+  Sampling sampling(*train, survey, {.rays_per_chunk = rays_per_chunk, .progress = options.progress});
   bool accurate = true;
   trace::with_threads(options.threads, [&] { accurate = sampling.run(); });
   if (!launches_light(sampling)) {

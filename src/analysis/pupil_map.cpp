@@ -119,7 +119,7 @@ private:
       point.retardance_deg = retardance->size;
       point.retardance_axis_deg = optics::azimuth_of(retardance->axis[0], retardance->axis[1]);
     }
-    const double power = optics::apply(m, optics::stokes(state))[0];
+    const double power = optics::through(m, optics::stokes(state))[0];
     if (std::hypot(state.s1, state.s2, state.s3) > 1.0 - 1e-9 && power > 0.0) {
       const auto t = optics::crossing(state);
       point.cross_leakage = std::norm(t[0] * k[1] + t[1] * k[2] + t[2] * k[3]) / power;

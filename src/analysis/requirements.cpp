@@ -159,7 +159,8 @@ CheckResult check(const Assembly& assembly, const BudgetOptions& options) {
   }
   std::optional<Polarization> polarized;
   if (asks_for(assembly, polarization_prefix)) {
-    PolarizationResult found = polarization(assembly, {.threads = options.threads});
+    PolarizationResult found =
+        polarization(assembly, {.threads = options.threads, .progress = options.progress});
     add_new(found.warnings, result.warnings);
     polarized = std::move(found.polarization);
   }

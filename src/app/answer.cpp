@@ -1,12 +1,14 @@
 #include "answer.hpp"
 
-#include "help.hpp"
+#include "answer_parts.hpp"
+#include "answer_pictures.hpp"
 #include "input_error.hpp"
-#include "terminal.hpp"
+#include "progress_bar.hpp"
 
 #include <lightledger/analysis/coating_curve.hpp>
 #include <lightledger/analysis/medium_table.hpp>
 #include <lightledger/analysis/polarization.hpp>
+#include <lightledger/analysis/remedy.hpp>
 #include <lightledger/analysis/requirements.hpp>
 #include <lightledger/report/budget.hpp>
 #include <lightledger/report/check.hpp>
@@ -21,56 +23,17 @@
 namespace lightledger::app {
 namespace {
 
-using assembly::Faults;
-using Warnings = std::vector<std::string>;
-
-/// The documents asked for, each made by its writer only then.
-template <class Json, class Csv, class Text>
-Answer written(const Options& options, Json json, Csv csv, Text text) {
-  Answer answer;
-  if (options.json)
-    answer.json = json();
-  if (options.csv)
-    answer.csv = csv();
-  if (!options.quiet)
-    answer.text = text();
-  return answer;
-}
-
-report::TextStyle style_of(const Options& options) {
-  report::TextStyle style = style_of_stdout();
-  style.decibels = options.decibels;
-  return style;
-}
-
-report::Envelope envelope_of(const Options& options, const Input& input, Warnings warnings) {
-  const std::optional<std::string> title =
-      input.assembly ? std::optional(input.assembly->title) : std::nullopt;
-  return {LIGHTLEDGER_VERSION, info(options.command).name, title, std::move(warnings)};
-}
-
-/// The warnings of reading the file, then those of the analysis.
-Warnings joined(const Input& input, const Warnings& later) {
-  Warnings all = input.warnings;
-  all.insert(all.end(), later.begin(), later.end());
-  return all;
-}
-
-void refuse_file(const Faults& faults, const Input& input) {
-  if (!faults.none())
-    throw InputError(assembly::describe(faults, input.file, input.text));
-}
-
-void refuse_request(const Faults& faults, const Options& options) {
-  if (!faults.none())
-    throw InputError(assembly::describe(faults, "lightledger", "") + command_usage(info(options.command)) +
-                     '\n');
+/// What an analysis of rays gives, its progress shown meanwhile.
+template <class Analysis>
+auto watched(const Options& options, Analysis analysis) {
+  ProgressBar bar(!options.quiet);
+  return analysis(analysis::BudgetOptions{options.split, options.threads, &bar});
 }
 
 Answer answer_budget(const Options& options, const Input& input) {
   const auto start = std::chrono::steady_clock::now();
   const analysis::BudgetResult result =
-      analysis::budget(*input.assembly, {.split = options.split, .threads = options.threads});
+      watched(options, [&](const auto& asked) { return analysis::budget(*input.assembly, asked); });
   const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
   refuse_file(result.faults, input);
 
@@ -79,7 +42,9 @@ Answer answer_budget(const Options& options, const Input& input) {
       options, [&] { return report::budget_json(envelope, *result.budget); },
       [&] { return report::budget_csv(*result.budget); },
       [&] {
-        return report::budget_text(*input.assembly, *result.budget, envelope.warnings, elapsed,
+        const auto remedies =
+            analysis::remedies(*input.assembly, *result.budget, {.threads = options.threads});
+        return report::budget_text(*input.assembly, *result.budget, remedies, envelope.warnings, elapsed,
                                    style_of(options));
       });
 }
@@ -111,7 +76,8 @@ Answer answer_ghosts(const Options& options, const Input& input) {
 }
 
 Answer answer_check(const Options& options, const Input& input) {
-  const analysis::CheckResult result = analysis::check(*input.assembly, {.threads = options.threads});
+  const analysis::CheckResult result =
+      watched(options, [&](const auto& asked) { return analysis::check(*input.assembly, asked); });
   refuse_file(result.faults, input);
 
   const report::Envelope envelope = envelope_of(options, input, joined(input, result.warnings));
@@ -127,9 +93,12 @@ Answer answer_check(const Options& options, const Input& input) {
 
 Answer answer_polarization(const Options& options, const Input& input) {
   const auto start = std::chrono::steady_clock::now();
-  const analysis::PolarizationResult result = analysis::polarization(
-      *input.assembly,
-      {.against = options.against, .maps = options.maps.has_value(), .threads = options.threads});
+  const analysis::PolarizationResult result = watched(options, [&](const auto& asked) {
+    return analysis::polarization(*input.assembly, {.against = options.against,
+                                                    .maps = options.maps.has_value(),
+                                                    .threads = asked.threads,
+                                                    .progress = asked.progress});
+  });
   const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
   refuse_file(result.faults, input);
 
@@ -173,11 +142,14 @@ Answer answer_media(const Options& options, const Input& input) {
   const analysis::MediumTableResult result = analysis::medium_table(options.name, options.wavelengths_nm);
   refuse_request(result.faults, options);
 
-  const report::Envelope envelope = envelope_of(options, input, {});
+  Warnings warnings;
+  if (!options.changes.empty())
+    warnings.emplace_back("media reads no assembly: --set, --rays and --accuracy change nothing here");
+  const report::Envelope envelope = envelope_of(options, input, std::move(warnings));
   return written(
       options, [&] { return report::media_json(envelope, *result.media); },
       [&] { return report::media_csv(*result.media); },
-      [&] { return report::media_text(*result.media, style_of(options)); });
+      [&] { return report::media_text(*result.media, envelope.warnings, style_of(options)); });
 }
 
 } // namespace
@@ -204,6 +176,10 @@ Answer answer(const Options& options, const Input& input) {
     return answer_polarization(options, input);
   case Command::coating:
     return answer_coating(options, input);
+  case Command::draw:
+    return answer_draw(options, input);
+  case Command::report:
+    return answer_report(options, input);
   case Command::media:
     break;
   }

@@ -24,6 +24,7 @@ struct Input {
 /// What a command has to say; documents that nobody asked for are empty.
 struct Answer {
   std::string text, json, csv;
+  std::string out;                      ///< the picture or page
   std::vector<report::NamedFile> files; ///< for the folder that was asked for
   bool met = true;                      ///< false where `check` finds a requirement not met, or cannot tell
 };

@@ -1,15 +1,8 @@
 #include "commands.hpp"
 
 #include <algorithm>
-#include <array>
 
 namespace lightledger::app {
-namespace {
-
-constexpr std::array<std::string_view, 2> planned{"draw", "report"};
-
-} // namespace
-
 const std::vector<CommandInfo>& commands() {
   static const std::vector<CommandInfo> all{
       {Command::check, "check", "FILE", "Is the file sound, and are its requirements met?",
@@ -19,12 +12,16 @@ const std::vector<CommandInfo>& commands() {
       {Command::ghosts, "ghosts", "FILE", "Which unwanted reflections arrive, and how bright are they?",
        "lightledger ghosts systems/tide-pool-camera.yaml --top 5"},
       {Command::polarization, "polarization", "FILE",
-       "What happens to the state of polarization, and which station does it?",
+       "What becomes of the polarization, and by which station?",
        "lightledger polarization systems/relay-terminal.yaml --against wavelength --maps maps"},
       {Command::coating, "coating", "FILE NAME", "What does a coating do against wavelength and angle?",
        "lightledger coating systems/fog-bank-lidar.yaml lens_ar --wavelengths 500:560:20 --angles 0:30:15"},
       {Command::media, "media", "[NAME]", "Which media are known, and what are n and kappa of one?",
-       "lightledger media fused-silica --wavelengths 400:700:50"}};
+       "lightledger media fused-silica --wavelengths 400:700:50"},
+      {Command::draw, "draw", "FILE", "What does the train look like, to scale and with its rays?",
+       "lightledger draw systems/fog-bank-lidar.yaml --out lidar.svg"},
+      {Command::report, "report", "FILE", "How does all of it look, on one page ready to send?",
+       "lightledger report systems/fog-bank-lidar.yaml --out lidar.html"}};
   return all;
 }
 
@@ -37,12 +34,8 @@ const CommandInfo* find_command(std::string_view name) {
   return found == commands().end() ? nullptr : &*found;
 }
 
-bool is_planned(std::string_view name) {
-  return std::ranges::find(planned, name) != planned.end();
-}
-
 std::vector<std::string_view> command_names() {
-  std::vector<std::string_view> names(planned.begin(), planned.end());
+  std::vector<std::string_view> names;
   for (const CommandInfo& command : commands())
     names.emplace_back(command.name);
   return names;

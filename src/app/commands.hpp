@@ -7,7 +7,7 @@
 
 namespace lightledger::app {
 
-enum class Command { check, budget, ghosts, polarization, coating, media };
+enum class Command { check, budget, ghosts, polarization, coating, media, draw, report };
 
 /// A command as the user sees it.
 struct CommandInfo {
@@ -23,9 +23,6 @@ struct CommandInfo {
 
 /// The command of a name, none for anything else.
 [[nodiscard]] const CommandInfo* find_command(std::string_view name);
-
-/// Part of the contract, but not of this version.
-[[nodiscard]] bool is_planned(std::string_view name);
 
 /// All names, for suggestions.
 [[nodiscard]] std::vector<std::string_view> command_names();

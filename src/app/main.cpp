@@ -1,4 +1,5 @@
 #include "input_error.hpp"
+#include "interruption.hpp"
 #include "run.hpp"
 #include "terminal.hpp"
 
@@ -30,6 +31,7 @@ int main(int count, char** arguments) {
   using namespace lightledger::app;
   try {
     make_writing_safe();
+    watch_for_interruption();
     return run(std::vector<std::string>(arguments + (count > 0 ? 1 : 0), arguments + count));
   } catch (const InputError& error) {
     std::fputs(error.what(), stderr);

@@ -3,6 +3,7 @@
 #include "commands.hpp"
 
 #include <lightledger/analysis/budget.hpp>
+#include <lightledger/analysis/drawing.hpp>
 #include <lightledger/analysis/ghosts.hpp>
 #include <lightledger/analysis/polarization.hpp>
 #include <lightledger/assembly/load.hpp>
@@ -34,6 +35,10 @@ struct Options {
   std::optional<std::string> maps; ///< a folder
   std::optional<std::string> incident, substrate;
   std::vector<double> wavelengths_nm, angles_deg; ///< empty where not given
+
+  std::optional<std::string> out;     ///< path of the picture or page, `-` for stdout
+  std::vector<analysis::View> views;  ///< empty: the one that shows most
+  std::optional<std::uint64_t> ghost; ///< rank of the ghost to draw, from 1
 };
 
 } // namespace lightledger::app

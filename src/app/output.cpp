@@ -1,5 +1,7 @@
 #include "output.hpp"
 
+#include "interruption.hpp"
+
 #include <fcntl.h>
 #include <sys/stat.h>
 #include <sys/sysmacros.h>
@@ -64,7 +66,7 @@ Descriptor create_beside(const fs::path& target, const std::string& path, std::s
 Output::Output(std::string path) : m_path(std::move(path)) {
   const std::optional<struct stat> status = m_path == "-" ? std::nullopt : status_of(m_path);
   if (m_path == "-" || (status && is_standard_output(*status))) {
-    m_stdout = true;
+    m_kind = Kind::standard_output;
     m_direct = Descriptor::standard_output();
   } else if (status && !S_ISREG(status->st_mode)) {
     open_device();
@@ -80,6 +82,7 @@ Output::~Output() {
 }
 
 void Output::open_device() {
+  m_kind = Kind::device;
   m_target = m_path;
   m_direct = Descriptor(open(m_path.c_str(), O_WRONLY | O_NOCTTY | O_CLOEXEC));
   if (!m_direct.is_open())
@@ -91,14 +94,15 @@ void Output::probe_file() {
     throw std::system_error(EISDIR, std::generic_category(), m_path);
   if (status_of(m_target) && access(m_target.c_str(), W_OK) != 0)
     throw_errno(m_path);
+  const Uninterrupted briefly;
   std::string probe;
   create_beside(m_target, m_path, probe);
   unlink(probe.c_str());
 }
 
 bool Output::same_place(const Output& other) const {
-  if (m_stdout || other.m_stdout)
-    return m_stdout && other.m_stdout;
+  if (is_stdout() || other.is_stdout())
+    return is_stdout() && other.is_stdout();
   const auto mine = status_of(m_target);
   const auto theirs = status_of(other.m_target);
   if (mine && theirs)
@@ -113,8 +117,8 @@ bool Output::is_file(const fs::path& path) const {
 }
 
 void Output::stage(std::string_view document) {
-  if (m_direct.is_open()) {
-    m_direct.write(document, m_stdout ? "standard output" : m_path);
+  if (m_kind != Kind::file) {
+    m_direct.write(document, is_stdout() ? "standard output" : m_path);
     m_direct.close(m_path);
     return;
   }

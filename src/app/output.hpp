@@ -21,7 +21,9 @@ public:
   Output& operator=(const Output&) = delete;
 
   [[nodiscard]] const std::string& path() const { return m_path; }
-  [[nodiscard]] bool is_stdout() const { return m_stdout; }
+  enum class Kind { file, device, standard_output };
+  [[nodiscard]] Kind kind() const { return m_kind; }
+  [[nodiscard]] bool is_stdout() const { return m_kind == Kind::standard_output; }
 
   /// Whether two documents would get into each other's way; the null device takes any number.
   [[nodiscard]] bool same_place(const Output& other) const;
@@ -38,7 +40,7 @@ private:
 
   std::string m_path;
   std::filesystem::path m_target; ///< with links followed
-  bool m_stdout = false;
+  Kind m_kind = Kind::file;
   Descriptor m_direct;     ///< of stdout, a device or a pipe
   std::string m_temporary; ///< of a staged file; empty without one
 };

@@ -7,7 +7,10 @@
 
 #include <lightledger/assembly/diagnostics.hpp>
 
+#include <memory>
 #include <optional>
+#include <string>
+#include <vector>
 
 namespace lightledger::app {
 
@@ -21,10 +24,19 @@ public:
   void write(const Answer& answer);
 
 private:
-  void open_folder(const char* option, const std::optional<std::string>& path, assembly::Faults& faults);
-  [[nodiscard]] bool stdout_is_taken() const;
+  /// A place and the document that goes there.
+  struct Target {
+    const char* option;
+    std::string Answer::*document;
+    std::unique_ptr<Output> output;
+  };
 
-  std::optional<Output> m_json, m_csv;
+  void open(const char* option, const std::optional<std::string>& path, std::string Answer::*document);
+  void open_folder(const char* option, const std::optional<std::string>& path);
+  void refuse_clashes(const Options& options);
+
+  std::vector<Target> m_targets;
+  assembly::Faults m_faults;
   std::optional<Folder> m_folder;
 };
 

@@ -11,6 +11,8 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <filesystem>
+#include <map>
 #include <utility>
 
 namespace lightledger::app {
@@ -36,9 +38,6 @@ bool asks_for_help(std::string_view word) {
 const CommandInfo& command_of(const std::string& word) {
   if (const CommandInfo* command = find_command(word))
     return *command;
-  if (is_planned(word))
-    refuse({{}, fmt::format("the command '{}' is not available in this version", word), {}, {}},
-           program_usage());
   if (word.starts_with('-'))
     refuse({{}, fmt::format("'{}' stands where the command should", word), "options after the command", {}},
            program_usage());
@@ -75,6 +74,9 @@ private:
   void read_isa(const std::vector<std::string>& values);
   void read_ghosts(const Words& words);
   void read_split(const std::vector<std::string>& values);
+  void read_out(const std::vector<std::string>& values);
+  void read_view(const std::vector<std::string>& values);
+  void read_ghost(const std::vector<std::string>& values);
   void read_against(const std::vector<std::string>& values);
   std::vector<double> read_steps(const char* option, const std::vector<std::string>& values);
 
@@ -107,6 +109,9 @@ Options Reader::read(const Words& words) {
   m_options.substrate = single("--substrate", words.substrate);
   m_options.wavelengths_nm = read_steps("--wavelengths", words.wavelengths);
   m_options.angles_deg = read_steps("--angles", words.angles);
+  read_out(words.out);
+  read_view(words.view);
+  read_ghost(words.ghost);
   return m_options;
 }
 
@@ -239,6 +244,37 @@ void Reader::read_split(const std::vector<std::string>& values) {
   else
     note(fmt::format("--split '{}' is no way to split", *word), "wavelength, field",
          std::string(assembly::nearest(*word, {"wavelength", "field"})));
+}
+
+/// Beside the place asked for, the name of the file in the current folder.
+void Reader::read_out(const std::vector<std::string>& values) {
+  m_options.out = single("--out", values);
+  const char* ending = m_command == Command::draw ? ".svg" : m_command == Command::report ? ".html" : nullptr;
+  if (values.empty() && ending != nullptr)
+    m_options.out = std::filesystem::path(m_options.file).stem().string() + ending;
+}
+
+void Reader::read_view(const std::vector<std::string>& values) {
+  using analysis::View;
+  static const std::map<std::string_view, std::vector<View>> views{
+      {"x", {View::x}}, {"y", {View::y}}, {"z", {View::z}}, {"all", {View::x, View::y, View::z}}};
+  const std::optional<std::string> word = single("--view", values);
+  if (!word)
+    return;
+  if (const auto found = views.find(*word); found != views.end())
+    m_options.views = found->second;
+  else
+    note(fmt::format("--view '{}' is no view", *word), "x, y, z, all");
+}
+
+void Reader::read_ghost(const std::vector<std::string>& values) {
+  constexpr std::uint64_t most_ghosts = 10'000;
+  const std::optional<std::string> word = single("--ghost", values);
+  if (!word)
+    return;
+  m_options.ghost = whole_number(*word, 1, most_ghosts);
+  if (!m_options.ghost)
+    note(fmt::format("--ghost '{}' is no rank of a ghost", *word), "a whole number from 1 to 10000");
 }
 
 void Reader::read_against(const std::vector<std::string>& values) {

@@ -52,6 +52,12 @@ const std::vector<OptionInfo>& own_options(Command command) {
       wavelengths,
       {"--angles", "START:STOP:STEP", "degrees in the medium of incidence, or one number", &Words::angles}};
   static const std::vector<OptionInfo> media{wavelengths};
+  static const std::vector<OptionInfo> draw{
+      {"--out", "PATH", "the drawing; NAME.svg in the current folder without it, - is stdout", &Words::out},
+      {"--view", "x|y|z|all", "look along an axis of the bench; along the best one without it", &Words::view},
+      {"--ghost", "K", "the rays of the K-th brightest ghost as well", &Words::ghost}};
+  static const std::vector<OptionInfo> report{
+      {"--out", "PATH", "the page; NAME.html in the current folder without it, - is stdout", &Words::out}};
   static const std::vector<OptionInfo> ghosts{
       {"--bounces", "2|4", "follow at most so many; 2 without it", &Words::bounces},
       {"--floor", "X", "leave beams that may bring less of the launched power; 1e-12", &Words::floor},
@@ -70,6 +76,10 @@ const std::vector<OptionInfo>& own_options(Command command) {
     return coating;
   case Command::media:
     return media;
+  case Command::draw:
+    return draw;
+  case Command::report:
+    return report;
   case Command::check:
     break;
   }

@@ -14,6 +14,7 @@ struct Words {
   std::vector<std::string> json, csv, rays, accuracy, threads, isa, set;
   std::vector<std::string> bounces, floor, top, field, images;
   std::vector<std::string> split, against, maps, incident, substrate, wavelengths, angles;
+  std::vector<std::string> out, view, ghost;
   bool decibels = false;
   bool quiet = false;
   bool returned = false;

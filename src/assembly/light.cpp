@@ -29,7 +29,7 @@ std::optional<double> read_object(Reader& reader, Value value) {
     return std::nullopt;
   }
   Mapping object(reader, value, "an object");
-  const auto mm = object.need_number("distance", Unit::millimetres, Bound::any);
+  const auto mm = object.need_number("distance", Unit::millimetres, Bound::far);
   object.finish();
   if (mm == 0.0)
     reader.fault(object.key_mark("distance"), "'distance' is 0, which puts the object onto the first station",
@@ -40,12 +40,12 @@ std::optional<double> read_object(Reader& reader, Value value) {
 Field read_field(Reader& reader, Value value, Unit unit) {
   Field field;
   if (reader.node(value).kind != Node::Kind::mapping) {
-    field.at = reader.tuple<2>(value, unit, Bound::any).value_or(field.at);
+    field.at = reader.tuple<2>(value, unit, Bound::far).value_or(field.at);
     return field;
   }
   Mapping mapping(reader, value, "a field");
   if (const auto at = mapping.need("at"))
-    field.at = reader.tuple<2>(*at, unit, Bound::any).value_or(field.at);
+    field.at = reader.tuple<2>(*at, unit, Bound::far).value_or(field.at);
   field.weight = mapping.number_or(1.0, "weight", Unit::none, Bound::positive);
   if (const auto name = mapping.take("name"))
     field.name = reader.name(*name);

@@ -57,6 +57,11 @@ std::optional<double> Mapping::need_number(std::string_view key, Unit unit, Boun
   return value ? m_reader->number(*value, unit, bound) : std::nullopt;
 }
 
+std::optional<double> Mapping::moderate_number(std::string_view key) {
+  const auto value = take(key);
+  return value ? m_reader->moderate_number(*value) : std::nullopt;
+}
+
 std::optional<std::uint64_t> Mapping::need_count(std::string_view key, std::uint64_t most) {
   const auto value = need(key);
   return value ? m_reader->count(*value, most) : std::nullopt;

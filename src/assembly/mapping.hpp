@@ -34,6 +34,7 @@ public:
 
   std::optional<double> number(std::string_view key, Unit unit, Bound bound);
   std::optional<double> need_number(std::string_view key, Unit unit, Bound bound);
+  std::optional<double> moderate_number(std::string_view key);
   std::optional<std::uint64_t> need_count(std::string_view key, std::uint64_t most = largest_count);
   /// A number that may be left out; after a fault the default as well.
   double number_or(double fallback, std::string_view key, Unit unit, Bound bound);

@@ -112,7 +112,7 @@ void Reader::not_a_mapping(Value value, std::string_view what, std::string_view 
   });
 }
 
-bool Reader::within(Value value, double number, Bound bound) {
+bool Reader::within(Value value, double number, Unit unit, Bound bound) {
   const auto refuse = [&](std::string_view why) {
     fault_from([&] {
       return Fault{mark(value),
@@ -130,6 +130,8 @@ bool Reader::within(Value value, double number, Bound bound) {
     return refuse("it cannot be negative");
   if (bound == Bound::share && (number < 0.0 || number > 1.0))
     return refuse("a fraction lies between 0 and 1");
+  if (unit == Unit::millimetres && bound != Bound::far && std::abs(number) > largest_length)
+    return refuse("lengths reach to 1e12 mm");
   return true;
 }
 
@@ -148,9 +150,18 @@ std::optional<double> Reader::number(Value value, Unit unit, Bound bound) {
     });
     return std::nullopt;
   }
-  if (!within(value, *quantity, bound))
+  if (!within(value, *quantity, unit, bound))
     return std::nullopt;
   return quantity;
+}
+
+std::optional<double> Reader::moderate_number(Value value) {
+  const auto number = this->number(value, Unit::none, Bound::any);
+  if (!number || std::abs(*number) <= largest_term)
+    return number;
+  fault(mark(value),
+        fmt::format("'{}' is {}; its size is at most 1e12", value.label, printable(node(value).scalar, 40)));
+  return std::nullopt;
 }
 
 std::optional<std::uint64_t> Reader::count(Value value, std::uint64_t most) {

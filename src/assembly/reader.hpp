@@ -22,8 +22,14 @@ struct Value {
   std::string_view label;
 };
 
-/// What a number must be to make sense at its place; all must be finite.
-enum class Bound { any, positive, not_negative, share };
+/// What a number must be to make sense at its place; all must be finite, and lengths in mm within reach, but
+/// for `far`.
+enum class Bound { any, far, positive, not_negative, share };
+
+/// Of a length on the bench, in mm: beyond it, rounding leaves nothing of a beam.
+inline constexpr double largest_length = 1e12;
+/// Of a conic constant and of an asphere's terms: beyond it, sags overflow.
+inline constexpr double largest_term = 1e12;
 
 inline constexpr std::uint64_t largest_count = std::uint64_t{1} << 32U;
 
@@ -54,6 +60,8 @@ public:
                                const std::vector<std::string_view>& accepted);
 
   std::optional<double> number(Value value, Unit unit, Bound bound);
+  /// A number without a unit that is no larger than the term of a shape can be.
+  std::optional<double> moderate_number(Value value);
   /// A whole number from 1 on, up to 2³² or less.
   std::optional<std::uint64_t> count(Value value, std::uint64_t most = largest_count);
   /// Text that a terminal can show; a number is text too, but neither nothing nor true and false are.
@@ -75,7 +83,7 @@ public:
 
 private:
   std::optional<std::vector<double>> row(Value value, std::size_t count, Unit unit, Bound bound);
-  bool within(Value value, double number, Bound bound);
+  bool within(Value value, double number, Unit unit, Bound bound);
 
   static constexpr std::size_t most_searches = 1000; ///< for keys that were meant
 

@@ -27,7 +27,7 @@ Terms read_terms(Reader& reader, Value value) {
   if (!asphere)
     return terms;
   for (std::size_t i = 0; i < terms.size(); ++i)
-    terms[i] = asphere->number_or(0.0, term_keys[i], Unit::none, Bound::any);
+    terms[i] = asphere->moderate_number(term_keys[i]).value_or(0.0);
   asphere->finish();
   return terms;
 }
@@ -35,8 +35,8 @@ Terms read_terms(Reader& reader, Value value) {
 } // namespace
 
 Shape read_shape(Reader& reader, Mapping& station) {
-  const auto radius = station.number("radius", Unit::millimetres, Bound::any);
-  const auto conic = station.number("conic", Unit::none, Bound::any);
+  const auto radius = station.number("radius", Unit::millimetres, Bound::far);
+  const auto conic = station.moderate_number("conic");
   const auto asphere = station.take("asphere");
   const Terms terms = asphere ? read_terms(reader, *asphere) : Terms{};
   if (radius == 0.0)

@@ -38,6 +38,8 @@ void Train::read_again(Mapping& station, Next next) {
   result.gap = read_gap(station, next);
   result.turn_deg = station.tuple_or_zero<3>("turn", Unit::degrees);
   result.name = read_again_name(station, earlier);
+  if (met != nullptr && met->rear)
+    reserve_rear_name(station, result.name);
   station.finish();
   if (met != nullptr && !result.name.empty())
     m_met[result.name] = Met(*met);

@@ -98,7 +98,7 @@ Mueller mueller(const PauliVector& k) {
   return mueller(coherency_of(k));
 }
 
-Stokes apply(const Mueller& m, const Stokes& in) {
+Stokes through(const Mueller& m, const Stokes& in) {
   Stokes out{};
   for (std::size_t row = 0; row < 4; ++row)
     for (std::size_t column = 0; column < 4; ++column)

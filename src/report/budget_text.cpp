@@ -179,16 +179,24 @@ std::string further_tables(const assembly::Light& light, const Budget& budget, c
   return tables.empty() ? "" : fmt::format("\n{}", fmt::join(tables, "\n"));
 }
 
+std::string remedies_lines(const Stations& stations, const std::vector<analysis::Remedy>& remedies,
+                           const TextStyle& style) {
+  const std::string sentence = describe_remedies(stations, remedies, style.decibels);
+  return sentence.empty() ? "" : wrapped(sentence, style.width);
+}
+
 } // namespace
 
 std::string budget_text(const assembly::Assembly& assembly, const Budget& budget,
+                        const std::vector<analysis::Remedy>& remedies,
                         const std::vector<std::string>& warnings, std::chrono::duration<double> elapsed,
                         const TextStyle& style) {
   const std::string tables = further_tables(assembly.light, budget, style);
   const char* const unit = style.decibels ? "Fractions in dB\n" : "";
-  return fmt::format("{}{}\n{}{}\n{}{}{}{}", heading(assembly, style.width), unit,
+  return fmt::format("{}{}\n{}{}\n{}{}{}{}{}", heading(assembly, style.width), unit,
                      stations_table(budget.stations, style), delivered_line(budget, elapsed, style),
-                     wrapped(describe_losses(budget.stations, style.emphasis), style.width), tables,
+                     wrapped(describe_losses(budget.stations, style.emphasis), style.width),
+                     remedies_lines(budget.stations, remedies, style), tables,
                      tables.empty() || warnings.empty() ? "" : "\n",
                      describe_warnings(warnings, style.width));
 }

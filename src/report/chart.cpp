@@ -1,5 +1,5 @@
-#include "chart_style.hpp"
 #include "display_width.hpp"
+#include "svg_style.hpp"
 #include "ticks.hpp"
 #include "xml.hpp"
 
@@ -195,7 +195,7 @@ private:
   }
 
   [[nodiscard]] static std::string kind_of(std::size_t number) {
-    return fmt::format("series series{}", number % series_kinds);
+    return fmt::format("series series{}", number % line_kinds);
   }
 
   /// The height at which a series ends; in the middle for one without points.

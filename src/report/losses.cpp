@@ -7,6 +7,7 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <cmath>
 
 namespace lightledger::report {
 namespace {
@@ -30,6 +31,15 @@ std::string clause(const StationBudget& station, const Loss& loss) {
   if (loss.power == &StationBudget::extra)
     return fmt::format("{} loses {} to dust and ageing", name, share);
   return fmt::format("the medium after {} absorbs {}", name, share);
+}
+
+/// A reflectance to four decimals, on the safe side, without trailing zeros.
+std::string reflectance(const analysis::Remedy& remedy) {
+  constexpr double steps = 1e4;
+  constexpr double rounding = 1e-9;
+  const double scaled = remedy.reflectance * steps;
+  const double safe = remedy.reflects ? std::ceil(scaled - rounding) : std::floor(scaled + rounding);
+  return fmt::format("{} {}", remedy.reflects ? ">=" : "<=", plain(safe / steps));
 }
 
 } // namespace
@@ -63,6 +73,22 @@ std::string describe_losses(const std::vector<StationBudget>& stations, bool emp
     sentence.append(first ? " " : ", ").append(first && emphasis ? strong(words) : words);
   }
   return sentence + ".";
+}
+
+std::string describe_remedies(const std::vector<StationBudget>& stations,
+                              const std::vector<analysis::Remedy>& remedies, bool in_decibels) {
+  std::string sentence;
+  for (const analysis::Remedy& remedy : remedies) {
+    const bool first = sentence.empty();
+    const std::string name = on_one_line(stations[remedy.station].name);
+    const std::string figure = in_decibels ? decibels(remedy.delivered) + " dB" : fraction(remedy.delivered);
+    sentence += first ? fmt::format("A coating of R {} on {} would bring delivered to {}",
+                                    reflectance(remedy), name, figure)
+                      : fmt::format(", one of R {} on {} to {}", reflectance(remedy), name, figure);
+    if (remedy.suffices)
+      sentence += ", as required";
+  }
+  return sentence.empty() ? sentence : sentence + ".";
 }
 
 } // namespace lightledger::report

@@ -1,6 +1,7 @@
 #pragma once
 
 #include <lightledger/analysis/budget.hpp>
+#include <lightledger/analysis/remedy.hpp>
 
 #include <array>
 #include <cstddef>
@@ -41,5 +42,10 @@ struct LossEntry {
 /// "Largest losses: fold absorbs 8.9 %, filter sends 4.1 % aside." With `emphasis` the first stands out.
 [[nodiscard]] std::string describe_losses(const std::vector<analysis::StationBudget>& stations,
                                           bool emphasis);
+
+/// "A coating of R >= 0.97 on fold would bring delivered to 0.8610." Rounded so that it does; empty without
+/// remedies.
+[[nodiscard]] std::string describe_remedies(const std::vector<analysis::StationBudget>& stations,
+                                            const std::vector<analysis::Remedy>& remedies, bool in_decibels);
 
 } // namespace lightledger::report

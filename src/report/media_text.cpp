@@ -55,9 +55,7 @@ std::string medium_text(const MediumEntry& medium, const TextStyle& style) {
   return text;
 }
 
-} // namespace
-
-std::string media_text(const std::vector<MediumEntry>& media, const TextStyle& style) {
+std::string tables_text(const std::vector<MediumEntry>& media, const TextStyle& style) {
   const auto has_rows = [](const MediumEntry& medium) { return !medium.rows.empty(); };
   if (media.size() > 1 && std::ranges::none_of(media, has_rows))
     return list_text(media, style);
@@ -65,6 +63,13 @@ std::string media_text(const std::vector<MediumEntry>& media, const TextStyle& s
   for (const MediumEntry& medium : media)
     text.append(text.empty() ? "" : "\n").append(medium_text(medium, style));
   return text;
+}
+
+} // namespace
+
+std::string media_text(const std::vector<MediumEntry>& media, const std::vector<std::string>& warnings,
+                       const TextStyle& style) {
+  return tables_text(media, style) + describe_warnings(warnings, style.width);
 }
 
 } // namespace lightledger::report

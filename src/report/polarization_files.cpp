@@ -39,11 +39,11 @@ std::optional<double> axis_of(double size, double least, std::optional<double> a
 const std::array<MapQuantity, 5> quantities{
     {{"diattenuation", "Diattenuation", "diattenuation", "", Scale::linear,
       [](const Point& p) { return std::optional(p.diattenuation); }},
-     {"diattenuation_axis_deg", "Axis of diattenuation, double-pole basis", "azimuth", "deg", Scale::cyclic,
+     {"diattenuation_axis_deg", "Axis of diattenuation", "azimuth, double-pole basis", "deg", Scale::cyclic,
       [](const Point& p) { return axis_of(p.diattenuation, 1e-12, p.diattenuation_axis_deg); }},
      {"retardance_deg", "Retardance", "retardance", "deg", Scale::linear,
       [](const Point& p) { return p.retardance_deg; }},
-     {"retardance_axis_deg", "Fast axis of retardance, double-pole basis", "azimuth", "deg", Scale::cyclic,
+     {"retardance_axis_deg", "Fast axis", "azimuth, double-pole basis", "deg", Scale::cyclic,
       [](const Point& p) { return axis_of(p.retardance_deg.value_or(0.0), 1e-9, p.retardance_axis_deg); }},
      {"cross_leakage", "Cross leakage", "cross leakage", "", Scale::linear,
       [](const Point& p) { return p.cross_leakage; }}}};

@@ -128,6 +128,7 @@ Json fold_json(const Assembly& assembly, const std::optional<analysis::FoldTurn>
   return {{"name", assembly.stations[turn->station].name},
           {"turn_deg", number(turn->turn_deg)},
           {"tilt_deg", numbers(turn->tilt_deg)},
+          {"turn_after_deg", numbers(turn->turn_after_deg)},
           {"retardance_deg", number(turn->retardance_deg)},
           {"retardance_now_deg", number(turn->retardance_now_deg)}};
 }

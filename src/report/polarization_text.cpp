@@ -44,7 +44,7 @@ std::string chief_table(const ChiefRay& chief, const TextStyle& style) {
     const analysis::ChiefStation& station = chief.stations[i];
     const bool retards = station.retardance_deg && *station.retardance_deg > 1e-9;
     table.add({std::to_string(i + 1), shortened(on_one_line(station.name), name_width(style)),
-               power(station.stokes[0], style), share(station.dop), angle(station.azimuth_deg),
+               power(station.stokes[0], style), share(station.dop), azimuth(station.azimuth_deg),
                angle(station.ellipticity_deg), share(station.diattenuation),
                retards ? angle(station.retardance_deg) : "-"});
   }
@@ -90,6 +90,8 @@ std::string detector_value(double value, const DetectorLine& line) {
   const std::string_view unit = line.unit;
   if (unit == ": 1")
     return quantity(value);
+  if (line.figure == &DetectorFigures::azimuth_deg)
+    return azimuth(value);
   return unit == "deg" ? angle(value) : share(value);
 }
 
@@ -168,7 +170,7 @@ std::string against_part(const assembly::Light& light, const analysis::Polarizat
                {"diatten."},
                {"retard.", Align::right, 7}});
   for (const analysis::PolarizationRow& row : table.rows)
-    lines.add({plain(row.at), share(row.delivered), share(row.dop), angle(row.azimuth_deg),
+    lines.add({plain(row.at), share(row.delivered), share(row.dop), azimuth(row.azimuth_deg),
                angle(row.ellipticity_deg), share(row.diattenuation), angle(row.retardance_deg)});
   return '\n' + lines.text(style.emphasis);
 }
@@ -198,7 +200,8 @@ std::string polarization_text(const Assembly& assembly, const Polarization& pola
     text += wrapped(sentence, style.width);
   for (const std::string& sentence : remedy_sentences(assembly, polarization))
     text += wrapped(sentence, style.width);
-  text += wrapped(coherent_sentence(), style.width);
+  if (polarization.detector.coherent_share)
+    text += wrapped(coherent_sentence(), style.width);
   text += against_part(assembly.light, polarization.table, style);
   return text + describe_warnings(warnings, style.width);
 }

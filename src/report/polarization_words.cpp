@@ -76,13 +76,17 @@ std::string vector_words(const std::array<double, 3>& v) {
   return fmt::format("({}, {}, {})", component(v[0]), component(v[1]), component(v[2]));
 }
 
+std::string angles_words(const std::array<double, 3>& angles_deg) {
+  const auto word = [](double degrees) { return plain(std::abs(degrees) < 5e-7 ? 0.0 : degrees); };
+  return fmt::format("[{}, {}, {}]", word(angles_deg[0]), word(angles_deg[1]), word(angles_deg[2]));
+}
+
 std::string fold_sentence(const Assembly& assembly, const analysis::FoldTurn& turn) {
-  const auto tilt = [](double degrees) { return plain(std::abs(degrees) < 5e-7 ? 0.0 : degrees); };
   return fmt::format(
-      "Turning {} and all behind it by {:.2f} deg about the axis that arrives there (tilt: [{}, {}, {}]) "
+      "Turning {} and all behind it by {:.2f} deg about the axis that arrives there (tilt: {}, turn: {}) "
       "brings what mirrors and lenses retard the chief ray from {:.2f} to {:.2f} deg.",
-      name_of(assembly, turn.station), turn.turn_deg, tilt(turn.tilt_deg[0]), tilt(turn.tilt_deg[1]),
-      tilt(turn.tilt_deg[2]), turn.retardance_now_deg, turn.retardance_deg);
+      name_of(assembly, turn.station), turn.turn_deg, angles_words(turn.tilt_deg),
+      angles_words(turn.turn_after_deg), turn.retardance_now_deg, turn.retardance_deg);
 }
 
 std::string plates_sentence(const Assembly& assembly, const analysis::PlateSettings& settings) {
@@ -110,6 +114,11 @@ std::string angle(std::optional<double> degrees) {
   if (!degrees)
     return "-";
   return fmt::format("{:.2f}", std::abs(*degrees) < 0.005 ? 0.0 : *degrees);
+}
+
+std::string azimuth(std::optional<double> degrees) {
+  const std::string text = angle(degrees);
+  return text == "-90.00" ? "90.00" : text;
 }
 
 std::string signed_figure(std::optional<double> value, bool is_angle) {

@@ -40,6 +40,8 @@ inline constexpr std::array<Blame, 4> blames{
 [[nodiscard]] std::string signed_figure(std::optional<double> value, bool angle);
 /// An angle in degrees with two decimals; a dash where there is none.
 [[nodiscard]] std::string angle(std::optional<double> degrees);
+/// An azimuth, in (−90, 90] also as it is printed.
+[[nodiscard]] std::string azimuth(std::optional<double> degrees);
 /// A figure from 0 to 1 with four decimals; a dash for nothing, and where there is none.
 [[nodiscard]] std::string share(std::optional<double> value);
 

@@ -1,7 +1,9 @@
 #include "gauss_legendre.hpp"
+#include "kernel/kernel.hpp"
 
 #include <lightledger/trace/launch.hpp>
 
+#include <algorithm>
 #include <cmath>
 #include <numbers>
 
@@ -26,9 +28,9 @@ constexpr std::uint64_t shift(std::uint64_t number) {
   return word ^ (word >> 31);
 }
 
-/// A word as a fraction of 2⁶⁴, in [0, 1).
+/// A word as a fraction of 2⁶⁴, in [0, 1), by the 52 bits that the kernel's vectors take too.
 constexpr double fraction(std::uint64_t word) {
-  return static_cast<double>(word >> 11) * 0x1p-53;
+  return static_cast<double>(word >> 12) * 0x1p-52;
 }
 
 std::uint64_t share(std::uint64_t count) {
@@ -94,6 +96,18 @@ PupilPoint Pupil::point(std::uint64_t number, int replicate) const {
   return {x, y, lit ? std::exp(-m_gaussian_decay * r_squared) : 0.0};
 }
 
+void Pupil::scatter(Launching& from, std::uint64_t first, int replicate) const {
+  const auto dimension = m_first_shift + 2 * static_cast<std::uint64_t>(replicate);
+  const std::uint64_t radial = first * radial_stride + shift(dimension);
+  const std::uint64_t azimuthal = first * azimuthal_stride + shift(dimension + 1);
+  for (std::uint64_t i = 0; i < RayBlock::lanes; ++i) {
+    from.radial[i] = radial + i * radial_stride;
+    from.azimuthal[i] = azimuthal + i * azimuthal_stride;
+  }
+  from.inner_squared = m_inner_squared;
+  from.gaussian_decay = m_gaussian_decay;
+}
+
 Source::Source(const assembly::Light& light, const assembly::Field& field)
     : m_infinite(!light.object_distance),
       m_converging(light.object_distance && *light.object_distance < 0.0), m_object{} {
@@ -108,7 +122,28 @@ Source::Source(const assembly::Light& light, const assembly::Field& field)
   m_object = {x * scale, y * scale, scale};
 }
 
+/// Scattered rays are launched a vector at a time.
+std::uint64_t Launcher::scatter(RayBlock& block, int replicate, std::uint64_t first,
+                                std::uint64_t end) const {
+  const auto count = static_cast<int>(std::min<std::uint64_t>(end - first, RayBlock::lanes));
+  Launching from;
+  m_pupil.scatter(from, first, replicate);
+  m_source.describe(from);
+  for (int axis = 0; axis < 2; ++axis) {
+    from.centre[axis] = m_footprint.centre[static_cast<std::size_t>(axis)];
+    from.first[axis] = m_footprint.first[static_cast<std::size_t>(axis)];
+    from.second[axis] = m_footprint.second[static_cast<std::size_t>(axis)];
+  }
+  block.first = first;
+  block.count = count;
+  block.alive = count == RayBlock::lanes ? ~std::uint64_t{0} : (std::uint64_t{1} << count) - 1;
+  kernel().launch(from, block);
+  return first + static_cast<std::uint64_t>(count);
+}
+
 std::uint64_t Launcher::fill(RayBlock& block, int replicate, std::uint64_t first, std::uint64_t end) const {
+  if (m_pupil.scattered())
+    return scatter(block, replicate, first, end);
   block.first = first;
   block.count = 0;
   block.alive = 0;
@@ -128,6 +163,13 @@ std::uint64_t Launcher::fill(RayBlock& block, int replicate, std::uint64_t first
     m_source.aim(block, lane);
   }
   return number;
+}
+
+void Source::describe(Launching& from) const {
+  from.finite = !m_infinite;
+  std::copy(m_object.begin(), m_object.end(), from.object);
+  const double size = std::max({std::abs(m_object[0]), std::abs(m_object[1]), std::abs(m_object[2])});
+  from.scale = (m_converging ? 1.0 : -1.0) / size;
 }
 
 /// Direction and the double-pole basis: x carried by the smallest rotation of z onto d.

@@ -1,3 +1,5 @@
+#include "handover.hpp"
+
 #include <lightledger/trace/parallel.hpp>
 
 #include "handover.hpp"

@@ -83,7 +83,7 @@ private:
 
 Traced trace(const Train& train, const TraceOptions& options) {
   const PathSurvey survey(train, options.sink);
-  Sampling<PathSurvey> sampling(train, survey, {.shifts = options.shifts});
+  Sampling<PathSurvey> sampling(train, survey, {.shifts = options.shifts, .progress = options.progress});
   Traced traced;
   with_threads(options.threads, [&] { traced.accurate = sampling.run(); });
   traced.rays = sampling.rays();

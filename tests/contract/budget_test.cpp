@@ -104,8 +104,10 @@ TEST(BudgetCommand, GivesTheSameBytesForAnyNumberOfThreads) {
 
 TEST(BudgetCommand, PutsTheStationsTableIntoTheCsv) {
   const std::string csv = run({"budget", lidar, "--csv", "-"}).out;
-  const Json stations = json_of({"budget", lidar})["budget"]["stations"];
-  EXPECT_EQ(static_cast<std::size_t>(std::ranges::count(csv, '\n')), stations.size() + 1);
+  const Json budget = json_of({"budget", lidar})["budget"];
+  const Json& stations = budget["stations"];
+  EXPECT_EQ(static_cast<std::size_t>(std::ranges::count(csv, '\n')),
+            1 + stations.size() + budget["by_wavelength"].size() + budget["by_field"].size());
   EXPECT_THAT(csv, HasSubstr("\r\n5,fold,reflect," + stations[4]["incident"].dump() + ","));
 }
 

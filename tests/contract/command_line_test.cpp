@@ -79,11 +79,6 @@ TEST(Refusal, OfAnUnknownCommandSuggestsANearOne) {
   EXPECT_THAT(refusal({"budgt", minimal}), HasSubstr("did you mean 'budget'?"));
 }
 
-TEST(Refusal, OfCommandsOfLaterVersionsSaysSo) {
-  for (const char* command : {"draw", "report"})
-    EXPECT_THAT(refusal({command, minimal}), HasSubstr("not available in this version"));
-}
-
 TEST(Refusal, OfAnUnknownOptionSuggestsANearOne) {
   EXPECT_THAT(refusal({"budget", minimal, "--jsn", "x"}), HasSubstr("did you mean '--json'?"));
   EXPECT_THAT(refusal({"check", minimal, "--split", "field"}), HasSubstr("check has no option '--split'"));

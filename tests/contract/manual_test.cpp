@@ -119,6 +119,8 @@ TEST(Manual, DefinesEveryKeyOfTheResults) {
   std::set<std::string> keys;
   for (const Arguments& arguments :
        {Arguments{"budget", "systems/minimal.yaml", "--split", "field"},
+        Arguments{"polarization", "systems/relay-terminal.yaml", "--against", "angle"},
+        Arguments{"polarization", "systems/relay-terminal-crossed.yaml"},
         Arguments{"check", "systems/minimal.yaml"}, Arguments{"coating", "systems/minimal.yaml", "bare"},
         Arguments{"media", "SiO2", "--wavelengths", "500"}})
     gather_keys(json_of(arguments), keys);

@@ -39,8 +39,8 @@ double total_weight(const List& list) {
   return sum;
 }
 
-/// The points where a field's rays start: on the disc, or with `fill_stop` on the ellipse that it is mapped
-/// to.
+} // namespace
+
 std::vector<reference::DiscPoint> launch_points(const Both& both, std::size_t field) {
   const assembly::Light& light = both.assembly->light;
   if (!light.beam.fill_stop)
@@ -51,8 +51,6 @@ std::vector<reference::DiscPoint> launch_points(const Both& both, std::size_t fi
     at = {centre[0] + at[0] * first[0] + at[1] * second[0], centre[1] + at[0] * first[1] + at[1] * second[1]};
   return points;
 }
-
-} // namespace
 
 Both prepare(const assembly::Assembly& assembly) {
   auto own = std::make_unique<assembly::Assembly>(assembly);

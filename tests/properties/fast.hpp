@@ -1,5 +1,6 @@
 #pragma once
 
+#include "reference/disc.hpp"
 #include "reference/ledger.hpp"
 #include "reference/random_test.hpp"
 
@@ -47,6 +48,10 @@ struct Textbook {
   int left_out = 0;
 };
 [[nodiscard]] Textbook textbook(const Both& both);
+
+/// The points where a field's rays start: on the disc, or with `fill_stop` on the ellipse that it is mapped
+/// to.
+[[nodiscard]] std::vector<reference::DiscPoint> launch_points(const Both& both, std::size_t field);
 
 /// Replaces a scattered pattern, whose points are the program's own choice, by rings.
 void use_fixed_pattern(assembly::Assembly& assembly);

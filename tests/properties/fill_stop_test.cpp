@@ -5,6 +5,9 @@
 #include <gtest/gtest.h>
 #include <rapidcheck/gtest.h>
 
+#include <optional>
+#include <stdexcept>
+
 /// Beams that fill the stop, against rays that the textbook tracer aims.
 namespace lightledger::properties {
 namespace {
@@ -113,12 +116,30 @@ std::optional<trace::Footprint> textbook_footprint(const Both& both, const assem
   return trace::Footprint{{centre.x(), centre.y()}, {first.x(), first.y()}, {second.x(), second.y()}};
 }
 
+/// A random camera made ready; none where a lens is too small or too steep for any ray to come to the edge of
+/// the stop.
+std::optional<Both> reachable_camera(std::uint64_t seed) {
+  Dice dice(seed);
+  try {
+    return prepare(camera(dice));
+  } catch (const std::runtime_error&) {
+    return std::nullopt;
+  }
+}
+
+TEST(FillStop, ReachesTheStopOfNearlyAllCameras) {
+  int reached = 0;
+  for (std::uint64_t seed = 0; seed < 400; ++seed)
+    reached += reachable_camera(seed) ? 1 : 0;
+  EXPECT_GE(reached, 398);
+}
+
 RC_GTEST_PROP(FillStop, AimsAtTheEdgeOfTheStopAsTheTextbookDoes, ()) {
-  Dice dice(reference::any_seed());
-  const Both both = prepare(camera(dice));
-  for (std::size_t i = 0; i < both.assembly->light.fields.size(); ++i) {
-    const trace::Footprint& found = both.train.footprints.at(i);
-    const auto expected = textbook_footprint(both, both.assembly->light.fields[i], found);
+  const auto both = reachable_camera(reference::any_seed());
+  RC_PRE(both.has_value());
+  for (std::size_t i = 0; i < both->assembly->light.fields.size(); ++i) {
+    const trace::Footprint& found = both->train.footprints.at(i);
+    const auto expected = textbook_footprint(*both, both->assembly->light.fields[i], found);
     RC_ASSERT(expected.has_value());
     RC_ASSERT((vector(found.centre) - vector(expected->centre)).norm() < 1e-9);
     RC_ASSERT((vector(found.first) - vector(expected->first)).norm() < 1e-9);
@@ -127,12 +148,12 @@ RC_GTEST_PROP(FillStop, AimsAtTheEdgeOfTheStopAsTheTextbookDoes, ()) {
 }
 
 RC_GTEST_PROP(FillStop, LaunchesTheDiscOntoTheEllipse, ()) {
-  Dice dice(reference::any_seed());
-  const Both both = prepare(camera(dice));
-  const Textbook expected = textbook(both);
+  const auto both = reachable_camera(reference::any_seed());
+  RC_PRE(both.has_value());
+  const Textbook expected = textbook(*both);
   RC_PRE(expected.left_out == 0);
-  RC_ASSERT(std::abs(trace::trace(both.train, {.threads = 1}).total.delivered() - expected.ledger.delivered) <
-            1e-11);
+  const double delivered = trace::trace(both->train, {.threads = 1}).total.delivered();
+  RC_ASSERT(std::abs(delivered - expected.ledger.delivered) < 1e-11);
 }
 
 } // namespace

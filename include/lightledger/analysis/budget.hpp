@@ -2,6 +2,7 @@
 
 #include <lightledger/assembly/assembly.hpp>
 #include <lightledger/assembly/diagnostics.hpp>
+#include <lightledger/trace/progress.hpp>
 
 #include <array>
 #include <cstdint>
@@ -44,12 +45,12 @@ struct FieldBudget {
   double delivered;         ///< of what was launched from this field
 };
 
-enum class Split { none, wavelength, field };
+enum class Split { none, wavelength, field, both };
 
 /// The ledger of one wavelength or one field, in fractions of what was launched there.
 struct SplitBudget {
-  std::optional<double> wavelength_nm;   ///< for Split::wavelength
-  std::optional<std::string> field_name; ///< for Split::field, none for an unnamed one
+  std::optional<double> wavelength_nm;   ///< of a wavelength's ledger
+  std::optional<std::string> field_name; ///< of a field's, none for an unnamed one
   std::vector<StationBudget> stations;
 };
 
@@ -61,12 +62,13 @@ struct Budget {
   std::vector<StationBudget> stations;
   std::vector<WavelengthBudget> by_wavelength;
   std::vector<FieldBudget> by_field;
-  std::vector<SplitBudget> ledgers; ///< empty without a split
+  std::vector<SplitBudget> ledgers; ///< empty without a split; those of wavelengths first
 };
 
 struct BudgetOptions {
   Split split = Split::none;
   int threads = 0; ///< 0: as many as the machine has
+  trace::Progress* progress = nullptr;
 };
 
 struct BudgetResult {

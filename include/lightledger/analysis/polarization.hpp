@@ -3,6 +3,7 @@
 #include <lightledger/assembly/assembly.hpp>
 #include <lightledger/assembly/diagnostics.hpp>
 #include <lightledger/optics/mueller.hpp>
+#include <lightledger/trace/progress.hpp>
 
 #include <array>
 #include <cstdint>
@@ -74,8 +75,9 @@ struct CancellingPair {
 /// retard the chief ray least; plates, polarizers and rotators, which are meant to act, are left out.
 struct FoldTurn {
   std::size_t station;
-  double turn_deg;                ///< in (−90, 90]
-  std::array<double, 3> tilt_deg; ///< the fold's tilt when so turned
+  double turn_deg;                      ///< in (−90, 90]
+  std::array<double, 3> tilt_deg;       ///< the fold's `tilt` when so turned
+  std::array<double, 3> turn_after_deg; ///< the `turn` after it with which all behind it turns along
   double retardance_deg, retardance_now_deg;
 };
 
@@ -135,6 +137,7 @@ struct PolarizationOptions {
   Against against = Against::nothing;
   bool maps = false;
   int threads = 0; ///< 0: as many as the machine has
+  trace::Progress* progress = nullptr;
 };
 
 struct PolarizationResult {

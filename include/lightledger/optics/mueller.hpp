@@ -26,7 +26,8 @@ struct PauliCoherency {
 /// M_ab = ½ Σ T_cd tr(σa σc σb σd).
 [[nodiscard]] Mueller mueller(const PauliCoherency& coherency);
 [[nodiscard]] Mueller mueller(const PauliVector& k);
-[[nodiscard]] Stokes apply(const Mueller& mueller, const Stokes& stokes);
+/// The light that goes through.
+[[nodiscard]] Stokes through(const Mueller& mueller, const Stokes& stokes);
 [[nodiscard]] Stokes stokes(State state, double power = 1.0);
 
 /// What a Stokes vector says in the words of contract §2 and §5; none where it is not defined.

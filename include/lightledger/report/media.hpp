@@ -16,7 +16,8 @@ namespace lightledger::report {
 /// One row a medium, or with wavelengths one row a medium and wavelength (RFC 4180).
 [[nodiscard]] std::string media_csv(const std::vector<analysis::MediumEntry>& media);
 
-/// One line a medium, sources cut to the width; or, of a single one, its source in full and its table.
-[[nodiscard]] std::string media_text(const std::vector<analysis::MediumEntry>& media, const TextStyle& style);
+/// One line a medium, sources cut to the width; or, of a single one, its source in full and its table; warnings last.
+[[nodiscard]] std::string media_text(const std::vector<analysis::MediumEntry>& media,
+                                     const std::vector<std::string>& warnings, const TextStyle& style);
 
 } // namespace lightledger::report

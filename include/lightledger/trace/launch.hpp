@@ -9,6 +9,8 @@
 
 namespace lightledger::trace {
 
+struct Launching;
+
 /// Independent shifts of a scattered set, from whose spread the standard error follows.
 inline constexpr int replicates = 16;
 
@@ -31,6 +33,8 @@ public:
   [[nodiscard]] bool scattered() const { return m_scattered; }
   /// The point of a number below size() of a replicate; weight 0 where a grid's cell is off the disc.
   [[nodiscard]] PupilPoint point(std::uint64_t number, int replicate) const;
+  /// Hands a block of a scattered set to the kernel, from the number `first` on.
+  void scatter(Launching& from, std::uint64_t first, int replicate) const;
 
 private:
   struct RingNode {
@@ -55,6 +59,8 @@ public:
 
   /// Gives the ray of a lane, whose point is set, its direction, double-pole basis and unit Jones matrix.
   void aim(RayBlock& block, int lane) const;
+  /// The same for the kernel.
+  void describe(Launching& from) const;
 
 private:
   bool m_infinite;
@@ -78,6 +84,8 @@ public:
   std::uint64_t fill(RayBlock& block, int replicate, std::uint64_t first, std::uint64_t end) const;
 
 private:
+  std::uint64_t scatter(RayBlock& block, int replicate, std::uint64_t first, std::uint64_t end) const;
+
   Source m_source;
   const Pupil& m_pupil;
   Footprint m_footprint;

@@ -2,6 +2,7 @@
 
 #include <lightledger/trace/launch.hpp>
 #include <lightledger/trace/parallel.hpp>
+#include <lightledger/trace/progress.hpp>
 #include <lightledger/trace/rays.hpp>
 #include <lightledger/trace/train.hpp>
 
@@ -95,6 +96,7 @@ struct SamplingOptions {
   /// Chunks get no fewer rays than this where there are several; 0: sixteen chunks always.
   std::uint64_t rays_per_chunk = 0;
   std::optional<assembly::Sampling> instead{}; ///< of the light's own sampling
+  Progress* progress = nullptr; ///< told of every chunk
 };
 
 /// Puts a survey to the light's own samples of rays. They are cut into a list of chunks that does not depend
@@ -175,12 +177,16 @@ private:
   void extend(std::uint64_t first, std::uint64_t end) {
     const std::uint64_t parts = chunks(end - first);
     const auto cut = [&](std::uint64_t part) { return first + (end - first) * part / parts; };
+    if (m_options.progress != nullptr)
+      m_options.progress->expect((end - first) * replicates * m_samples.size());
     parallel_jobs(m_samples.size() * replicates, [&](std::size_t job) {
       Sample<Found>& sample = m_samples[job / replicates];
       const auto replicate = static_cast<int>(job % replicates);
       std::vector<Tally<Found>> tallies(parts);
       parallel_jobs(parts, [&](std::size_t chunk) {
         tallies[chunk] = survey_chunk(sample.group, replicate, cut(chunk), cut(chunk + 1));
+        if (m_options.progress != nullptr)
+          m_options.progress->advance(cut(chunk + 1) - cut(chunk));
       });
       sample.replicate[static_cast<std::size_t>(replicate)] += pairwise(tallies);
     });

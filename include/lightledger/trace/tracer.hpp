@@ -1,6 +1,7 @@
 #pragma once
 
 #include <lightledger/trace/ledger.hpp>
+#include <lightledger/trace/progress.hpp>
 #include <lightledger/trace/sink.hpp>
 #include <lightledger/trace/train.hpp>
 
@@ -29,6 +30,7 @@ struct TraceOptions {
   int threads = 0;          ///< 0: as many as the machine has
   std::uint64_t shifts = 0; ///< which set of shifts scatters the rays
   Sink* sink = nullptr;     ///< told of what arrives by each path's end, in the raw weights of the rays
+  Progress* progress = nullptr;
 };
 
 /// Traces the intended path with the light's own sampling. Rays are cut into a fixed list of chunks (16

@@ -38,11 +38,14 @@ public:
     const V far_z = abs(select(second, at.z[0], at.z[1]));
     const M one_is_nearest = both(both(at.real, either(at.before_equator[0], at.before_equator[1])),
                                   either(first_only(alive, two), set(4.0) * near_z < far_z));
-    M done = first_only(alive, one_is_nearest);
+    const M done = opposite(both(alive, one_is_nearest));
     V t = keep(one_is_nearest, select(second, at.t[1], at.t[0]));
     const M plain = newton(ray, nearest, t, done);
+    // As far on the other side of the tangent plane: r² is convex along the ray, so the terms slope gently
+    // wherever a nearer place could be.
+    const V mirrored = fms(set(2.0), to_plane, t);
     const M gentle = both(r_squared(ray, nearest, t) < set(m_op.gentle_squared),
-                          r_squared(ray, nearest, to_plane) < set(m_op.gentle_squared));
+                          r_squared(ray, nearest, mirrored) < set(m_op.gentle_squared));
     M found = both(both(plain, gentle), one_is_nearest);
     if (bits(first_only(alive, found)) != 0)
       found = search(ray, nearest, alive, found, t);

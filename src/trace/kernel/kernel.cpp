@@ -8,6 +8,7 @@
 
 #include "arrive-inl.hpp"
 #include "kernel.hpp"
+#include "launch-inl.hpp"
 #include "respond-inl.hpp"
 #include "settle-inl.hpp"
 // clang-format on
@@ -20,7 +21,7 @@ constexpr InstructionSet compiled_for = HWY_TARGET == HWY_AVX3   ? InstructionSe
                                         : HWY_TARGET == HWY_NEON ? InstructionSet::neon
                                                                  : InstructionSet::portable;
 
-constexpr Kernel passes = {&arrive, &respond, &settle, compiled_for};
+constexpr Kernel passes = {&launch, &arrive, &respond, &settle, compiled_for};
 
 } // namespace lightledger::trace::HWY_NAMESPACE
 HWY_AFTER_NAMESPACE();

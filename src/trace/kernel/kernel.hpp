@@ -1,5 +1,6 @@
 #pragma once
 
+#include "launching.hpp"
 #include "meeting.hpp"
 
 #include <lightledger/trace/entry.hpp>
@@ -7,12 +8,13 @@
 
 namespace lightledger::trace {
 
-/// The passes of one step, compiled for one instruction set.
+/// The launch of rays and the passes of one step, compiled for one instruction set.
 ///
 /// `arrive` brings rays onto the surface and sends their directions, points and bases out; `respond` finds
 /// the amplitudes that are asked for; `settle` makes Jones matrices, weights and the ledger's entry. Between
 /// them goes a Meeting whose `count` and `alive` are set and whose other bits are 0.
 struct Kernel {
+  void (*launch)(const Launching&, RayBlock&); ///< of a block whose `count` is set
   void (*arrive)(const PlanLeg&, const PlanOp&, const RayBlock&, const Departing&, Meeting&);
   void (*respond)(const PlanOp&, Asked, Meeting&);
   void (*settle)(const PlanLeg&, const PlanOp&, const Launched&, const RayBlock&, const Meeting&,

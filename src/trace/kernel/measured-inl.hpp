@@ -83,9 +83,10 @@ inline void measured(const PlanOp& op, Asked, Meeting& m) {
   const V least = set(op.curve[0].x - rounding);
   const V most = set(op.curve[op.curve_count - 1].x + rounding);
   for (int i = 0; i < m.count; i += width) {
-    if (!any(mask(m.inside >> i)))
+    const M inside = mask(m.inside >> i);
+    if (!any(inside))
       continue;
-    const V x = place_on_curve(op, load(m.sin_squared + i));
+    const V x = place_on_curve(op, keep(inside, load(m.sin_squared + i)));
     const Curve curve(op, x);
     const M crosses = op.swallows ? mask(~std::uint64_t{0}) : mask(m.crosses >> i);
     const V r_s = curve.at(reflect_s);

@@ -125,7 +125,7 @@ inline void coated(const PlanOp& op, Asked asked, Meeting& m) {
     const M inside = mask(m.inside >> i);
     if (!any(inside))
       continue;
-    const V c1 = load(m.cos1 + i);
+    const V c1 = select(inside, load(m.cos1 + i), set(1.0));
     const M crosses = mask(m.crosses >> i);
     Response response;
     if (op.table == nullptr) {

@@ -251,7 +251,7 @@ HWY_INLINE void settle_vector(const Settling& all, int i, Sums& sums) {
     sums.send<Attenuated>(bounces ? inside : crosses, bounces ? bounced : passed);
     sums.turn(bounces ? crosses : inside, bounces ? passed : bounced);
   }
-  sums.lean(inside, arriving, angle(load(m.sin_squared + i), load(m.cos1 + i)));
+  sums.lean(inside, arriving, angle(keep(inside, load(m.sin_squared + i)), load(m.cos1 + i)));
   if (m.extrapolated != 0)
     sums.extrapolate(both(inside, mask(m.extrapolated >> i)), arriving);
 }

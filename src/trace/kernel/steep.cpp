@@ -5,6 +5,7 @@
 #include <algorithm>
 #include <cmath>
 #include <limits>
+#include <utility>
 
 namespace lightledger::trace {
 namespace {
@@ -140,35 +141,59 @@ Interval before_equator(const PlanOp& op, const AsphereRay& ray) {
   return {(-b - half) / a, (-b + half) / a};
 }
 
-/// One step of the outward search; where the ray crossed the surface on it, the place.
-AsphereHit explore(const PlanOp& op, const AsphereRay& ray, double& t, double& value, double next) {
-  const double from = t;
-  const double before = value;
-  t = next;
-  value = height(op, ray, next).value;
-  if (from == next || std::signbit(before) == std::signbit(value))
-    return {0.0, false};
-  return between(op, ray, std::min(from, next), std::max(from, next));
+/// The place between two others at which the height is least in size, given that its size falls at the first
+/// and grows at the second; by halving.
+double lowest(const PlanOp& op, const AsphereRay& ray, double falls, double grows) {
+  for (int round = 0; round < 2 * newton_cap; ++round) {
+    const double middle = 0.5 * (falls + grows);
+    const Height here = height(op, ray, middle);
+    const double outward = grows > falls ? here.slope : -here.slope;
+    (here.value * outward < 0.0 ? falls : grows) = middle;
+  }
+  return 0.5 * (falls + grows);
 }
 
-/// Outward from the tangent plane on both sides in growing steps, to the first crossing.
+/// One end of the outward search.
+struct Explorer {
+  double t;
+  Height here;
+
+  /// One step to `next`; where the ray met the surface on it, the place, also where it only dipped into it.
+  AsphereHit step(const PlanOp& op, const AsphereRay& ray, double next) {
+    const double from = std::exchange(t, next);
+    const Height before = std::exchange(here, height(op, ray, next));
+    if (from == next)
+      return {0.0, false};
+    if (std::signbit(before.value) != std::signbit(here.value))
+      return between(op, ray, std::min(from, next), std::max(from, next));
+    const double outward = next > from ? 1.0 : -1.0;
+    if (!(before.value * before.slope * outward < 0.0 && here.value * here.slope * outward > 0.0))
+      return {0.0, false};
+    const double dip = lowest(op, ray, from, next);
+    if (std::signbit(height(op, ray, dip).value) == std::signbit(before.value))
+      return {0.0, false};
+    return between(op, ray, std::min(from, dip), std::max(from, dip));
+  }
+};
+
+/// Outward from the tangent plane on both sides in growing steps, to the first place where the ray meets the
+/// surface.
 AsphereHit search(const PlanOp& op, const AsphereRay& ray) {
   const Interval allowed = before_equator(op, ray);
   if (!(allowed.from < allowed.to))
     return {0.0, false};
   const double plane = -ray.o[2] / ray.d[2];
-  double ahead = std::clamp(finite(plane) ? plane : 0.0, allowed.from, allowed.to);
-  double behind = ahead;
-  const Height start = height(op, ray, ahead);
-  double ahead_value = start.value;
-  double behind_value = start.value;
-  double step = first_search_step * std::max(std::min(std::abs(start.value), start.size), 1e-9);
+  const double start = std::clamp(finite(plane) ? plane : 0.0, allowed.from, allowed.to);
+  Explorer ahead{start, height(op, ray, start)};
+  Explorer behind = ahead;
+  double step = first_search_step * std::max(std::min(std::abs(ahead.here.value), ahead.here.size), 1e-9);
   for (int i = 0; i < search_steps; ++i, step *= search_growth) {
-    if (const auto hit = explore(op, ray, ahead, ahead_value, std::min(ahead + step, allowed.to)); hit.found)
-      return hit;
-    if (const auto hit = explore(op, ray, behind, behind_value, std::max(behind - step, allowed.from));
-        hit.found)
-      return hit;
+    const AsphereHit after = ahead.step(op, ray, std::min(ahead.t + step, allowed.to));
+    const AsphereHit before = behind.step(op, ray, std::max(behind.t - step, allowed.from));
+    if (after.found && before.found)
+      return after.t - start < start - before.t ? after : before;
+    if (after.found || before.found)
+      return after.found ? after : before;
   }
   return {0.0, false};
 }

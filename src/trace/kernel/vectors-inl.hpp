@@ -95,6 +95,9 @@ HWY_INLINE M either(M a, M b) {
 HWY_INLINE M first_only(M a, M b) {
   return {a.x && !b.x};
 }
+HWY_INLINE M opposite(M a) {
+  return {!a.x};
+}
 HWY_INLINE V select(M m, V yes, V no) {
   return m.x ? yes : no;
 }
@@ -213,6 +216,9 @@ HWY_INLINE M either(M a, M b) {
 }
 HWY_INLINE M first_only(M a, M b) {
   return hn::AndNot(b, a);
+}
+HWY_INLINE M opposite(M a) {
+  return hn::Not(a);
 }
 HWY_INLINE V select(M m, V yes, V no) {
   return hn::IfThenElse(m, yes, no);

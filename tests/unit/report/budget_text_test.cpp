@@ -15,8 +15,9 @@ using testing::HasSubstr;
 using testing::Not;
 
 std::string text_of(const analysis::Budget& budget, const TextStyle& style = {},
-                    const std::vector<std::string>& warnings = {}) {
-  return budget_text(sample::assembly(), budget, warnings, std::chrono::milliseconds(21), style);
+                    const std::vector<std::string>& warnings = {},
+                    const std::vector<analysis::Remedy>& remedies = {}) {
+  return budget_text(sample::assembly(), budget, remedies, warnings, std::chrono::milliseconds(21), style);
 }
 
 int widest_line(const std::string& text) {
@@ -53,6 +54,14 @@ delivered  0.8899 +- 0.0001    closes to 2e-16    16 384 rays, 21 ms
 
 Largest losses: fold absorbs 8.9 %, lens clips 2.0 %, window sends 0.14 % aside.
 )");
+}
+
+TEST(BudgetText, TellsWhatBetterCoatingsWouldBring) {
+  const std::string text =
+      text_of(sample::budget(), {}, {}, {{1, true, 0.97001, 0.9, true}, {0, false, 0.00129, 0.8905, false}});
+  EXPECT_THAT(text,
+              HasSubstr("\nA coating of R >= 0.9701 on fold would bring delivered to 0.9000, as required,\n"
+                        "  one of R <= 0.0012 on window to 0.8905.\n"));
 }
 
 TEST(BudgetText, FitsEightyColumnsWithAllLossesAndLongNames) {

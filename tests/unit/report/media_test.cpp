@@ -44,17 +44,22 @@ TEST(MediaCsv, ListsMediaOrTheirRows) {
 }
 
 TEST(MediaText, ListsOneMediumALine) {
-  EXPECT_EQ(media_text({air, metal}, {}), "medium  range nm    n 587.6 nm  source\n"
-                                          "air     any           1.000000  by convention\n"
-                                          "metal   400 to 700    0.500000  measured, once\n");
+  EXPECT_EQ(media_text({air, metal}, {}, {}), "medium  range nm    n 587.6 nm  source\n"
+                                              "air     any           1.000000  by convention\n"
+                                              "metal   400 to 700    0.500000  measured, once\n");
 }
 
 TEST(MediaText, GivesTheTableOfASingleMedium) {
-  EXPECT_EQ(media_text({metal_with_rows()}, {}), "metal    400 to 700 nm    n at 587.6 nm: 0.500000\n"
-                                                 "Source: measured, once\n\n"
-                                                 "wavelength nm         n      kappa\n"
-                                                 "          500  0.600000  3.250e+00\n"
-                                                 "          800         -          -\n");
+  EXPECT_EQ(media_text({metal_with_rows()}, {}, {}), "metal    400 to 700 nm    n at 587.6 nm: 0.500000\n"
+                                                     "Source: measured, once\n\n"
+                                                     "wavelength nm         n      kappa\n"
+                                                     "          500  0.600000  3.250e+00\n"
+                                                     "          800         -          -\n");
+}
+
+TEST(MediaText, EndsWithTheWarnings) {
+  const std::string text = media_text({metal_with_rows()}, {"nothing changes"}, {});
+  EXPECT_TRUE(text.ends_with("\nWarning: nothing changes\n"));
 }
 
 } // namespace
