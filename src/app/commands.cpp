@@ -9,7 +9,7 @@ const std::vector<CommandInfo>& commands() {
        "lightledger check systems/fog-bank-lidar.yaml"},
       {Command::budget, "budget", "FILE", "How much light arrives, and where did the rest go?",
        "lightledger budget systems/fog-bank-lidar.yaml --json -"},
-      {Command::ghosts, "ghosts", "FILE", "Which unintended reflections reach the detector, and how bright?",
+      {Command::ghosts, "ghosts", "FILE", "Which unwanted reflections arrive, and how bright are they?",
        "lightledger ghosts systems/tide-pool-camera.yaml --top 5"},
       {Command::polarization, "polarization", "FILE",
        "What becomes of the polarization, and by which station?",

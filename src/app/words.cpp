@@ -60,7 +60,7 @@ const std::vector<OptionInfo>& own_options(Command command) {
       {"--out", "PATH", "the page; NAME.html in the current folder without it, - is stdout", &Words::out}};
   static const std::vector<OptionInfo> ghosts{
       {"--bounces", "2|4", "follow at most so many; 2 without it", &Words::bounces},
-      {"--floor", "X", "leave beams below this share of the launched power; 1e-12", &Words::floor},
+      {"--floor", "X", "leave beams that may bring less of the launched power; 1e-12", &Words::floor},
       {"--top", "N", "list the N brightest paths", &Words::top},
       {"--field", "NAME", "the light of one field alone: its name, or its number from 1", &Words::field},
       {"--returned", nullptr, "list what leaves through the front too", nullptr, &Words::returned},

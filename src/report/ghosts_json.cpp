@@ -113,6 +113,7 @@ std::string ghosts_json(const Envelope& envelope, const Ghosts& ghosts, bool wit
   json["paths"] = std::move(paths);
   json["delivered"] = number(ghosts.delivered);
   json["rays"] = ghosts.rays;
+  json["brightest"] = number(ghosts.paths.empty() ? 0.0 : ghosts.paths.front().power);
   json["unlisted"] = {{"paths", ghosts.unlisted_paths}, {"power", number(ghosts.unlisted)}};
   json["foci"] = foci_json(ghosts);
   json["limit"] = number(ghosts.limit);

@@ -21,8 +21,8 @@ Vector turned(const double (&rotation)[3][3], const double (&v)[3][RayBlock::lan
   return {component(rotation[0]), component(rotation[1]), component(rotation[2])};
 }
 
-/// The axis x carried by the smallest rotation of the axis z onto d; any transverse vector for light that runs
-/// straight against z.
+/// The axis x carried by the smallest rotation of the axis z onto d; any transverse vector for light that
+/// runs straight against z.
 Vector double_pole(const Vector& d) {
   constexpr double opposite = 1e-15;
   if (1.0 + d.z < opposite)
@@ -102,7 +102,7 @@ void ArrivalReader::read(const RayBlock& rays, Arrival& arrival) const {
   }
 }
 
-PathSums ArrivalReader::sums(const Arrival& arrival, const Arrival& image) const {
+PathSums ArrivalReader::sums(const Arrival& arrival, const Arrival& image, const LaneMap& in_image) const {
   PathSums sums;
   double first_x = 0.0;
   double first_y = 0.0;
@@ -117,13 +117,14 @@ PathSums ArrivalReader::sums(const Arrival& arrival, const Arrival& image) const
     sums.s1 += arrival.xx[i] - arrival.yy[i];
     sums.s2 += 2.0 * arrival.xy[0][i];
     sums.s3 -= 2.0 * arrival.xy[1][i];
-    if (((image.alive >> i) & 1U) == 0)
+    const int k = in_image[static_cast<std::size_t>(i)];
+    if (((image.alive >> k) & 1U) == 0)
       continue;
-    const double image_power = image.xx[i] + image.yy[i];
-    const Product x = inner(times(row(arrival, 0, i), m_coherency), row(image, 0, i));
-    const Product y = inner(times(row(arrival, 4, i), m_coherency), row(image, 4, i));
+    const double image_power = image.xx[k] + image.yy[k];
+    const Product x = inner(times(row(arrival, 0, i), m_coherency), row(image, 0, k));
+    const Product y = inner(times(row(arrival, 4, i), m_coherency), row(image, 4, k));
     sums.shared += power;
-    sums.excess += power * (arrival.opl[i] - image.opl[i]);
+    sums.excess += power * (arrival.opl[i] - image.opl[k]);
     sums.interference += 2.0 * std::hypot(x.re + y.re, x.im + y.im);
     sums.intensity += power + image_power;
   }

@@ -5,9 +5,13 @@
 #include <lightledger/trace/rays.hpp>
 #include <lightledger/trace/train.hpp>
 
+#include <array>
 #include <cstdint>
 
 namespace lightledger::trace {
+
+/// Of each lane of a block, the lane of another that holds the same ray.
+using LaneMap = std::array<std::uint8_t, RayBlock::lanes>;
 
 /// A block of rays on the detector's surface: the field of each in its double-pole basis about the axis that
 /// arrives there, and what follows from it.
@@ -27,8 +31,9 @@ public:
   explicit ArrivalReader(const Train& train);
 
   void read(const RayBlock& rays, Arrival& arrival) const;
-  /// Sums over the rays of a block; `image` holds the same rays as they arrive along the intended path.
-  [[nodiscard]] PathSums sums(const Arrival& arrival, const Arrival& image) const;
+  /// Sums over the rays of a block; `image` holds the same rays as they arrive along the intended path, each
+  /// in the lane that the map tells.
+  [[nodiscard]] PathSums sums(const Arrival& arrival, const Arrival& image, const LaneMap& in_image) const;
 
 private:
   optics::Coherency m_coherency;

@@ -8,6 +8,7 @@
 #include <lightledger/trace/tree.hpp>
 
 #include <memory>
+#include <optional>
 #include <vector>
 
 namespace lightledger::trace {
@@ -18,11 +19,16 @@ struct TreeSetting {
 
   const Train& train;
   const PathTree& tree;
-  double floor;       ///< beams with a smaller share of the launched power are cut off
+  double floor;       ///< beams that may bring a smaller share of the launched power are cut off
   double reflectance; ///< of the detector
   optics::Coherency coherency;
   ArrivalReader reader;
   std::vector<PlanOp> detectors; ///< per wavelength, reflecting
+  /// Per wavelength and operator, what it reflects at normal incidence: a guess of what it reflects at all.
+  std::vector<std::vector<double>> reflects;
+  /// Per wavelength and meeting, the share of the light on its way there that may at most reach the detector
+  /// by one path: all where it goes there by itself, else what its strongest bounce on the way reflects.
+  std::vector<std::vector<double>> prospects;
 };
 
 /// A run of light from one meeting to the next.
@@ -57,7 +63,8 @@ private:
   /// The rays of one beam, before and behind a meeting in turn.
   struct Level {
     RayBlock block[2];
-    int first; ///< which of them holds the rays
+    int first;      ///< which of them holds the rays
+    LaneMap launch; ///< of each lane, the lane in which its ray was launched
   };
   /// Where in the tree a beam is: bounces left, and the number of the first path that starts here.
   struct Place {
@@ -66,13 +73,14 @@ private:
   };
 
   void see_image(const RayBlock& block);
-  void follow(PathTree::Exit exit, std::size_t depth, Place place);
+  void follow(PathTree::Exit exit, double power, std::size_t depth, Place place);
   double pass(LegId leg, const PathTree::Junction& junction, std::size_t depth);
   double fork(const PathTree::Exit& exit, std::size_t depth, Place& place);
+  std::optional<double> pass_by(const PathTree::Exit& exit, double power, std::size_t depth, Place& place);
   void branch(const PathTree::Exit& exit, double power, std::size_t depth, Place place);
   bool cut_off(const PathTree::Exit& exit, double power, Place place);
   void end(End end, double power, Place place);
-  void arrive(const RayBlock& rays, Place place);
+  void arrive(const Level& level, Place place);
   void enter(const Entry& entry);
   [[nodiscard]] bool bounced(Place place) const { return place.left < m_tree.bounces(); }
 
@@ -85,6 +93,8 @@ private:
   std::unique_ptr<Level[]> m_levels;
   double m_faintest = 0.0;
   Arrival m_image, m_arrival;
+  const std::vector<double>& m_reflects;
+  const std::vector<double>& m_prospects;
   PathTable m_paths, m_returned;
   PathSpans m_cut;
   std::vector<PathTree::JunctionId> m_bounced;

@@ -128,7 +128,7 @@ struct Ghosts {
 
 struct GhostOptions {
   int bounces = 2;
-  double floor = 1e-12;               ///< beams with a smaller share of launched power are not followed
+  double floor = 1e-12;               ///< beams that may bring less of the launched power are not followed
   std::optional<std::uint64_t> top{}; ///< how many paths to list; none: all, within reason
   std::optional<std::string> field{}; ///< the light of this field alone: its name, or its number from 1
   bool maps = false;                  ///< make the maps of light on the detector

@@ -45,7 +45,8 @@ struct TreeFound {
 };
 
 struct TreeOptions {
-  double floor = 1e-12; ///< beams with a smaller share of their field's and wavelength's power are cut off
+  double floor = 1e-12; ///< beams that may bring less than this share of their field's and wavelength's power
+                        ///< are cut off
   int threads = 0;      ///< 0: as many as the machine has
   std::uint64_t shifts = 0; ///< which set of shifts scatters the rays
 };
