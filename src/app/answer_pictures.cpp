@@ -19,10 +19,10 @@
 namespace lightledger::app {
 namespace {
 
-/// Ghosts with rays and spots on the page; more would make it heavy.
+/// Ghosts whose rays and spots are traced for the page.
 constexpr std::size_t most_ghost_pictures = 40;
 /// Maps of the pupil on the page, in bytes.
-constexpr std::size_t most_map_bytes = 300'000;
+constexpr std::size_t most_map_bytes = 220'000;
 
 /// The ghost of a rank, brightest first.
 analysis::Ghost ghost_of_rank(std::uint64_t rank, const Options& options, const Input& input) {

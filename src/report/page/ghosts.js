@@ -202,13 +202,13 @@ function drawSpot(parent, number) {
       .attr("height", y(-sensor.half_y) - y(sensor.half_y));
   edge.attr("class", "sensor-edge");
   const inside = (d) => Math.abs(d[0]) <= reach && Math.abs(d[1]) <= reach;
-  svg.append("g").selectAll("circle").data(ghost.filter(inside)).enter().append("circle").attr("class", "spot-ghost").attr("r", 2)
-    .attr("cx", (d) => x(d[0])).attr("cy", (d) => y(d[1]));
-  svg.append("g").selectAll("circle").data(image.filter(inside)).enter().append("circle").attr("class", "spot-image").attr("r", 3)
-    .attr("cx", (d) => x(d[0])).attr("cy", (d) => y(d[1]));
+  const dots = (points, kind, radius) => svg.append("g").selectAll("circle").data(points.filter(inside)).enter().append("circle")
+    .attr("class", kind).attr("r", radius).attr("cx", (d) => x(d[0])).attr("cy", (d) => y(d[1]));
+  dots(image, "spot-image", 4.5);
+  dots(ghost, "spot-ghost", 1.8);
   svg.append("circle").attr("class", "spot-ring").attr("cx", x(path.centroid_mm[0])).attr("cy", y(path.centroid_mm[1]))
     .attr("r", Math.max(2, x(path.rms_radius_mm) - x(0)));
-  figure.append("figcaption").text("On the detector, x to the right and y up: the ghost's rays, a ring of its rms radius over all fields, and the images as filled dots.");
+  figure.append("figcaption").text("On the detector, x to the right and y up: the ghost's rays as small dots, a ring of its rms radius over all fields, and the images as large dots.");
 }
 
 function drawGhostDetail(parent) {
@@ -295,7 +295,7 @@ function drawGhostTable(parent) {
       (column.value(one) === null || column.value(other) === null ? 1 : sort.direction) * compare(column.value(one), column.value(other)) || one.number - other.number);
     ghostOrder = rows.map((d) => d.number);
     const shown = rows.slice(0, most);
-    count.text(`${rows.length} of ${counted(all.length, "ghost")}` + (rows.length > most ? `, the first ${most} shown` : ""));
+    count.text(`${rows.length} of ${counted(all.length, "ghost")}` + (data.pictures.left_out ? `; ${data.pictures.left_out} fainter ones are left to the command` : "") + (rows.length > most ? `, the first ${most} shown` : ""));
     headings.attr("aria-sort", (d) => d.key === sort.key ? (sort.direction > 0 ? "ascending" : "descending") : null);
     const lines = body.selectAll("tr").data(shown, (d) => d.number);
     lines.exit().remove();
