@@ -39,9 +39,9 @@ public:
     const double ratio = m_op.n2 / m_op.n1;
     const double cosine =
         by_exit() ? std::sqrt(1.0 - ratio * ratio * (1.0 - variable) * (1.0 + variable)) : variable;
-    const optics::Response r = optics::layered_boundary(m_op.n1, m_layers, {m_op.n2, m_op.n2_kappa}, cosine,
-                                                        m_op.wavelength_nm);
-    return {r.t_s.real(), r.t_s.imag(), r.t_p.real(), r.t_p.imag(), r.r_s.real(),
+    const optics::Response r =
+        optics::layered_boundary(m_op.n1, m_layers, {m_op.n2, m_op.n2_kappa}, cosine, m_op.wavelength_nm);
+    return {r.t_s.real(), r.t_s.imag(), r.t_p.real(), r.t_p.imag(),    r.r_s.real(),
             r.r_s.imag(), r.r_p.real(), r.r_p.imag(), r.absorptance_s, r.absorptance_p};
   }
 

@@ -137,7 +137,8 @@ private:
 void tabulate(Train& train) {
   const assembly::Light& light = train.assembly->light;
   const auto& ops = train.plans.front().ops;
-  const bool any = std::ranges::any_of(ops, [](const PlanOp& op) { return op.amplitude == AmplitudeKind::stack; });
+  const bool any =
+      std::ranges::any_of(ops, [](const PlanOp& op) { return op.amplitude == AmplitudeKind::stack; });
   if (!any || std::visit(RayCount{}, light.sampling) * light.fields.size() < enough_rays)
     return;
   const Probe probe(train);
