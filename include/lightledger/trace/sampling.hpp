@@ -114,8 +114,8 @@ public:
   Sampling(const Train& train, const Survey& survey, const SamplingOptions& options = {})
       : m_light(light(train, options)), m_survey(survey), m_options(options),
         m_pupil(m_light, options.shifts) {
-    for (Group& group : groups(train, m_pupil)) {
-      Sample<Found> sample{std::move(group), {}};
+    for (const Group& group : groups(train, m_pupil)) {
+      Sample<Found> sample{group, {}};
       for (int r = 0; r < replicates; ++r)
         sample.replicate.push_back(blank(sample.group));
       m_samples.push_back(std::move(sample));
