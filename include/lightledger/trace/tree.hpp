@@ -2,6 +2,7 @@
 
 #include <lightledger/trace/path_sums.hpp>
 #include <lightledger/trace/path_tree.hpp>
+#include <lightledger/trace/progress.hpp>
 #include <lightledger/trace/train.hpp>
 
 #include <cstdint>
@@ -48,6 +49,7 @@ struct TreeOptions {
   double floor = 1e-12; ///< beams with a smaller share of their field's and wavelength's power are cut off
   int threads = 0;      ///< 0: as many as the machine has
   std::uint64_t shifts = 0; ///< which set of shifts scatters the rays
+  Progress* progress = nullptr;
 };
 
 struct TracedTree {
