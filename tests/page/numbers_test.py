@@ -42,7 +42,7 @@ class Numbers(PageTest):
                         self.assertEqual((title, shown), ("does not exist", "–"))
                     else:
                         self.assertEqual(float(title), value)
-                        self.assertAlmostEqual(float(shown), value, delta=1e-3 * abs(value))
+                        self.assertAlmostEqual(float(shown), value, delta=0.5e-3 * abs(value))
 
     def test_ledger_holds_every_station_s_powers(self):
         for system in SYSTEMS:

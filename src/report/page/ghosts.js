@@ -226,7 +226,7 @@ function drawGhostDetail(parent) {
       ["relative power", relativeWords(path.relative_power) + " of delivered"],
       ["brightest pixel", path.peak_ratio === null || path.peak_ratio === undefined ? "not known" : relativeWords(path.peak_ratio) + " of the image's"],
       ["rms radius", quantity(path.rms_radius_mm) + " mm"],
-      ["longer path", quantity(path.path_excess_mm) + " mm" + (path.path_excess_mm ? ` (${quantity(path.path_excess_mm / 0.299792458)} ps)` : "")],
+      ["path beyond the direct one", quantity(path.path_excess_mm) + " mm" + (path.path_excess_mm ? ` (${quantity(path.path_excess_mm / 0.299792458)} ps)` : "")],
       ["polarization", `degree ${quantity(path.dop)}`],
       ["fringes", path.fringe_modulation === null || path.fringe_modulation === undefined ? "none" : `modulation ${relativeWords(path.fringe_modulation)}, if the light is coherent`]
     ]);
@@ -239,7 +239,7 @@ function drawGhostDetail(parent) {
 
 /** The rays of the chosen ghost in the drawing of the train. */
 function drawGhostRays() {
-  const view = d3.select("#drawing .view");
+  const view = d3.select("#drawing .light");
   const update = () => {
     const pictures = state.ghost === null ? null : data.pictures.ghosts[state.ghost - 1];
     view.selectAll(".chosen-ghost").remove();
@@ -256,7 +256,7 @@ const ghostColumns = [
   {key: "bounces", heading: "bounces", text: true, value: (d) => d.path.bounces.join(), words: (d) => bounceWords(d.path), first: 1},
   {key: "relative_power", heading: "relative power", value: (d) => d.path.relative_power, words: (d) => relativeWords(d.path.relative_power), first: -1},
   {key: "rms_radius_mm", heading: "rms radius, mm", value: (d) => d.path.rms_radius_mm, words: (d) => quantity(d.path.rms_radius_mm), first: 1},
-  {key: "path_excess_mm", heading: "longer by, mm", value: (d) => d.path.path_excess_mm, words: (d) => quantity(d.path.path_excess_mm), first: -1},
+  {key: "path_excess_mm", heading: "path excess, mm", value: (d) => d.path.path_excess_mm, words: (d) => quantity(d.path.path_excess_mm), first: -1},
   {key: "peak_ratio", heading: "peak ratio", value: (d) => d.path.peak_ratio, words: (d) => relativeWords(d.path.peak_ratio), first: -1},
   {key: "dop", heading: "DoP", value: (d) => d.path.dop, words: (d) => quantity(d.path.dop), first: -1}
 ];
