@@ -139,15 +139,19 @@ void meet_surface(const PlanLeg& leg_seen, const PlanOp& op_seen, const RayBlock
   const PlanLeg leg = leg_seen;
   const PlanOp op = op_seen;
   const Shape shape(op);
-  for (int i = 0; i < m.count; i += width) {
-    const M alive = mask(in.alive >> i);
+  const std::uint64_t all_alive = in.alive;
+  const int count = m.count;
+  std::uint64_t all_found = 0;
+  std::uint64_t all_inside = 0;
+  for (int i = 0; i < count; i += width) {
+    const M alive = mask(all_alive >> i);
     if (!any(alive))
       continue;
     const Ray ray = transfer<Leg>(leg, in, i);
     const Hit hit = shape.meet(ray, alive);
     const M found = both(hit.found, alive);
-    m.hit |= bits(found) << i;
-    m.inside |= bits(both(found, open_at(op, hit.p[0], hit.p[1]))) << i;
+    all_found |= bits(found) << i;
+    all_inside |= bits(both(found, open_at(op, hit.p[0], hit.p[1]))) << i;
     put(m.normal, i, hit.normal);
     store(m.cos1 + i, hit.cosine);
     store(m.path + i, hit.path);
@@ -162,6 +166,8 @@ void meet_surface(const PlanLeg& leg_seen, const PlanOp& op_seen, const RayBlock
     if (out.hit != nullptr)
       put(*out.hit, i, hit.p);
   }
+  m.hit = all_found;
+  m.inside = all_inside;
 }
 
 enum class Transverse { interface, element, none };
@@ -189,23 +195,25 @@ HWY_INLINE Basis basis_of(const PlanOp& op, const Ray& ray, const Hit& hit) {
 
 /// k' = μ k + (cosθ2 − μ cosθ1) N, accurate at normal incidence; cosθ2 from n2² cos²θ2 = n2² − n1² sin²θ1,
 /// without cancellation at grazing incidence.
-HWY_INLINE void refract(const PlanOp& op, const Ray& ray, const Hit& hit, int i, Meeting& m, V (&passed)[3]) {
+HWY_INLINE M refract(const PlanOp& op, const Ray& ray, const Hit& hit, int i, Meeting& m, V (&passed)[3]) {
   const V n1_cos1 = set(op.n1) * hit.cosine;
   const V square = fma(n1_cos1, n1_cos1, set((op.n2 - op.n1) * (op.n2 + op.n1)));
   const V normal_part = quick_root(max(abs(square), set(tiny)));
   store(m.normal_part + i, normal_part);
-  m.crosses |= (op.swallows ? 0 : bits(set(0.0) < square)) << i;
   const V mu = set(op.n1 / op.n2);
   const V along = (normal_part - n1_cos1) * set(1.0 / op.n2);
   for (int axis = 0; axis < 3; ++axis)
     passed[axis] = fma(mu, ray.d[axis], along * hit.normal[axis]);
+  return set(0.0) < square;
 }
 
 /// Basis and directions of the beams that leave.
 template <Transverse Kind>
 void depart(const PlanOp& op_seen, const Arriving& arriving, const Departing& out, Meeting& m) {
   const PlanOp op = op_seen;
-  for (int i = 0; i < m.count; i += width) {
+  const int count = m.count;
+  std::uint64_t crosses = 0;
+  for (int i = 0; i < count; i += width) {
     if (!any(mask(m.alive >> i)))
       continue;
     Ray ray;
@@ -220,7 +228,7 @@ void depart(const PlanOp& op_seen, const Arriving& arriving, const Departing& ou
     store(m.sin_squared + i, basis.sin_squared);
     V passed[3] = {ray.d[0], ray.d[1], ray.d[2]};
     if constexpr (Kind == Transverse::interface)
-      refract(op, ray, hit, i, m, passed);
+      crosses |= bits(refract(op, ray, hit, i, m, passed)) << i;
     if constexpr (Kind == Transverse::element)
       turn_basis(op, ray, basis.s);
     const V back = set(-2.0) * hit.cosine;
@@ -235,7 +243,9 @@ void depart(const PlanOp& op_seen, const Arriving& arriving, const Departing& ou
       put(out.bounce->d, i, bounced);
     }
   }
-  if constexpr (Kind != Transverse::interface)
+  if constexpr (Kind == Transverse::interface)
+    m.crosses = op.swallows ? 0 : crosses;
+  else
     m.crosses = m.hit;
 }
 
