@@ -125,7 +125,7 @@ TEST(Tree, WhatAMirrorLetsThroughIsLeaked) {
 /// What comes back from the rear is 0.0384, of which 0.04 may turn round once more.
 TEST(Tree, BeamsThatMayBringLessThanTheFloorAreCutOffAndEntered) {
   const std::string train = plate + "- {name: end, does: detect}\n";
-  const Followed followed(train, 2, 0.0015);
+  const Followed followed(train, 2, 0.0014);
   EXPECT_EQ(followed.found.paths.rows().size(), 1U);
   EXPECT_TRUE(followed.found.cut.spans().empty());
   const Followed cut(train, 2, 0.0016);
