@@ -48,13 +48,17 @@ HWY_INLINE Rows kept_rows(const RayBlock& in, int i) {
   return rows;
 }
 
-/// row Φ row†; Diagonal where Φ has no other elements.
-template <bool Diagonal>
+enum class State { unpolarized, diagonal, general };
+
+/// row Φ row†, for a Φ with two equal elements, with two, or with all.
+template <State Phi>
 HWY_INLINE V power(const Launched& phi, const V (&row)[4]) {
+  if constexpr (Phi == State::unpolarized)
+    return set(phi.xx) * fma(row[0], row[0], fma(row[1], row[1], fma(row[2], row[2], row[3] * row[3])));
   const V x = fma(row[0], row[0], row[1] * row[1]);
   const V y = fma(row[2], row[2], row[3] * row[3]);
   const V own = fma(set(phi.xx), x, set(phi.yy) * y);
-  if constexpr (Diagonal)
+  if constexpr (Phi == State::diagonal)
     return own;
   const V cross_re = fma(row[0], row[2], row[1] * row[3]); // Jx Jy*
   const V cross_im = fms(row[1], row[2], row[0] * row[3]);
@@ -170,11 +174,11 @@ struct Sent {
   V onward, scattered, extra;
 };
 
-template <Amplitudes Kind, bool Diagonal, bool Attenuated>
+template <Amplitudes Kind, State Phi, bool Attenuated>
 HWY_INLINE Sent send(const Settling& all, const Found& found, const Rows& rows, V weight, V scattered, int i,
                      RayBlock* to) {
   const Rows sent = applied<Kind>(found, rows, i);
-  const V gross = weight * (power<Diagonal>(all.phi, sent.s) + power<Diagonal>(all.phi, sent.p));
+  const V gross = weight * (power<Phi>(all.phi, sent.s) + power<Phi>(all.phi, sent.p));
   Sent result{gross, set(0.0), set(0.0)};
   if constexpr (Attenuated) {
     const V specular = gross * (set(1.0) - scattered);
@@ -192,21 +196,23 @@ HWY_INLINE Sent send(const Settling& all, const Found& found, const Rows& rows, 
   return result;
 }
 
-template <Beams Out, Amplitudes Kind, bool Diagonal, bool Attenuated>
-HWY_INLINE void settle_vector(const Settling& all, int i, Sums& sums) {
+template <Beams Out, Amplitudes Kind, State Phi, bool Attenuated>
+HWY_INLINE void settle_vector(const Settling& all, int i, Sums& sums, bool& ran_backward) {
   const Meeting& m = all.m;
   const M alive = mask(m.alive >> i);
   const M inside = mask(m.inside >> i);
   const Rows rows = Kind == Amplitudes::untouched ? kept_rows(all.in, i) : rotated(all.in, m, i);
   V weight = load(all.in.w + i);
-  V power_s = weight * power<Diagonal>(all.phi, rows.s);
-  V power_p = weight * power<Diagonal>(all.phi, rows.p);
+  V power_s = weight * power<Phi>(all.phi, rows.s);
+  V power_p = weight * power<Phi>(all.phi, rows.p);
   const V sent = power_s + power_p;
   V arriving = sent;
   if (!all.leg.launch) {
     const M backward = both(alive, load(m.path + i) < set(-backward_tolerance));
-    if (any(backward))
+    if (any(backward)) {
+      ran_backward = true;
       sums.backward = sums.backward + keep(both(backward, mask(m.hit >> i)), sent);
+    }
   }
   if (Attenuated && all.leg.alpha > 0.0) {
     const V path = keep(mask(m.hit >> i), max(load(m.path + i), set(0.0)));
@@ -230,11 +236,11 @@ HWY_INLINE void settle_vector(const Settling& all, int i, Sums& sums) {
   Sent passed;
   Sent bounced;
   if constexpr (Out != Beams::bounce)
-    passed = send<Kind, Diagonal, Attenuated>(all, {m.t_s, m.t_p, m.complex_t}, rows, weight, scatter_pass, i,
-                                              all.out.pass);
+    passed = send<Kind, Phi, Attenuated>(all, {m.t_s, m.t_p, m.complex_t}, rows, weight, scatter_pass, i,
+                                         all.out.pass);
   if constexpr (Out != Beams::pass)
-    bounced = send<Kind, Diagonal, Attenuated>(all, {m.r_s, m.r_p, m.complex_r}, rows, weight, scatter_bounce,
-                                               i, all.out.bounce);
+    bounced = send<Kind, Phi, Attenuated>(all, {m.r_s, m.r_p, m.complex_r}, rows, weight, scatter_bounce, i,
+                                          all.out.bounce);
   const Shares share = shares<Out, Kind>(m, i);
   sums.arrive(alive, mask(m.hit >> i), inside, arriving);
   if (m.lossy)
@@ -257,24 +263,30 @@ HWY_INLINE void settle_vector(const Settling& all, int i, Sums& sums) {
     sums.extrapolate(both(inside, mask(m.extrapolated >> i)), arriving);
 }
 
-template <Beams Out, Amplitudes Kind, bool Diagonal, bool Attenuated>
+template <Beams Out, Amplitudes Kind, State Phi, bool Attenuated>
 void settle_block(const Settling& all, Entry& entry) {
   Sums sums;
+  bool ran_backward = false;
   for (int i = 0; i < all.m.count; i += width)
     if (any(mask(all.m.alive >> i)))
-      settle_vector<Out, Kind, Diagonal, Attenuated>(all, i, sums);
-  sums.collect(entry);
+      settle_vector<Out, Kind, Phi, Attenuated>(all, i, sums, ran_backward);
+  sums.collect<Attenuated, Out == Beams::both>(all.m, ran_backward, entry);
+}
+
+template <Beams Out, Amplitudes Kind, State Phi>
+void settle_state(const Settling& all, Entry& entry) {
+  if (all.leg.alpha > 0.0 || all.op.loss > 0.0 || all.op.scatter_transmitted > 0.0)
+    settle_block<Out, Kind, Phi, true>(all, entry);
+  else
+    settle_block<Out, Kind, Phi, false>(all, entry);
 }
 
 template <Beams Out, Amplitudes Kind>
 void settle_with(const Settling& all, Entry& entry) {
-  const bool diagonal = all.phi.xy_re == 0.0 && all.phi.xy_im == 0.0;
-  const bool attenuated = all.leg.alpha > 0.0 || all.op.loss > 0.0 || all.op.scatter_transmitted > 0.0;
-  if (attenuated)
-    return diagonal ? settle_block<Out, Kind, true, true>(all, entry)
-                    : settle_block<Out, Kind, false, true>(all, entry);
-  return diagonal ? settle_block<Out, Kind, true, false>(all, entry)
-                  : settle_block<Out, Kind, false, false>(all, entry);
+  if (all.phi.xy_re != 0.0 || all.phi.xy_im != 0.0)
+    return settle_state<Out, Kind, State::general>(all, entry);
+  return all.phi.xx == all.phi.yy ? settle_state<Out, Kind, State::unpolarized>(all, entry)
+                                  : settle_state<Out, Kind, State::diagonal>(all, entry);
 }
 
 template <Beams Out>

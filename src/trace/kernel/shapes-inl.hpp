@@ -68,24 +68,22 @@ HWY_INLINE Nearest nearest_to_vertex(const Ray& ray) {
           ahead};
 }
 
-/// Both places where a ray o + t d with o ⟂ d meets c(x² + y² + (1+K) z²) = 2 z: roots of a t² + 2 b t + c =
-/// 0. At them half the derivative of the equation along the ray, which is the normal's component along it, is
-/// −b' and b' with b' = copysign(√discriminant, −b).
-struct Places {
-  V t[2];
-  V z[2];
-  V along; ///< normal's component at t[0]; at t[1] the opposite
-  M real;
-  M before_equator[2];
+/// a t² + 2 b t + c = 0 for the places where a ray o + t d with o ⟂ d meets c(x² + y² + (1+K) z²) = 2 z.
+/// At them half the derivative of the equation along the ray, which is the normal's component along it, is
+/// `along` at the first and its opposite at the second place.
+struct Quadratic {
+  V a, q;  ///< q = −b + copysign(√discriminant, −b); the roots are c/q and q/a
+  V first; ///< c/q
+  V along;
+  V discriminant;
 };
 
 template <bool Spherical>
-HWY_INLINE Places places(double curvature, double conic, double radius, const Nearest& nearest, V dz) {
+HWY_INLINE Quadratic quadratic(double curvature, double conic, const Nearest& nearest, V dz) {
   const V c = set(curvature);
   const V oz = nearest.o[2];
-  const V oo = dot(nearest.o, nearest.o);
   V down = dz; // −b
-  V rest = fms(c, oo, oz + oz);
+  V rest = fms(c, dot(nearest.o, nearest.o), oz + oz);
   V a = c;
   if constexpr (!Spherical) {
     const V k = set(curvature * conic);
@@ -94,19 +92,27 @@ HWY_INLINE Places places(double curvature, double conic, double radius, const Ne
     a = fma(k * dz, dz, c);
   }
   const V discriminant = fnma(a, rest, down * down);
-  const V half = copysign(quick_root(max(discriminant, set(tiny))), down);
-  const V q = down + half;
+  const V along = copysign(quick_root(max(discriminant, set(tiny))), down);
+  const V q = down + along;
+  return {a, q, rest * reciprocal(q), along, discriminant};
+}
+
+/// Both places and which of them count.
+struct Places {
+  V t[2];
+  V z[2];
+  M real;
+  M before_equator[2];
+};
+
+HWY_INLINE Places places(const Quadratic& at, double curvature, double conic, const Nearest& nearest, V dz) {
   Places found;
-  found.t[0] = rest * reciprocal(q);
-  if constexpr (Spherical)
-    found.t[1] = q * set(radius);
-  else
-    found.t[1] = q * reciprocal(a);
-  found.along = half;
-  found.real = set(0.0) <= discriminant;
+  found.t[0] = at.first;
+  found.t[1] = at.q * reciprocal(at.a);
+  found.real = set(0.0) <= at.discriminant;
   const V stretch = set(curvature * (1.0 + conic));
   for (int k = 0; k < 2; ++k) {
-    found.z[k] = fma(found.t[k], dz, oz);
+    found.z[k] = fma(found.t[k], dz, nearest.o[2]);
     // Comparisons with what is infinite or not a number are false: such a root does not count.
     found.before_equator[k] = both(stretch * found.z[k] < set(1.0), abs(found.t[k]) < set(largest_length));
   }
@@ -122,40 +128,60 @@ HWY_INLINE M takes_second(const Places& at) {
 template <bool Spherical>
 class QuadricShape {
 public:
-  explicit QuadricShape(const PlanOp& op)
-      : m_curvature(op.curvature), m_conic(Spherical ? 0.0 : op.conic),
-        m_radius(Spherical ? 1.0 / op.curvature : 0.0) {}
+  explicit QuadricShape(const PlanOp& op) : m_curvature(op.curvature), m_conic(Spherical ? 0.0 : op.conic) {}
 
-  HWY_INLINE Hit meet(const Ray& ray, M) const {
+  HWY_INLINE Hit meet(const Ray& ray, M alive) const {
     const Nearest nearest = nearest_to_vertex(ray);
-    const Places at = places<Spherical>(m_curvature, m_conic, m_radius, nearest, ray.d[2]);
-    const M second = takes_second(at);
+    const Quadratic at = quadratic<Spherical>(m_curvature, m_conic, nearest, ray.d[2]);
+    V t = at.first;
+    V along = at.along;
     Hit hit;
-    hit.found = both(at.real, either(at.before_equator[0], at.before_equator[1]));
-    const V t = keep(hit.found, select(second, at.t[1], at.t[0]));
+    hit.found = first_serves(at, fma(t, ray.d[2], nearest.o[2]), ray.d[2]);
+    if (any(first_only(alive, hit.found)))
+      choose(at, nearest, ray.d[2], t, along, hit.found);
     for (int axis = 0; axis < 3; ++axis)
       hit.p[axis] = fma(t, ray.d[axis], nearest.o[axis]);
     hit.path = t - nearest.ahead;
-    const V along = select(second, neg(at.along), at.along);
-    const V size = copysign(set(1.0), along);
-    const V c = set(m_curvature) * size;
-    V normal[3] = {neg(c * hit.p[0]), neg(c * hit.p[1]), fnma(set(1.0 + m_conic) * c, hit.p[2], size)};
-    if constexpr (Spherical) {
-      hit.cosine = abs(along);
-    } else {
-      const V scale = reciprocal_root(max(dot(normal, normal), set(tiny)));
-      for (V& component : normal)
-        component = component * scale;
-      hit.cosine = abs(along) * scale;
-    }
-    hit.cosine = min(hit.cosine, set(1.0));
-    for (int axis = 0; axis < 3; ++axis)
-      hit.normal[axis] = normal[axis];
+    stand(along, hit);
     return hit;
   }
 
 private:
-  double m_curvature, m_conic, m_radius;
+  /// The places lie 2 along dz/a apart in z, so a first one nearer than half of that is the nearer one. What
+  /// this does not settle, choose() does.
+  HWY_INLINE M first_serves(const Quadratic& at, V z, V dz) const {
+    const M nearer = both(set(0.0) <= at.discriminant, abs(at.a * z) <= abs(at.along * dz));
+    if constexpr (Spherical)
+      return nearer; // and |c z| ≤ 1: before the equator
+    return both(nearer, set(m_curvature * (1.0 + m_conic)) * z < set(1.0));
+  }
+
+  HWY_INLINE void choose(const Quadratic& at, const Nearest& nearest, V dz, V& t, V& along, M& found) const {
+    const Places all = places(at, m_curvature, m_conic, nearest, dz);
+    const M second = takes_second(all);
+    found = both(all.real, either(all.before_equator[0], all.before_equator[1]));
+    t = keep(found, select(second, all.t[1], all.t[0]));
+    along = select(second, neg(along), along);
+  }
+
+  /// Normal and angle of incidence, from the normal's component along the ray.
+  HWY_INLINE void stand(V along, Hit& hit) const {
+    const V size = copysign(set(1.0), along);
+    const V c = set(-m_curvature) * size;
+    hit.normal[0] = c * hit.p[0];
+    hit.normal[1] = c * hit.p[1];
+    hit.normal[2] = fma(set(1.0 + m_conic) * c, hit.p[2], size);
+    hit.cosine = abs(along);
+    if constexpr (!Spherical) {
+      const V scale = reciprocal_root(max(dot(hit.normal, hit.normal), set(tiny)));
+      for (V& component : hit.normal)
+        component = component * scale;
+      hit.cosine = hit.cosine * scale;
+    }
+    hit.cosine = min(hit.cosine, set(1.0));
+  }
+
+  double m_curvature, m_conic;
 };
 
 using SphereShape = QuadricShape<true>;

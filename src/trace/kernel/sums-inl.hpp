@@ -7,6 +7,7 @@
 #define LIGHTLEDGER_SUMS_INL
 #endif
 
+#include "meeting.hpp"
 #include "vectors-inl.hpp"
 
 #include <lightledger/trace/entry.hpp>
@@ -71,27 +72,39 @@ public:
     m_extrapolated = add_where(inside, m_extrapolated, arriving);
   }
 
-  HWY_INLINE void collect(Entry& entry) const {
+  /// Adds up over the lanes what may differ from 0.
+  template <bool Attenuated, bool Forked>
+  HWY_INLINE void collect(const Meeting& m, bool ran_backward, Entry& entry) const {
+    entry = {};
     entry.incident = sum(m_incident);
-    entry.missed = sum(m_missed);
-    entry.clipped = sum(m_clipped);
     entry.onward = sum(m_onward);
     entry.aside = sum(m_aside);
-    entry.absorbed = sum(m_absorbed);
-    entry.scattered = sum(m_scattered);
-    entry.extra = sum(m_extra);
-    entry.bulk = sum(bulk);
-    entry.backward = sum(backward);
-    entry.turned = sum(m_turned);
-    entry.turned_scattered = sum(m_turned_scattered);
-    entry.turned_extra = sum(m_turned_extra);
-    entry.extrapolated = sum(m_extrapolated);
     entry.inside = sum(m_inside);
     entry.pass_s = sum(m_pass_s);
     entry.pass_p = sum(m_pass_p);
     entry.incidence = sum(m_incidence);
     entry.least_incidence = least(m_least);
     entry.most_incidence = most(m_most);
+    if (m.inside != m.alive) {
+      entry.missed = sum(m_missed);
+      entry.clipped = sum(m_clipped);
+    }
+    if (m.lossy)
+      entry.absorbed = sum(m_absorbed);
+    if (m.extrapolated != 0)
+      entry.extrapolated = sum(m_extrapolated);
+    if (ran_backward)
+      entry.backward = sum(backward);
+    if constexpr (Attenuated) {
+      entry.scattered = sum(m_scattered);
+      entry.extra = sum(m_extra);
+      entry.bulk = sum(bulk);
+    }
+    if constexpr (Forked) {
+      entry.turned = sum(m_turned);
+      entry.turned_scattered = sum(m_turned_scattered);
+      entry.turned_extra = sum(m_turned_extra);
+    }
   }
 
 private:
