@@ -96,7 +96,7 @@ struct SamplingOptions {
   /// Chunks get no fewer rays than this where there are several; 0: sixteen chunks always.
   std::uint64_t rays_per_chunk = 0;
   std::optional<assembly::Sampling> instead{}; ///< of the light's own sampling
-  Progress* progress = nullptr; ///< told of every chunk
+  Progress* progress = nullptr;                ///< told of every chunk
 };
 
 /// Puts a survey to the light's own samples of rays. They are cut into a list of chunks that does not depend
@@ -114,8 +114,8 @@ public:
   Sampling(const Train& train, const Survey& survey, const SamplingOptions& options = {})
       : m_light(light(train, options)), m_survey(survey), m_options(options),
         m_pupil(m_light, options.shifts) {
-    for (Group& group : groups(train, m_pupil)) {
-      Sample<Found> sample{std::move(group), {}};
+    for (const Group& group : groups(train, m_pupil)) {
+      Sample<Found> sample{group, {}};
       for (int r = 0; r < replicates; ++r)
         sample.replicate.push_back(blank(sample.group));
       m_samples.push_back(std::move(sample));
