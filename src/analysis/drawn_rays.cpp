@@ -54,7 +54,7 @@ public:
       out.tape = &tape;
       out.bounces = step.act == trace::Act::bounce;
       (out.bounces ? out.bounce : out.pass) = &block;
-      interact(m_plan.legs[step.leg], m_plan.ops[step.op], m_coherency, block, out);
+      interact(m_plan.legs[step.leg], operator_of(step), m_coherency, block, out);
       if (entry.missed > 0.0)
         return ended(std::move(ray), RayEnd::missed);
       note_hit(surface_of(step.op), row(tape.hit), ray);
@@ -81,6 +81,19 @@ private:
     block.p[1][0] = launch[1];
     trace::Source(light, light.fields[field]).aim(block, 0);
     return block;
+  }
+
+  /// The surface as it is, but for a detector off which the path bounces: its operator only takes light in,
+  /// so it becomes a mirror. Where a ray runs does not depend on how much it carries.
+  [[nodiscard]] trace::PlanOp operator_of(const trace::Path::Step& step) const {
+    trace::PlanOp op = m_plan.ops[step.op];
+    const bool detector = m_train.assembly->stations[step.visit].intended == trace::Act::detect;
+    if (detector && step.act == trace::Act::bounce) {
+      op.amplitude = trace::AmplitudeKind::ideal;
+      op.reflect_s = op.reflect_p = 1.0;
+      op.transmit_s = op.transmit_p = 0.0;
+    }
+    return op;
   }
 
   [[nodiscard]] Vector3d start(const RayBlock& block, double lead) const {
@@ -123,7 +136,7 @@ Vector2d on_launch_plane(const trace::Footprint& footprint, View view, double pl
 /// Points that cover the unit disc evenly outside a hole: equal areas, a golden angle apart (Vogel, Math.
 /// Biosci. 44, 179 (1979)).
 std::vector<Vector2d> disc_points(double hole) {
-  constexpr int count = 48;
+  constexpr int count = 36;
   constexpr double golden_angle = 2.399963229728653;
   std::vector<Vector2d> points;
   for (int i = 0; i < count; ++i) {

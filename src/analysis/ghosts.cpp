@@ -108,8 +108,8 @@ GhostsResult ghosts(const Assembly& assembly, const GhostOptions& options) {
   if (!train)
     return result;
   const PathTree tree(lit, train->routes, options.bounces);
-  const TracedTree traced =
-      trace::trace_tree(*train, tree, {.floor = options.floor, .threads = options.threads});
+  const TracedTree traced = trace::trace_tree(
+      *train, tree, {.floor = options.floor, .threads = options.threads, .progress = options.progress});
   if (!traced.lit) {
     const assembly::Mark mark =
         assembly.document ? assembly.document->locate("light.rays") : assembly::Mark{};

@@ -14,7 +14,10 @@ using assembly::MediumId;
 using assembly::Side;
 using optics::Range;
 
-constexpr int wavelength_steps = 60;
+/// The same number of rows for few coatings and many.
+constexpr std::size_t most_wavelengths = 240;
+constexpr std::size_t steps_of_one = 60;
+constexpr std::size_t least_steps = 12;
 constexpr double degrees = 180.0 / std::numbers::pi;
 /// Angles nearer to each other than this, in degrees, are drawn as one.
 constexpr double distinct = 0.05;
@@ -109,15 +112,15 @@ Range known(const Assembly& assembly, const Use& use) {
   return range;
 }
 
-std::vector<double> wavelengths(const Assembly& assembly, const Use& use) {
+std::vector<double> wavelengths(const Assembly& assembly, const Use& use, std::size_t steps) {
   const auto [first, last] = std::ranges::minmax(assembly.light.wavelengths, {}, &assembly::Wavelength::nm);
   const double beyond = std::max(0.12 * first.nm, 0.5 * (last.nm - first.nm));
   const Range wanted = Range{first.nm - beyond, last.nm + beyond}.overlap(known(assembly, use));
   const double from = std::ceil(wanted.from_nm);
   const double to = std::floor(wanted.to_nm);
   std::vector<double> list;
-  for (int i = 0; from < to && i <= wavelength_steps; ++i)
-    list.push_back(from + (to - from) * i / wavelength_steps);
+  for (std::size_t i = 0; from < to && i <= steps; ++i)
+    list.push_back(from + (to - from) * static_cast<double>(i) / static_cast<double>(steps));
   return list;
 }
 
@@ -125,12 +128,15 @@ std::vector<double> wavelengths(const Assembly& assembly, const Use& use) {
 
 std::vector<OccurringCoating> occurring_coatings(const Assembly& assembly, const Budget& budget) {
   std::vector<OccurringCoating> coatings;
-  for (const Use& use : uses(assembly, budget)) {
+  const std::vector<Use> all = uses(assembly, budget);
+  const std::size_t steps =
+      std::clamp(most_wavelengths / std::max<std::size_t>(all.size(), 1), least_steps, steps_of_one);
+  for (const Use& use : all) {
     CoatingRequest request{.name = assembly.coatings[use.coating].name};
     request.incident = assembly.media[use.incident].name;
     request.substrate = assembly.media[use.substrate].name;
     request.angles_deg = angles(use);
-    request.wavelengths_nm = wavelengths(assembly, use);
+    request.wavelengths_nm = wavelengths(assembly, use, steps);
     CoatingCurveResult result = coating_curve(assembly, request);
     if (!result.curve) {
       request.wavelengths_nm.clear();

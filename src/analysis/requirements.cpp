@@ -151,7 +151,7 @@ CheckResult check(const Assembly& assembly, const BudgetOptions& options) {
     return result;
   std::optional<Ghosts> ghosts_found;
   if (asks_for(assembly, ghosts_prefix)) {
-    GhostsResult found = ghosts(assembly, {.threads = options.threads});
+    GhostsResult found = ghosts(assembly, {.threads = options.threads, .progress = options.progress});
     result.faults = std::move(found.faults);
     if (!found.ghosts)
       return result;

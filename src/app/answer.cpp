@@ -54,7 +54,10 @@ Answer answer_ghosts(const Options& options, const Input& input) {
   wanted.threads = options.threads;
   wanted.maps = options.images.has_value();
   const auto start = std::chrono::steady_clock::now();
-  const analysis::GhostsResult result = analysis::ghosts(*input.assembly, wanted);
+  const analysis::GhostsResult result = watched(options, [&](const auto& asked) {
+    wanted.progress = asked.progress;
+    return analysis::ghosts(*input.assembly, wanted);
+  });
   const std::chrono::duration<double> elapsed = std::chrono::steady_clock::now() - start;
   refuse_file(result.faults, input);
 

@@ -1,6 +1,7 @@
 #include "answer_pictures.hpp"
 
 #include "answer_parts.hpp"
+#include "progress_bar.hpp"
 
 #include <lightledger/analysis/ghosts.hpp>
 #include <lightledger/analysis/polarization.hpp>
@@ -19,10 +20,10 @@
 namespace lightledger::app {
 namespace {
 
-/// Ghosts with rays and spots on the page; more would make it heavy.
+/// Ghosts whose rays and spots are traced for the page.
 constexpr std::size_t most_ghost_pictures = 40;
 /// Maps of the pupil on the page, in bytes.
-constexpr std::size_t most_map_bytes = 300'000;
+constexpr std::size_t most_map_bytes = 220'000;
 
 /// The ghost of a rank, brightest first.
 analysis::Ghost ghost_of_rank(std::uint64_t rank, const Options& options, const Input& input) {
@@ -79,13 +80,15 @@ std::vector<report::PageMap> maps_of(const Input& input, const analysis::Polariz
 /// Everything that the page shows: each analysis once.
 report::PageContent page_content(const Options& options, const Input& input) {
   const assembly::Assembly& assembly = *input.assembly;
-  analysis::BudgetResult budget =
-      analysis::budget(assembly, {.split = analysis::Split::both, .threads = options.threads});
+  ProgressBar bar(!options.quiet);
+  analysis::BudgetResult budget = analysis::budget(
+      assembly, {.split = analysis::Split::both, .threads = options.threads, .progress = &bar});
   refuse_file(budget.faults, input);
-  const analysis::GhostsResult ghosts = analysis::ghosts(assembly, {.threads = options.threads});
+  const analysis::GhostsResult ghosts =
+      analysis::ghosts(assembly, {.threads = options.threads, .progress = &bar});
   refuse_file(ghosts.faults, input);
   const analysis::PolarizationResult polarization =
-      analysis::polarization(assembly, {.maps = true, .threads = options.threads});
+      analysis::polarization(assembly, {.maps = true, .threads = options.threads, .progress = &bar});
   refuse_file(polarization.faults, input);
   analysis::Judgement verdicts =
       analysis::judge_all(assembly, *budget.budget, &*polarization.polarization, &*ghosts.ghosts);

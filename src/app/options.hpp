@@ -7,6 +7,7 @@
 #include <lightledger/analysis/ghosts.hpp>
 #include <lightledger/analysis/polarization.hpp>
 #include <lightledger/assembly/load.hpp>
+#include <lightledger/trace/instruction_set.hpp>
 
 #include <optional>
 #include <string>
@@ -23,6 +24,7 @@ struct Options {
   std::optional<std::string> json, csv;  ///< paths, `-` for stdout
   std::vector<assembly::Change> changes; ///< of --set, --rays and --accuracy
   int threads = 0;
+  std::optional<trace::InstructionSet> isa; ///< none: the fastest
   bool decibels = false;
   bool quiet = false;
   bool allow_outside = false; ///< measured curves may lie outside the assembly file's folder

@@ -203,9 +203,25 @@ void Reader::read_threads(const std::vector<std::string>& values) {
 }
 
 void Reader::read_isa(const std::vector<std::string>& values) {
-  const std::optional<std::string> word = single("--isa", values);
-  if (word && *word != "portable")
-    note(fmt::format("there is no instruction set '{}'", *word), "portable");
+  std::string from = "--isa";
+  std::optional<std::string> word = single("--isa", values);
+  if (!word) {
+    const char* environment = std::getenv("LIGHTLEDGER_ISA");
+    if (environment == nullptr || *environment == '\0')
+      return;
+    from = "LIGHTLEDGER_ISA";
+    word = environment;
+  }
+  std::string available;
+  for (const trace::InstructionSet set : trace::instruction_sets) {
+    if (!trace::available(set))
+      continue;
+    if (*word == trace::name(set))
+      m_options.isa = set;
+    available += (available.empty() ? "" : ", ") + std::string(trace::name(set));
+  }
+  if (!m_options.isa)
+    note(fmt::format("{}: this machine has no instruction set '{}'", from, *word), available);
 }
 
 void Reader::read_ghosts(const Words& words) {

@@ -22,6 +22,8 @@ int run(const std::vector<std::string>& arguments) {
   if (const auto* text = std::get_if<std::string>(&parsed))
     return print(*text);
   const auto& options = std::get<Options>(parsed);
+  if (options.isa)
+    trace::use(*options.isa);
   const Input input = read_input(options);
   Outputs outputs(options);
   const Answer result = answer(options, input);

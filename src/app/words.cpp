@@ -26,7 +26,7 @@ const std::vector<OptionInfo>& common_options() {
       {"--rays", "N", "scattered rays per field and wavelength", &Words::rays},
       {"--accuracy", "X", "double the rays until the standard error is below X", &Words::accuracy},
       {"--threads", "N", "threads to use; all of the machine's without it", &Words::threads},
-      {"--isa", "NAME", "instruction set of the tracer: portable", &Words::isa},
+      {"--isa", "NAME", "instruction set: avx512, avx2, neon, portable", &Words::isa},
       {"--set", "PATH=VALUE", "a change of the file, as fold.tilt=[44,0,0]; repeatable", &Words::set},
       {"--db", nullptr, "fractions in dB in the text", nullptr, &Words::decibels},
       {"--quiet", nullptr, "no text on stdout", nullptr, &Words::quiet},

@@ -1,6 +1,7 @@
 #include "drawing_labels.hpp"
 
 #include "display_width.hpp"
+#include "figures.hpp"
 
 #include <fmt/format.h>
 
@@ -29,9 +30,24 @@ std::string numbers_of(const DrawnView& view, std::size_t station) {
   return numbers;
 }
 
-StationLabel named(const DrawnView& view, std::size_t station) {
+/// How far a station outside the frame lies from the nearest one of its neighbours in the train.
+std::string distance_words(const DrawnView& view, std::size_t station) {
+  double distance = INFINITY;
+  const auto measure = [&](std::size_t other) {
+    distance =
+        std::min(distance, (view.stations[other].axis_point - view.stations[station].axis_point).norm());
+  };
+  if (station > 0)
+    measure(station - 1);
+  if (station + 1 < view.stations.size())
+    measure(station + 1);
+  return fmt::format(", {} mm on", plain(distance));
+}
+
+StationLabel named(const DrawnView& view, std::size_t station, const Sheet& sheet) {
+  const std::string name = shortened(on_one_line(view.stations[station].name), most_characters);
   return {numbers_of(view, station),
-          shortened(on_one_line(view.stations[station].name), most_characters),
+          sheet.shows(station) ? name : name + distance_words(view, station),
           Vector2d::Zero(),
           0.0,
           {},
@@ -42,8 +58,21 @@ double width_of(const StationLabel& label) {
   return text_width(label.number) + (label.name.empty() ? 0.0 : text_width(label.name) + 6.0);
 }
 
+/// Where the way to a station outside the frame leaves it, and which way it goes on there.
+Tie tie_at_frame(const Vector2d& station, const Box& frame) {
+  const Vector2d nearest = station.cwiseMax(frame.low).cwiseMin(frame.high);
+  const Vector2d beyond = station - nearest;
+  const int axis = std::abs(beyond[0]) >= std::abs(beyond[1]) ? 0 : 1;
+  Vector2d outward = Vector2d::Zero();
+  outward[axis] = std::copysign(1.0, beyond[axis]);
+  return {nearest, outward};
+}
+
 /// The ends of what a station shows, from which a leader may start.
-std::vector<Tie> ties(const DrawnStation& station, const Sheet& sheet) {
+std::vector<Tie> ties(const DrawnView& view, std::size_t number, const Sheet& sheet) {
+  const DrawnStation& station = view.stations[number];
+  if (!sheet.shows(number))
+    return {tie_at_frame(sheet(station.axis_point), sheet.frame())};
   std::vector<Tie> found;
   if (!station.section.empty() && !station.section.front().empty() && !station.section.back().empty()) {
     const Vector2d low = sheet(station.section.front().front());
@@ -93,7 +122,7 @@ public:
   Row(const DrawnView& view, const Sheet& sheet)
       : m_view(view), m_sheet(sheet), m_stations(first_visits(view)) {
     for (const std::size_t station : m_stations)
-      m_ties.push_back(highest(ties(view.stations[station], sheet)));
+      m_ties.push_back(highest(ties(view, station, sheet)));
     std::vector<std::size_t> order(m_stations.size());
     std::iota(order.begin(), order.end(), std::size_t{0});
     std::ranges::stable_sort(order, {}, [&](std::size_t i) { return std::round(m_ties[i].point[0]); });
@@ -101,7 +130,7 @@ public:
     m_height = INFINITY;
     for (const Tie& tie : m_ties)
       m_height = std::min(m_height, tie.point[1]);
-    m_height = std::min(m_height, m_sheet.scale() * extent_of(view).box.low[1]) - row_above;
+    m_height = std::min(m_height, m_sheet.frame().low[1]) - row_above;
   }
 
   Labels place() {
@@ -130,7 +159,7 @@ private:
       if (std::abs(places[i] - m_ties[m_order[i]].point[0]) > most_shift)
         return false;
     for (std::size_t i = 0; i < m_order.size(); ++i) {
-      StationLabel label = named(m_view, m_stations[m_order[i]]);
+      StationLabel label = named(m_view, m_stations[m_order[i]], m_sheet);
       label.foot = {places[i] - 0.5 * width_of(label), m_height};
       label.box = {label.foot - Vector2d(0.0, text_height), label.foot + Vector2d(width_of(label), 3.0)};
       label.leader = leader(m_ties[m_order[i]], {places[i], m_height + 4.0});
@@ -144,7 +173,7 @@ private:
     const std::vector<double> places = spread(wanted(), distances);
     const double lean = lean_deg * std::numbers::pi / 180.0;
     for (std::size_t i = 0; i < m_order.size(); ++i) {
-      StationLabel label = named(m_view, m_stations[m_order[i]]);
+      StationLabel label = named(m_view, m_stations[m_order[i]], m_sheet);
       label.turn_deg = lean_deg;
       label.foot = {places[i] + 3.0, m_height};
       const Vector2d end = width_of(label) * Vector2d(std::cos(lean), -std::sin(lean));
@@ -160,7 +189,7 @@ private:
   }
 
   [[nodiscard]] double width_at(std::size_t i) const {
-    return width_of(named(m_view, m_stations[m_order[i]]));
+    return width_of(named(m_view, m_stations[m_order[i]], m_sheet));
   }
 
   const DrawnView& m_view;
@@ -183,9 +212,10 @@ LabelPlacer placer_of(const DrawnView& view, const Sheet& sheet) {
     return placer;
   const auto forbid = [&](const Segment& segment) { placer.forbid(segment); };
   const auto avoid = [&](const Segment& segment) { placer.avoid(segment); };
-  for (const DrawnStation& station : view.stations)
-    for (const analysis::Polyline& piece : station.section)
-      each_segment(sheet(piece), forbid);
+  for (std::size_t i = 0; i < view.stations.size(); ++i)
+    for (const analysis::Polyline& piece : view.stations[i].section)
+      if (sheet.shows(i))
+        each_segment(sheet(piece), forbid);
   for (const analysis::DrawnGlass& body : view.glass)
     each_segment(sheet(body.contour), forbid);
   for (const analysis::DrawnRay& ray : view.rays)
@@ -200,10 +230,10 @@ std::optional<Labels> scattered(const DrawnView& view, const Sheet& sheet, bool 
   labels.keyed = !with_names;
   labels.stations.resize(view.stations.size());
   for (const std::size_t station : first_visits(view)) {
-    StationLabel label = named(view, station);
+    StationLabel label = named(view, station, sheet);
     if (!with_names)
       label.name.clear();
-    const auto placed = placer.place(ties(view.stations[station], sheet), {width_of(label), text_height});
+    const auto placed = placer.place(ties(view, station, sheet), {width_of(label), text_height});
     if (!placed && with_names)
       return std::nullopt;
     if (!placed)

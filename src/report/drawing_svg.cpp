@@ -37,17 +37,17 @@ struct Panel {
 class ViewPainter {
 public:
   ViewPainter(const DrawnView& view, double px_per_mm, std::string id_prefix)
-      : m_view(view), m_sheet(view.along, px_per_mm), m_id_prefix(std::move(id_prefix)) {
-    Extent extent = extent_of(view);
-    if (!extent.empty())
-      m_extent.add(Box{px_per_mm * extent.box.low, px_per_mm * extent.box.high});
+      : m_view(view), m_sheet(view, px_per_mm), m_id_prefix(std::move(id_prefix)) {
+    m_extent.add(m_sheet.frame());
   }
 
   Panel paint() {
+    open_frame();
     paint_axis();
     for (const analysis::DrawnGlass& body : m_view.glass)
       line(kind_of(body), m_sheet(body.contour), true);
     paint_rays();
+    m_xml.close();
     const Labels labels = label(m_view, m_sheet);
     for (std::size_t i = 0; i < m_view.stations.size(); ++i)
       paint_station(i, labels.stations[i]);
@@ -57,11 +57,30 @@ public:
   }
 
 private:
+  /// The group of all that must not leave the frame of a view that is cropped.
+  void open_frame() {
+    if (!m_sheet.cropped()) {
+      m_xml.open("g", {{"class", "light"}});
+      return;
+    }
+    const Box frame = m_sheet.frame();
+    const Vector2d size = frame.high - frame.low;
+    const std::string id = fmt::format("{}frame", m_id_prefix);
+    m_xml.open("clipPath", {{"id", id}});
+    m_xml.leaf("rect", {{"x", coordinate(frame.low[0])},
+                        {"y", coordinate(frame.low[1])},
+                        {"width", coordinate(size[0])},
+                        {"height", coordinate(size[1])}});
+    m_xml.close();
+    m_xml.open("g", {{"class", "light"}, {"clip-path", fmt::format("url(#{})", id)}});
+  }
+
   void line(const std::string& kind, const std::vector<Vector2d>& points, bool closed = false) {
     if (points.empty())
       return;
+    const Box frame = m_sheet.frame();
     for (const Vector2d& point : points)
-      m_extent.add(point);
+      m_extent.add(m_sheet.cropped() ? Vector2d(point.cwiseMax(frame.low).cwiseMin(frame.high)) : point);
     m_xml.leaf("path", {{"class", kind}, {"d", path_of(points, closed)}});
   }
 
@@ -102,7 +121,8 @@ private:
     m_xml.open("g", {{"id", fmt::format("{}{}", m_id_prefix, number + 1)},
                      {"class", fmt::format("station does-{}", station.does)}});
     m_xml.words("title", {}, fmt::format("{} {}", number + 1, station.name));
-    paint_surface(station);
+    if (m_sheet.shows(number))
+      paint_surface(station);
     if (label)
       paint_label(*label);
     m_xml.close();
@@ -179,6 +199,8 @@ private:
 
   void paint_label(const StationLabel& label) {
     line("leader", label.leader);
+    for (const Vector2d& point : label.leader)
+      m_extent.add(point);
     m_extent.add(label.box);
     const std::string place =
         fmt::format("translate({} {})", coordinate(label.foot[0]), coordinate(label.foot[1]));
@@ -219,7 +241,7 @@ double scale_for(const Drawing& drawing) {
   const double height = drawing.views.size() > 1 ? most_height_of_many : most_height;
   double scale = INFINITY;
   for (const DrawnView& view : drawing.views) {
-    const Vector2d size = extent_of(view).size();
+    const Vector2d size = framing(view).extent.size();
     scale = std::min(
         {scale, (paper_width - 4.0 * margin) / std::max(size[0], 1e-6), height / std::max(size[1], 1e-6)});
   }
@@ -349,7 +371,7 @@ private:
 } // namespace
 
 std::string ray_path(const Drawing& drawing, const DrawnView& view, const DrawnRay& ray) {
-  return path_of(Sheet(view.along, scale_for(drawing))(ray.points));
+  return path_of(Sheet(view, scale_for(drawing))(ray.points));
 }
 
 std::string drawing_svg(const std::string& title, const Drawing& drawing) {

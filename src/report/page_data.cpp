@@ -19,8 +19,9 @@ using assembly::Assembly;
 using assembly::Clear;
 
 constexpr double degrees = 180.0 / std::numbers::pi;
-/// Ghosts beyond the brightest so many are left to the `ghosts` command; the file stays light.
-constexpr std::size_t most_ghosts = 400;
+/// The file stays light: ghosts beyond what fits are left to their command, pictures of them to `draw`.
+constexpr std::size_t most_ghost_bytes = 350'000;
+constexpr std::size_t most_picture_bytes = 180'000;
 
 Envelope envelope_for(const PageContent& content, const char* command) {
   Envelope envelope = content.envelope;
@@ -32,13 +33,23 @@ Json optional_document(const std::optional<std::string>& document) {
   return document ? Json::parse(*document) : Json(nullptr);
 }
 
-Json ghosts_document(const std::optional<std::string>& document) {
-  Json json = optional_document(document);
-  if (json.is_object() && json["ghosts"]["paths"].size() > most_ghosts) {
-    Json& paths = json["ghosts"]["paths"];
-    paths.erase(paths.begin() + most_ghosts, paths.end());
+/// How many entries from the first on take no more than some bytes.
+std::size_t fitting(const Json& list, std::size_t most_bytes) {
+  std::size_t bytes = 0;
+  for (std::size_t i = 0; i < list.size(); ++i) {
+    bytes += list[i].dump(-1, ' ', false, Json::error_handler_t::replace).size();
+    if (bytes > most_bytes)
+      return i;
   }
-  return json;
+  return list.size();
+}
+
+/// Takes what does not fit off a list, and tells how much that was.
+std::size_t cut(Json& list, std::size_t most_bytes) {
+  const std::size_t all = list.size();
+  const std::size_t kept = fitting(list, most_bytes);
+  list.erase(list.begin() + static_cast<std::ptrdiff_t>(kept), list.end());
+  return all - kept;
 }
 
 Json coatings_json(const PageContent& content) {
@@ -117,6 +128,7 @@ Json pictures_json(const Assembly& assembly, const PageContent& content) {
   Json ghosts = Json::array();
   for (std::size_t i = 1; i < content.paths.size(); ++i)
     ghosts.push_back(ghost_picture_json(content, content.paths[i]));
+  cut(ghosts, most_picture_bytes);
   Json maps = Json::array();
   for (const PageMap& map : content.maps)
     maps.push_back({{"png", "data:image/png;base64," + base64(map.png)}, {"words", map.words}});
@@ -131,14 +143,18 @@ Json pictures_json(const Assembly& assembly, const PageContent& content) {
 } // namespace
 
 Json page_data(const Assembly& assembly, const PageContent& content) {
+  Json ghosts = optional_document(content.ghosts);
+  Json pictures = pictures_json(assembly, content);
+  if (ghosts.is_object())
+    pictures["left_out"] = cut(ghosts["ghosts"]["paths"], most_ghost_bytes);
   return {{"check", Json::parse(check_json(envelope_for(content, "check"), content.verdicts))},
           {"budget", Json::parse(budget_json(envelope_for(content, "budget"), content.budget))},
-          {"ghosts", ghosts_document(content.ghosts)},
+          {"ghosts", std::move(ghosts)},
           {"polarization", optional_document(content.polarization)},
           {"coatings", coatings_json(content)},
           {"media", media_json(assembly)},
           {"input", {{"file", content.file}, {"light", describe_light(assembly.light)}}},
-          {"pictures", pictures_json(assembly, content)}};
+          {"pictures", std::move(pictures)}};
 }
 
 } // namespace lightledger::report

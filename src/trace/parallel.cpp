@@ -2,8 +2,6 @@
 
 #include <lightledger/trace/parallel.hpp>
 
-#include "handover.hpp"
-
 #include <tbb/global_control.h>
 #include <tbb/parallel_for.h>
 #include <tbb/task_arena.h>

@@ -1,3 +1,4 @@
+#include <lightledger/trace/tables.hpp>
 #include <lightledger/trace/train.hpp>
 
 #include <utility>
@@ -16,7 +17,9 @@ std::optional<Train> prepare(const assembly::Assembly& assembly, assembly::Fault
   auto launches = footprints(assembly, path, plans.front(), faults);
   if (!launches)
     return std::nullopt;
-  return Train{&assembly, std::move(*bench), routes, std::move(plans), std::move(path), std::move(*launches)};
+  Train train{&assembly, std::move(*bench), routes, std::move(plans), std::move(path), std::move(*launches)};
+  tabulate(train);
+  return train;
 }
 
 } // namespace lightledger::trace

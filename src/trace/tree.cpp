@@ -111,7 +111,9 @@ TreeFound& TreeFound::operator*=(double factor) {
 
 TracedTree trace_tree(const Train& train, const PathTree& tree, const TreeOptions& options) {
   const TreeSurvey survey(train, tree, options.floor);
-  Sampling<TreeSurvey> sampling(train, survey, {options.shifts, rays_per_chunk});
+  Sampling<TreeSurvey> sampling(
+      train, survey,
+      {.shifts = options.shifts, .rays_per_chunk = rays_per_chunk, .progress = options.progress});
   TracedTree traced;
   with_threads(options.threads, [&] { traced.accurate = sampling.run(); });
   traced.rays = sampling.rays();

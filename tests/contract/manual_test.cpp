@@ -32,17 +32,21 @@ std::vector<std::string> blocks(const std::string& document, const std::string& 
   return found;
 }
 
-/// The lines of README that run the program, without `tools/run`.
-std::vector<std::string> readme_commands() {
-  const std::string tool = "tools/run ";
+/// The lines of a document's shell blocks that begin with some words, without these.
+std::vector<std::string> commands_of(const std::string& document, const std::string& beginning) {
   std::vector<std::string> commands;
-  for (const std::string& block : blocks("README.md", "sh")) {
+  for (const std::string& block : blocks(document, "sh")) {
     std::istringstream lines(block);
     for (std::string line; std::getline(lines, line);)
-      if (line.starts_with(tool))
-        commands.push_back(line.substr(tool.size()));
+      if (line.starts_with(beginning))
+        commands.push_back(line.substr(beginning.size()));
   }
   return commands;
+}
+
+/// The lines of README that run the program, without `tools/run`.
+std::vector<std::string> readme_commands() {
+  return commands_of("README.md", "tools/run ");
 }
 
 /// Text of a budget without the figures that differ from run to run and from machine to machine.
@@ -102,6 +106,13 @@ TEST(Manual, ShowsRequirementsThatItsExampleMeets) {
     const Outcome outcome = run({"check", example, "--set", "requirements=" + line});
     EXPECT_EQ(outcome.code, 0) << line << '\n' << outcome.err << outcome.out;
   }
+}
+
+TEST(Manual, ShowsDrawingsAndPagesThatCanBeMade) {
+  const std::vector<std::string> commands = commands_of("docs/drawing-and-page.md", "lightledger ");
+  ASSERT_THAT(commands, SizeIs(testing::Ge(4U)));
+  for (const std::string& command : commands)
+    EXPECT_EQ(run_shell("lightledger " + command).code, 0) << command;
 }
 
 /// Names of all members in a JSON document, at any depth.

@@ -103,6 +103,21 @@ class PageTest(unittest.TestCase):
     def open(self, system, fragment=""):
         self.browser.open(system, fragment)
 
+    def assert_same(self, one, other):
+        """The same document, numbers to 1e-12: two runs may round differently."""
+        if isinstance(one, dict):
+            self.assertEqual(one.keys(), other.keys())
+            for key in one:
+                self.assert_same(one[key], other[key])
+        elif isinstance(one, list):
+            self.assertEqual(len(one), len(other))
+            for a, b in zip(one, other):
+                self.assert_same(a, b)
+        elif isinstance(one, float) and isinstance(other, (int, float)):
+            self.assertAlmostEqual(one, other, delta=1e-12 * max(1.0, abs(other)))
+        else:
+            self.assertEqual(one, other)
+
     def ask(self, script, *arguments):
         return self.browser.ask(script, *arguments)
 

@@ -4,6 +4,7 @@ import json
 import unittest
 
 from browser import RAYS, SYSTEMS, PageTest, run, system_file
+from snapshots import snapshot
 
 
 def lookup(data, path):
@@ -16,68 +17,57 @@ def lookup(data, path):
 
 
 class Numbers(PageTest):
-    def data(self):
-        return json.loads(self.text("#data"))
-
     def test_embeds_the_documents_of_the_commands(self):
         for system in SYSTEMS:
             with self.subTest(system):
-                self.open(system)
                 budget = json.loads(run("budget", system_file(system), *RAYS, "--json", "-"))["budget"]
-                embedded = self.data()["budget"]["budget"]
+                embedded = dict(snapshot(system).data["budget"]["budget"])
                 embedded.pop("ledgers")
-                self.assertEqual(embedded, budget)
+                self.assert_same(embedded, budget)
 
     def test_embeds_both_splits(self):
-        self.open("tide-pool-camera")
-        ledgers = self.data()["budget"]["budget"]["ledgers"]
+        ledgers = snapshot("tide-pool-camera").data["budget"]["budget"]["ledgers"]
         for split in ("wavelength", "field"):
             document = json.loads(run("budget", system_file("tide-pool-camera"), *RAYS, "--split", split, "--json", "-"))
             expected = document["budget"]["ledgers"]
-            self.assertEqual([entry for entry in ledgers if expected[0].keys() == entry.keys()], expected)
+            self.assert_same([entry for entry in ledgers if expected[0].keys() == entry.keys()], expected)
 
     def test_marked_figures_are_those_of_the_documents(self):
         for system in SYSTEMS:
             with self.subTest(system):
-                self.open(system)
-                data = self.data()
-                marked = self.all("[data-quantity]")
-                self.assertGreater(len(marked), 1)
-                for element in marked:
-                    value = lookup(data, element.get_attribute("data-quantity"))
-                    full = "does not exist" if value is None else value
-                    title = element.get_attribute("title")
-                    self.assertEqual(title if value is None else float(title), full)
-                    if value not in (None, 0):
-                        self.assertAlmostEqual(float(element.text) / value, 1.0, delta=1e-3)
+                self.assertGreater(len(snapshot(system).marked), 1)
+                for path, title, shown in snapshot(system).marked:
+                    value = lookup(snapshot(system).data, path)
+                    if value is None:
+                        self.assertEqual((title, shown), ("does not exist", "–"))
+                    else:
+                        self.assertEqual(float(title), value)
+                        self.assertAlmostEqual(float(shown), value, delta=0.5e-3 * abs(value))
 
     def test_ledger_holds_every_station_s_powers(self):
         for system in SYSTEMS:
             with self.subTest(system):
-                self.open(system)
-                stations = self.data()["budget"]["budget"]["stations"]
-                rows = self.ask("""return Array.from(document.querySelectorAll('#ledger-table tbody tr')).map(row =>
-                    Array.from(row.querySelectorAll('td.power')).map(cell => [cell.dataset.column, Number(cell.title), cell.textContent]))""")
-                self.assertEqual(len(rows), len(stations))
-                for row, station in zip(rows, stations):
+                stations = snapshot(system).data["budget"]["budget"]["stations"]
+                self.assertEqual(len(snapshot(system).ledger), len(stations))
+                for row, station in zip(snapshot(system).ledger, stations):
                     for column, full, shown in row:
                         self.assertEqual(full, station[column])
                         expected = "–" if full == 0 else "<0.0001" if abs(full) < 0.5e-4 else f"{full:.4f}"
                         self.assertEqual(shown, expected)
 
     def test_a_wavelength_s_ledger_is_its_own(self):
+        ledgers = snapshot("tide-pool-camera").data["budget"]["budget"]["ledgers"]
+        entry = next(e for e in ledgers if e.get("wavelength_nm") == 650)
         self.open("tide-pool-camera", "#wavelength=650")
-        entry = next(e for e in self.data()["budget"]["budget"]["ledgers"] if e.get("wavelength_nm") == 650)
-        shown = self.ask("""return Array.from(document.querySelectorAll('td[data-column=onward]')).map(cell => Number(cell.title))""")
+        shown = self.ask("return Array.from(document.querySelectorAll('td[data-column=onward]')).map(cell => Number(cell.title))")
         self.assertEqual(shown, [station["onward"] for station in entry["stations"]])
 
     def test_verdicts_are_those_of_check(self):
+        words = {True: "met", False: "not met", None: "cannot be told"}
         for system in SYSTEMS:
             with self.subTest(system):
-                self.open(system)
-                words = {True: "met", False: "not met", None: "cannot be told"}
-                expected = [words[row["met"]] for row in self.data()["check"]["check"]["requirements"]]
-                self.assertEqual(self.texts("#verdicts .word"), expected)
+                rows = snapshot(system).data["check"]["check"]["requirements"]
+                self.assertEqual(snapshot(system).verdicts, [words[row["met"]] for row in rows])
 
 
 if __name__ == "__main__":

@@ -2,6 +2,7 @@
 
 #include <lightledger/assembly/assembly.hpp>
 #include <lightledger/assembly/diagnostics.hpp>
+#include <lightledger/trace/progress.hpp>
 
 #include <array>
 #include <cstdint>
@@ -133,6 +134,7 @@ struct GhostOptions {
   std::optional<std::string> field{}; ///< the light of this field alone: its name, or its number from 1
   bool maps = false;                  ///< make the maps of light on the detector
   int threads = 0;                    ///< 0: as many as the machine has
+  trace::Progress* progress = nullptr;
 };
 
 struct GhostsResult {

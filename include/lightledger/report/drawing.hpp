@@ -16,7 +16,7 @@ namespace lightledger::report {
 /// 4 has the class `between-3-4`, that of a plate `plate-3`, rays of the first field `field0`.
 [[nodiscard]] std::string drawing_svg(const std::string& title, const analysis::Drawing& drawing);
 
-/// A ray as an SVG path in the coordinates of the group of its view, `g.view`.
+/// A ray as an SVG path in the coordinates of the group of its view that holds all rays, `g.light`.
 [[nodiscard]] std::string ray_path(const analysis::Drawing& drawing, const analysis::DrawnView& view,
                                    const analysis::DrawnRay& ray);
 

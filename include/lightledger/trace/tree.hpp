@@ -2,6 +2,7 @@
 
 #include <lightledger/trace/path_sums.hpp>
 #include <lightledger/trace/path_tree.hpp>
+#include <lightledger/trace/progress.hpp>
 #include <lightledger/trace/train.hpp>
 
 #include <cstdint>
@@ -49,6 +50,7 @@ struct TreeOptions {
                         ///< are cut off
   int threads = 0;      ///< 0: as many as the machine has
   std::uint64_t shifts = 0; ///< which set of shifts scatters the rays
+  Progress* progress = nullptr;
 };
 
 struct TracedTree {

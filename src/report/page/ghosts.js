@@ -202,13 +202,13 @@ function drawSpot(parent, number) {
       .attr("height", y(-sensor.half_y) - y(sensor.half_y));
   edge.attr("class", "sensor-edge");
   const inside = (d) => Math.abs(d[0]) <= reach && Math.abs(d[1]) <= reach;
-  svg.append("g").selectAll("circle").data(ghost.filter(inside)).enter().append("circle").attr("class", "spot-ghost").attr("r", 2)
-    .attr("cx", (d) => x(d[0])).attr("cy", (d) => y(d[1]));
-  svg.append("g").selectAll("circle").data(image.filter(inside)).enter().append("circle").attr("class", "spot-image").attr("r", 3)
-    .attr("cx", (d) => x(d[0])).attr("cy", (d) => y(d[1]));
+  const dots = (points, kind, radius) => svg.append("g").selectAll("circle").data(points.filter(inside)).enter().append("circle")
+    .attr("class", kind).attr("r", radius).attr("cx", (d) => x(d[0])).attr("cy", (d) => y(d[1]));
+  dots(image, "spot-image", 4.5);
+  dots(ghost, "spot-ghost", 1.8);
   svg.append("circle").attr("class", "spot-ring").attr("cx", x(path.centroid_mm[0])).attr("cy", y(path.centroid_mm[1]))
     .attr("r", Math.max(2, x(path.rms_radius_mm) - x(0)));
-  figure.append("figcaption").text("On the detector, x to the right and y up: the ghost's rays, a ring of its rms radius over all fields, and the images as filled dots.");
+  figure.append("figcaption").text("On the detector, x to the right and y up: the ghost's rays as small dots, a ring of its rms radius over all fields, and the images as large dots.");
 }
 
 function drawGhostDetail(parent) {
@@ -226,7 +226,7 @@ function drawGhostDetail(parent) {
       ["relative power", relativeWords(path.relative_power) + " of delivered"],
       ["brightest pixel", path.peak_ratio === null || path.peak_ratio === undefined ? "not known" : relativeWords(path.peak_ratio) + " of the image's"],
       ["rms radius", quantity(path.rms_radius_mm) + " mm"],
-      ["longer path", quantity(path.path_excess_mm) + " mm" + (path.path_excess_mm ? ` (${quantity(path.path_excess_mm / 0.299792458)} ps)` : "")],
+      ["path beyond the direct one", quantity(path.path_excess_mm) + " mm" + (path.path_excess_mm ? ` (${quantity(path.path_excess_mm / 0.299792458)} ps)` : "")],
       ["polarization", `degree ${quantity(path.dop)}`],
       ["fringes", path.fringe_modulation === null || path.fringe_modulation === undefined ? "none" : `modulation ${relativeWords(path.fringe_modulation)}, if the light is coherent`]
     ]);
@@ -239,7 +239,7 @@ function drawGhostDetail(parent) {
 
 /** The rays of the chosen ghost in the drawing of the train. */
 function drawGhostRays() {
-  const view = d3.select("#drawing .view");
+  const view = d3.select("#drawing .light");
   const update = () => {
     const pictures = state.ghost === null ? null : data.pictures.ghosts[state.ghost - 1];
     view.selectAll(".chosen-ghost").remove();
@@ -256,7 +256,7 @@ const ghostColumns = [
   {key: "bounces", heading: "bounces", text: true, value: (d) => d.path.bounces.join(), words: (d) => bounceWords(d.path), first: 1},
   {key: "relative_power", heading: "relative power", value: (d) => d.path.relative_power, words: (d) => relativeWords(d.path.relative_power), first: -1},
   {key: "rms_radius_mm", heading: "rms radius, mm", value: (d) => d.path.rms_radius_mm, words: (d) => quantity(d.path.rms_radius_mm), first: 1},
-  {key: "path_excess_mm", heading: "longer by, mm", value: (d) => d.path.path_excess_mm, words: (d) => quantity(d.path.path_excess_mm), first: -1},
+  {key: "path_excess_mm", heading: "path excess, mm", value: (d) => d.path.path_excess_mm, words: (d) => quantity(d.path.path_excess_mm), first: -1},
   {key: "peak_ratio", heading: "peak ratio", value: (d) => d.path.peak_ratio, words: (d) => relativeWords(d.path.peak_ratio), first: -1},
   {key: "dop", heading: "DoP", value: (d) => d.path.dop, words: (d) => quantity(d.path.dop), first: -1}
 ];
@@ -295,7 +295,7 @@ function drawGhostTable(parent) {
       (column.value(one) === null || column.value(other) === null ? 1 : sort.direction) * compare(column.value(one), column.value(other)) || one.number - other.number);
     ghostOrder = rows.map((d) => d.number);
     const shown = rows.slice(0, most);
-    count.text(`${rows.length} of ${counted(all.length, "ghost")}` + (rows.length > most ? `, the first ${most} shown` : ""));
+    count.text(`${rows.length} of ${counted(all.length, "ghost")}` + (data.pictures.left_out ? `; ${data.pictures.left_out} fainter ones are left to the command` : "") + (rows.length > most ? `, the first ${most} shown` : ""));
     headings.attr("aria-sort", (d) => d.key === sort.key ? (sort.direction > 0 ? "ascending" : "descending") : null);
     const lines = body.selectAll("tr").data(shown, (d) => d.number);
     lines.exit().remove();

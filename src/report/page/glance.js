@@ -47,7 +47,7 @@ function glanceLight(parent) {
     : "Nothing is lost.";
   const item = glanceItem(parent, "Delivered", "", "", words);
   item.select(".large").append("span").attr("data-quantity", "budget.delivered")
-    .attr("title", fullPrecision(budget.delivered)).text(fraction(budget.delivered));
+    .attr("title", fullPrecision(budget.delivered)).text(budget.delivered < 0.01 ? quantity(budget.delivered) : fraction(budget.delivered));
   if (budget.uncertainty !== null)
     item.select(".large").append("span").text(" ± " + errorSize(budget.uncertainty));
 }

@@ -11,6 +11,9 @@ function matters(row, kind) {
   return row[kind.key] !== null && Math.abs(row[kind.key]) > kind.negligible;
 }
 
+/** Below this degree of polarization an ellipse would be a dot. */
+const leastPolarized = 0.05;
+
 /** The station to which most of the main figure belongs. */
 function worstOffender() {
   const kind = attributionKinds.find((entry) => polarization.attribution.some((row) => matters(row, entry)));
@@ -173,10 +176,13 @@ function drawPolarization() {
   parent.append("p").text(worst ? `Of the stations, ${worst.name} changes ${worst.kind.heading.replace(", deg", "")} most.` : "No station changes the state of polarization.");
   tellPolarization(parent);
   const states = chiefStates();
-  if (states.length) drawEllipses(parent, states);
+  const polarized = states.some((state_) => state_.dop > leastPolarized);
+  if (polarized) drawEllipses(parent, states);
+  else if (states.length) parent.append("p").attr("id", "unpolarized").text("The light is unpolarized and stays so but for " +
+    `${perCent(d3.max(states, (d) => d.dop))}, so there is no ellipse to draw; the table has the states.`);
   else parent.append("p").text("There is no chief ray whose state could be followed: it misses a surface, or is totally reflected at a lens.");
   const pair = parent.append("div").attr("class", "side-by-side");
-  if (states.length) drawSphere(pair.append("div"), states);
+  if (polarized) drawSphere(pair.append("div"), states);
   drawAttribution(pair);
   if (states.length) foldedTable(parent, "The chief ray's state as a table", [
     {heading: "no.", cell: (d) => d.number === null ? "" : d.number}, {heading: "behind", text: true, cell: (d) => d.words},

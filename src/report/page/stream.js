@@ -24,7 +24,7 @@ function drawLossKey() {
   items.append("span").text((d) => d);
 }
 
-const streamSize = {left: 34, right: 120, top: 118, drop: 34, turn: 5, between: 3, leastStep: 36};
+const streamSize = {left: 34, right: 120, top: 132, drop: 34, turn: 5, between: 3, leastStep: 36};
 
 /** Widths that fit: px of stream for all power, and px between stations. */
 function streamScale(rows) {
@@ -99,7 +99,7 @@ function drawStreamStations(svg, rows, size, shapes, bottom) {
   const labels = groups.append("text")
     .attr("transform", (d) => `translate(${shapes.x(d.number - 1) + 4} ${streamSize.top - 12}) rotate(-48)`);
   labels.append("tspan").attr("font-weight", 600).text((d) => d.number);
-  labels.append("tspan").attr("dx", 4).text((d) => d.row.name.length > 21 ? d.row.name.slice(0, 19) + "…" : d.row.name);
+  labels.append("tspan").attr("dx", 4).text((d) => d.row.name.length > 23 ? d.row.name.slice(0, 21) + "…" : d.row.name);
   pointsAt(groups, "station", (d) => d.number);
   return groups;
 }

@@ -143,6 +143,18 @@ TEST(Drawing, FollowsTheRaysOfAGhost) {
   EXPECT_NEAR(ray.points[4][2], 4.0, 1e-9);
 }
 
+TEST(Drawing, FollowsAGhostThatBouncesOffTheDetector) {
+  const std::string shiny = "  - {name: sensor, does: detect, clear: {diameter: 20}, reflectance: 0.05}\n";
+  const DrawnView view =
+      view_of(assembly_of(lens + shiny), {.views = {}, .ghost = Bounces{"sensor", "rear"}});
+  ASSERT_FALSE(view.ghost_rays.empty());
+  const DrawnRay& ray = view.ghost_rays[view.ghost_rays.size() / 2];
+  EXPECT_EQ(ray.end, RayEnd::arrived);
+  ASSERT_EQ(ray.points.size(), 6U);
+  EXPECT_NEAR(ray.points[3][2], 34.0, 1e-9);
+  EXPECT_NEAR(ray.points[4][2], 4.0, 1e-9);
+}
+
 TEST(Drawing, RefusesAGhostThatIsNone) {
   const DrawingResult result =
       drawing(assembly_of(lens + sensor), {.views = {}, .ghost = Bounces{"front", "rear"}});
@@ -181,7 +193,7 @@ TEST(Drawing, FollowsAGhostThroughAPlate) {
 TEST(PathPictures, ShowTheImageThenTheGhosts) {
   const auto pictures = path_pictures(assembly_of(lens + sensor), View::x, {{"rear", "front"}});
   ASSERT_EQ(pictures.size(), 2U);
-  EXPECT_EQ(pictures[0].spot.size(), 48U);
+  EXPECT_EQ(pictures[0].spot.size(), 36U);
   EXPECT_FALSE(pictures[1].rays.empty());
 }
 

@@ -61,6 +61,13 @@ TEST(DrawingSvg, NamesTheFields) {
   EXPECT_THAT(svg_of("tide-pool-camera"), HasSubstr(">field corner</text>"));
 }
 
+TEST(DrawingSvg, NamesWhatLiesBeyondALongEmptyWay) {
+  const std::string svg = svg_of("fog-bank-transceiver");
+  EXPECT_THAT(svg, HasSubstr("clip-path=\"url(#frame)\""));
+  EXPECT_THAT(svg, testing::ContainsRegex("fog, [0-9.]+ mm on"));
+  EXPECT_THAT(svg_of("fog-bank-lidar"), Not(HasSubstr("clip-path")));
+}
+
 TEST(DrawingSvg, HoldsNoNumberThatIsNone) {
   for (const char* name : {"fog-bank-lidar", "harbour-monitor", "relay-terminal", "tide-pool-camera"}) {
     const std::string svg = svg_of(name, {View::x, View::y, View::z});
