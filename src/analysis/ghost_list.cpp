@@ -63,6 +63,7 @@ Ghost ghost(const Assembly& assembly, const PathTree& tree, const TracedTree& tr
 std::vector<trace::StationId> stations(const PathTree& tree, PathTree::PathNumber number) {
   const PathTree::Way way = tree.way(number);
   std::vector<trace::StationId> stations;
+  stations.reserve(way.bounces.size());
   for (const std::size_t step : way.bounces)
     stations.push_back(way.states[step].visit);
   return stations;
@@ -72,6 +73,7 @@ std::vector<trace::StationId> stations(const PathTree& tree, PathTree::PathNumbe
 
 std::vector<PathTree::PathNumber> brightest(const PathTree& tree, const PathTable& paths) {
   std::vector<const PathTable::Row*> rows;
+  rows.reserve(paths.rows().size());
   for (const PathTable::Row& row : paths.rows())
     rows.push_back(&row);
   std::ranges::sort(rows, [&](const PathTable::Row* a, const PathTable::Row* b) {
@@ -80,6 +82,7 @@ std::vector<PathTree::PathNumber> brightest(const PathTree& tree, const PathTabl
     return stations(tree, a->number) < stations(tree, b->number);
   });
   std::vector<PathTree::PathNumber> numbers;
+  numbers.reserve(rows.size());
   for (const PathTable::Row* row : rows)
     numbers.push_back(row->number);
   return numbers;

@@ -36,6 +36,7 @@ std::optional<Figure> figure(const Budget& budget, const Ghosts* ghosts, std::st
 std::string nearest_quantity(const Budget& budget, const std::vector<PolarizationFigure>& polarization,
                              std::string_view quantity) {
   std::vector<std::string> names;
+  names.reserve(polarization.size());
   for (const PolarizationFigure& figure : polarization)
     names.push_back(fmt::format("{}{}", polarization_prefix, figure.path));
   for (const std::string& path : budget_paths(budget))

@@ -29,7 +29,8 @@ PathTree::PathTree(const Assembly& assembly, const Routes& routes, int bounces) 
 }
 
 PathTree::JunctionId PathTree::add(State state) {
-  const auto [known, added] = m_known.try_emplace(state, static_cast<JunctionId>(m_junctions.size()));
+  const auto [known, added] = m_known.try_emplace({state.visit, state.heading, state.face},
+                                                  static_cast<JunctionId>(m_junctions.size()));
   if (added)
     m_junctions.emplace_back().state = state;
   return known->second;

@@ -6,6 +6,7 @@
 #include <cstdint>
 #include <map>
 #include <string>
+#include <tuple>
 #include <vector>
 
 namespace lightledger::trace {
@@ -13,10 +14,11 @@ namespace lightledger::trace {
 /// All ways through a train with at most so many bounces, as a graph of meetings and a numbering of its
 /// paths.
 ///
-/// A bounce is a reflection where the light should pass (contract §5, ghosts): at a refracting station, within
-/// a plate, or at a detector that reflects. The paths that end at the detector or leave through the first
-/// station are numbered in the order in which a walk finds them that explores, at each meeting, first the beam
-/// on the side and then the one that goes on as intended; so the paths of a branch have consecutive numbers.
+/// A bounce is a reflection where the light should pass (contract §5, ghosts): at a refracting station,
+/// within a plate, or at a detector that reflects. The paths that end at the detector or leave through the
+/// first station are numbered in the order in which a walk finds them that explores, at each meeting, first
+/// the beam on the side and then the one that goes on as intended; so the paths of a branch have consecutive
+/// numbers.
 class PathTree {
 public:
   using JunctionId = std::uint32_t;
@@ -86,7 +88,7 @@ private:
   }
 
   int m_bounces;
-  std::map<State, JunctionId> m_known;
+  std::map<std::tuple<StationId, Heading, Face>, JunctionId> m_known;
   std::vector<Junction> m_junctions;
   Exit m_start;
   std::vector<Counts> m_counts; ///< per junction, by bounces left

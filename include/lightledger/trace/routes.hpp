@@ -2,7 +2,6 @@
 
 #include <lightledger/assembly/assembly.hpp>
 
-#include <compare>
 #include <cstdint>
 #include <string>
 #include <utility>
@@ -28,7 +27,7 @@ struct State {
   Heading heading;
   Face face = Face::front;
 
-  friend auto operator<=>(const State&, const State&) = default;
+  friend bool operator==(const State&, const State&) = default;
 };
 
 /// Where light ends that meets no further surface of the train.

@@ -96,7 +96,7 @@ struct SamplingOptions {
   /// Chunks get no fewer rays than this where there are several; 0: sixteen chunks always.
   std::uint64_t rays_per_chunk = 0;
   std::optional<assembly::Sampling> instead{}; ///< of the light's own sampling
-  Progress* progress = nullptr; ///< told of every chunk
+  Progress* progress = nullptr;                ///< told of every chunk
 };
 
 /// Puts a survey to the light's own samples of rays. They are cut into a list of chunks that does not depend
