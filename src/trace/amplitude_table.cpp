@@ -11,7 +11,8 @@ namespace lightledger::trace {
 namespace {
 
 constexpr int nodes = AmplitudeTable::highest_degree + 1;
-constexpr double below_rounding = 1e-15;
+/// What the highest terms may add together and still be left out: the noise of a few nodes.
+constexpr double below_rounding = 8e-15;
 constexpr double verified = 1e-13;
 /// Cosine beyond the critical angle's below which amplitudes bend too sharply.
 constexpr double beside_critical = 0.03;

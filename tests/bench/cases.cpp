@@ -12,7 +12,9 @@
 namespace lightledger::bench {
 namespace {
 
-constexpr const char* coatings = R"(coatings:
+constexpr const char* materials = R"(media:
+  glass: {index: 1.52}
+coatings:
   layers1: {layers: [{medium: MgF2-film, waves: 0.25, at: 532}]}
   layers4: {layers: [{medium: MgF2-film, waves: 0.25, at: 532}, {medium: Ta2O5, waves: 0.5, at: 532},
                      {medium: SiO2, waves: 0.3, at: 532}, {medium: MgF2-film, waves: 0.25, at: 532}]}
@@ -26,7 +28,7 @@ std::string surface(const std::string& kind, int number) {
         "  - {{name: s{}, does: reflect, backing: Al, tilt: [0, 3, 0], clear: {{diameter: 90}}, gap: 3}}\n",
         number);
   const bool front = number % 2 == 0;
-  std::string form = fmt::format("radius: {}", front ? 90 : -120);
+  std::string form = fmt::format("radius: {}", front ? 500 : -700);
   if (kind == "plane")
     form = "shift: [0, 0]";
   if (kind == "conic")
@@ -38,14 +40,14 @@ std::string surface(const std::string& kind, int number) {
   if (kind.starts_with("layers"))
     form += ", coating: " + kind;
   return fmt::format("  - {{name: s{}, {}, into: {}, clear: {{diameter: 40}}, gap: 3}}\n", number, form,
-                     front ? "crown-517642" : "air");
+                     front ? "glass" : "air");
 }
 
 std::string file(const std::string& kind, int surfaces, int wavelengths) {
   std::string text =
       fmt::format("light:\n  wavelengths: {{from: 532, to: {}, count: {}}}\n  beam: {{radius: 5}}\n"
                   "  fields: [[0.3, 0.2]]\n  rays: {{pattern: scattered, count: 65536}}\n{}train:\n",
-                  532 + 10 * (wavelengths - 1), wavelengths, coatings);
+                  532 + 10 * (wavelengths - 1), wavelengths, materials);
   for (int number = 0; number < surfaces; ++number)
     text += surface(kind, number);
   return text + "  - {name: detector, does: detect, clear: {diameter: 90}}\n";

@@ -131,109 +131,153 @@ HWY_INLINE void put(double (&to)[3][RayBlock::lanes], int i, const V (&from)[3])
     store(to[axis] + i, from[axis]);
 }
 
-enum class Transverse { interface, element, none };
-
-template <class Shape, Transverse Kind>
-HWY_INLINE void depart(const PlanOp& op, const Ray& ray, const Hit& hit, int i, const Departing& out,
-                       Meeting& m) {
-  Basis basis;
-  if constexpr (Kind == Transverse::interface)
-    basis = senkrecht(ray, hit);
-  else if constexpr (Kind == Transverse::element)
-    basis = projected_axis(op, ray);
-  else
-    basis = kept(ray, hit);
-  store(m.turn_cos + i, basis.turn_cos);
-  store(m.turn_sin + i, basis.turn_sin);
-  store(m.sin_squared + i, basis.sin_squared);
-  store(m.cos1 + i, hit.cosine);
-  store(m.path + i, hit.path);
-
-  V passed[3] = {ray.d[0], ray.d[1], ray.d[2]};
-  if constexpr (Kind == Transverse::interface) {
-    // n2² cos²θ2 = n2² − n1² sin²θ1, without cancellation at grazing incidence.
-    const V n1_cos1 = set(op.n1) * hit.cosine;
-    const V square = fma(n1_cos1, n1_cos1, set((op.n2 - op.n1) * (op.n2 + op.n1)));
-    const V normal_part = quick_root(max(abs(square), set(tiny)));
-    store(m.normal_part + i, normal_part);
-    m.crosses |= (op.swallows ? 0 : bits(set(0.0) < square)) << i;
-    // k' = μ k + (cosθ2 − μ cosθ1) N, accurate at normal incidence.
-    const V mu = set(op.n1 / op.n2);
-    const V along = (normal_part - n1_cos1) * set(1.0 / op.n2);
-    for (int axis = 0; axis < 3; ++axis)
-      passed[axis] = fma(mu, ray.d[axis], along * hit.normal[axis]);
-  } else {
-    m.crosses |= bits(hit.found) << i;
-  }
-  if constexpr (Kind == Transverse::element)
-    turn_basis(op, ray, basis.s);
-
-  if (out.pass != nullptr) {
-    put(out.pass->p, i, hit.p);
-    put(out.pass->u, i, basis.s);
-    put(out.pass->d, i, passed);
-  }
-  if (out.bounce != nullptr) {
-    const V back = set(-2.0) * hit.cosine;
-    const V bounced[3] = {fma(back, hit.normal[0], ray.d[0]), fma(back, hit.normal[1], ray.d[1]),
-                          fma(back, hit.normal[2], ray.d[2])};
-    put(out.bounce->p, i, hit.p);
-    put(out.bounce->u, i, basis.s);
-    put(out.bounce->d, i, bounced);
-  }
-}
-
-template <LegKind Leg, class Shape, Transverse Kind>
-void arrive_at(const PlanLeg& leg, const PlanOp& op, const RayBlock& in, const Departing& out, Meeting& m) {
+/// Onto the surface: a short pass, so that many vectors are in flight at once.
+template <LegKind Leg, class Shape>
+void meet_surface(const PlanLeg& leg_seen, const PlanOp& op_seen, const RayBlock& in, const Departing& out,
+                  Meeting& m) {
+  // Copies, which no store to a block can reach: what is the same for all rays leaves the loop.
+  const PlanLeg leg = leg_seen;
+  const PlanOp op = op_seen;
   const Shape shape(op);
-  for (int i = 0; i < m.count; i += width) {
-    const M alive = mask(in.alive >> i);
+  const std::uint64_t all_alive = in.alive;
+  const int count = m.count;
+  std::uint64_t all_found = 0;
+  std::uint64_t all_inside = 0;
+  for (int i = 0; i < count; i += width) {
+    const M alive = mask(all_alive >> i);
     if (!any(alive))
       continue;
     const Ray ray = transfer<Leg>(leg, in, i);
-    Hit hit = shape.meet(ray, alive);
-    hit.found = both(hit.found, alive);
-    m.hit |= bits(hit.found) << i;
-    m.inside |= bits(both(hit.found, open_at(op, hit.p[0], hit.p[1]))) << i;
+    const Hit hit = shape.meet(ray, alive);
+    const M found = both(hit.found, alive);
+    all_found |= bits(found) << i;
+    all_inside |= bits(both(found, open_at(op, hit.p[0], hit.p[1]))) << i;
+    put(m.normal, i, hit.normal);
+    store(m.cos1 + i, hit.cosine);
+    store(m.path + i, hit.path);
+    if constexpr (Leg == LegKind::rigid) {
+      put(m.d, i, ray.d);
+      put(m.u, i, ray.u);
+    }
+    if (out.pass != nullptr)
+      put(out.pass->p, i, hit.p);
+    if (out.bounce != nullptr)
+      put(out.bounce->p, i, hit.p);
     if (out.hit != nullptr)
-      for (int axis = 0; axis < 3; ++axis)
-        store((*out.hit)[axis] + i, hit.p[axis]);
-    depart<Shape, Kind>(op, ray, hit, i, out, m);
+      put(*out.hit, i, hit.p);
   }
+  m.hit = all_found;
+  m.inside = all_inside;
 }
 
-template <class Shape, Transverse Kind>
-HWY_INLINE void arrive_by(const PlanLeg& leg, const PlanOp& op, const RayBlock& in, const Departing& out,
-                          Meeting& m) {
-  if (leg.kind == LegKind::along_z)
-    arrive_at<LegKind::along_z, Shape, Kind>(leg, op, in, out, m);
-  else
-    arrive_at<LegKind::rigid, Shape, Kind>(leg, op, in, out, m);
+enum class Transverse { interface, element, none };
+
+/// Where the arriving direction and basis stand: in the block that came in, if the leg did not turn them.
+struct Arriving {
+  const double (&d)[3][RayBlock::lanes];
+  const double (&u)[3][RayBlock::lanes];
+};
+
+HWY_INLINE void take(const double (&from)[3][RayBlock::lanes], int i, V (&to)[3]) {
+  for (int axis = 0; axis < 3; ++axis)
+    to[axis] = load(from[axis] + i);
 }
 
 template <Transverse Kind>
-HWY_INLINE void arrive_on(const PlanLeg& leg, const PlanOp& op, const RayBlock& in, const Departing& out,
-                          Meeting& m) {
+HWY_INLINE Basis basis_of(const PlanOp& op, const Ray& ray, const Hit& hit) {
+  if constexpr (Kind == Transverse::interface)
+    return senkrecht(ray, hit);
+  else if constexpr (Kind == Transverse::element)
+    return projected_axis(op, ray);
+  else
+    return kept(ray, hit);
+}
+
+/// k' = μ k + (cosθ2 − μ cosθ1) N, accurate at normal incidence; cosθ2 from n2² cos²θ2 = n2² − n1² sin²θ1,
+/// without cancellation at grazing incidence.
+HWY_INLINE M refract(const PlanOp& op, const Ray& ray, const Hit& hit, int i, Meeting& m, V (&passed)[3]) {
+  const V n1_cos1 = set(op.n1) * hit.cosine;
+  const V square = fma(n1_cos1, n1_cos1, set((op.n2 - op.n1) * (op.n2 + op.n1)));
+  const V normal_part = quick_root(max(abs(square), set(tiny)));
+  store(m.normal_part + i, normal_part);
+  const V mu = set(op.n1 / op.n2);
+  const V along = (normal_part - n1_cos1) * set(1.0 / op.n2);
+  for (int axis = 0; axis < 3; ++axis)
+    passed[axis] = fma(mu, ray.d[axis], along * hit.normal[axis]);
+  return set(0.0) < square;
+}
+
+/// Basis and directions of the beams that leave.
+template <Transverse Kind>
+void depart(const PlanOp& op_seen, const Arriving& arriving, const Departing& out, Meeting& m) {
+  const PlanOp op = op_seen;
+  const int count = m.count;
+  std::uint64_t crosses = 0;
+  for (int i = 0; i < count; i += width) {
+    if (!any(mask(m.alive >> i)))
+      continue;
+    Ray ray;
+    Hit hit;
+    take(arriving.d, i, ray.d);
+    take(arriving.u, i, ray.u);
+    take(m.normal, i, hit.normal);
+    hit.cosine = load(m.cos1 + i);
+    Basis basis = basis_of<Kind>(op, ray, hit);
+    store(m.turn_cos + i, basis.turn_cos);
+    store(m.turn_sin + i, basis.turn_sin);
+    store(m.sin_squared + i, basis.sin_squared);
+    V passed[3] = {ray.d[0], ray.d[1], ray.d[2]};
+    if constexpr (Kind == Transverse::interface)
+      crosses |= bits(refract(op, ray, hit, i, m, passed)) << i;
+    if constexpr (Kind == Transverse::element)
+      turn_basis(op, ray, basis.s);
+    const V back = set(-2.0) * hit.cosine;
+    const V bounced[3] = {fma(back, hit.normal[0], ray.d[0]), fma(back, hit.normal[1], ray.d[1]),
+                          fma(back, hit.normal[2], ray.d[2])};
+    if (out.pass != nullptr) {
+      put(out.pass->u, i, basis.s);
+      put(out.pass->d, i, passed);
+    }
+    if (out.bounce != nullptr) {
+      put(out.bounce->u, i, basis.s);
+      put(out.bounce->d, i, bounced);
+    }
+  }
+  if constexpr (Kind == Transverse::interface)
+    m.crosses = op.swallows ? 0 : crosses;
+  else
+    m.crosses = m.hit;
+}
+
+template <LegKind Leg>
+HWY_INLINE void meet_any(const PlanLeg& leg, const PlanOp& op, const RayBlock& in, const Departing& out,
+                         Meeting& m) {
   switch (op.shape) {
   case ShapeKind::plane:
-    return arrive_by<PlaneShape, Kind>(leg, op, in, out, m);
+    return meet_surface<Leg, PlaneShape>(leg, op, in, out, m);
   case ShapeKind::sphere:
-    return arrive_by<SphereShape, Kind>(leg, op, in, out, m);
+    return meet_surface<Leg, SphereShape>(leg, op, in, out, m);
   case ShapeKind::conic:
-    return arrive_by<ConicShape, Kind>(leg, op, in, out, m);
+    return meet_surface<Leg, ConicShape>(leg, op, in, out, m);
   case ShapeKind::asphere:
-    return arrive_by<AsphereShape, Kind>(leg, op, in, out, m);
+    return meet_surface<Leg, AsphereShape>(leg, op, in, out, m);
   }
 }
 
 void arrive(const PlanLeg& leg, const PlanOp& op, const RayBlock& in, const Departing& out, Meeting& m) {
+  const bool along_z = leg.kind == LegKind::along_z;
+  if (along_z)
+    meet_any<LegKind::along_z>(leg, op, in, out, m);
+  else
+    meet_any<LegKind::rigid>(leg, op, in, out, m);
+  const Arriving arriving = along_z ? Arriving{in.d, in.u} : Arriving{m.d, m.u};
   switch (op.amplitude) {
   case AmplitudeKind::none:
-    return arrive_on<Transverse::none>(leg, op, in, out, m);
+    return depart<Transverse::none>(op, arriving, out, m);
   case AmplitudeKind::element:
-    return arrive_by<PlaneShape, Transverse::element>(leg, op, in, out, m);
+    return depart<Transverse::element>(op, arriving, out, m);
   default:
-    return arrive_on<Transverse::interface>(leg, op, in, out, m);
+    return depart<Transverse::interface>(op, arriving, out, m);
   }
 }
 

@@ -30,7 +30,7 @@ public:
 
   HWY_INLINE Hit meet(const Ray& ray, M alive) const {
     const Nearest nearest = nearest_to_vertex(ray);
-    const Places at = places<false>(m_op.curvature, m_op.conic, nearest, ray.d[2]);
+    const Places at = places<false>(m_op.curvature, m_op.conic, 0.0, nearest, ray.d[2]);
     const V to_plane = neg(nearest.o[2] * reciprocal(ray.d[2]));
     const M second = takes_second(at);
     const M two = both(at.before_equator[0], at.before_equator[1]);

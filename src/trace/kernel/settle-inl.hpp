@@ -237,7 +237,8 @@ HWY_INLINE void settle_vector(const Settling& all, int i, Sums& sums) {
                                                i, all.out.bounce);
   const Shares share = shares<Out, Kind>(m, i);
   sums.arrive(alive, mask(m.hit >> i), inside, arriving);
-  sums.absorb(inside, fma(power_s, share.absorbed_s, power_p * share.absorbed_p));
+  if (m.lossy)
+    sums.absorb(inside, fma(power_s, share.absorbed_s, power_p * share.absorbed_p));
   const bool bounces = Out == Beams::bounce || (Out == Beams::both && all.bounces);
   const V intended_s = bounces ? share.reflected_s : share.crossed_s;
   const V intended_p = bounces ? share.reflected_p : share.crossed_p;

@@ -80,7 +80,7 @@ struct Places {
 };
 
 template <bool Spherical>
-HWY_INLINE Places places(double curvature, double conic, const Nearest& nearest, V dz) {
+HWY_INLINE Places places(double curvature, double conic, double radius, const Nearest& nearest, V dz) {
   const V c = set(curvature);
   const V oz = nearest.o[2];
   const V oo = dot(nearest.o, nearest.o);
@@ -99,7 +99,7 @@ HWY_INLINE Places places(double curvature, double conic, const Nearest& nearest,
   Places found;
   found.t[0] = rest * reciprocal(q);
   if constexpr (Spherical)
-    found.t[1] = q * set(1.0 / curvature);
+    found.t[1] = q * set(radius);
   else
     found.t[1] = q * reciprocal(a);
   found.along = half;
@@ -122,11 +122,13 @@ HWY_INLINE M takes_second(const Places& at) {
 template <bool Spherical>
 class QuadricShape {
 public:
-  explicit QuadricShape(const PlanOp& op) : m_curvature(op.curvature), m_conic(Spherical ? 0.0 : op.conic) {}
+  explicit QuadricShape(const PlanOp& op)
+      : m_curvature(op.curvature), m_conic(Spherical ? 0.0 : op.conic),
+        m_radius(Spherical ? 1.0 / op.curvature : 0.0) {}
 
   HWY_INLINE Hit meet(const Ray& ray, M) const {
     const Nearest nearest = nearest_to_vertex(ray);
-    const Places at = places<Spherical>(m_curvature, m_conic, nearest, ray.d[2]);
+    const Places at = places<Spherical>(m_curvature, m_conic, m_radius, nearest, ray.d[2]);
     const M second = takes_second(at);
     Hit hit;
     hit.found = both(at.real, either(at.before_equator[0], at.before_equator[1]));
@@ -153,7 +155,7 @@ public:
   }
 
 private:
-  double m_curvature, m_conic;
+  double m_curvature, m_conic, m_radius;
 };
 
 using SphereShape = QuadricShape<true>;

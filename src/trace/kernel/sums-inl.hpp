@@ -28,47 +28,47 @@ public:
   }
 
   HWY_INLINE void arrive(M alive, M hit, M inside, V power) {
-    m_incident = m_incident + keep(alive, power);
+    m_incident = add_where(alive, m_incident, power);
     if (all(inside))
       return;
-    m_missed = m_missed + keep(first_only(alive, hit), power);
-    m_clipped = m_clipped + keep(first_only(hit, inside), power);
+    m_missed = add_where(first_only(alive, hit), m_missed, power);
+    m_clipped = add_where(first_only(hit, inside), m_clipped, power);
   }
 
-  HWY_INLINE void absorb(M inside, V power) { m_absorbed = m_absorbed + keep(inside, power); }
+  HWY_INLINE void absorb(M inside, V power) { m_absorbed = add_where(inside, m_absorbed, power); }
 
   HWY_INLINE void divide(M inside, V arriving, V intended_s, V intended_p, V aside) {
     const V in = keep(inside, arriving);
     m_inside = m_inside + in;
-    m_pass_s = m_pass_s + keep(inside, arriving * intended_s);
-    m_pass_p = m_pass_p + keep(inside, arriving * intended_p);
-    m_aside = m_aside + keep(inside, aside);
+    m_pass_s = add_where(inside, m_pass_s, arriving * intended_s);
+    m_pass_p = add_where(inside, m_pass_p, arriving * intended_p);
+    m_aside = add_where(inside, m_aside, aside);
   }
 
   template <bool Attenuated, class Sent>
   HWY_INLINE void send(M inside, const Sent& onward) {
-    m_onward = m_onward + keep(inside, onward.onward);
+    m_onward = add_where(inside, m_onward, onward.onward);
     if constexpr (Attenuated) {
-      m_scattered = m_scattered + keep(inside, onward.scattered);
-      m_extra = m_extra + keep(inside, onward.extra);
+      m_scattered = add_where(inside, m_scattered, onward.scattered);
+      m_extra = add_where(inside, m_extra, onward.extra);
     }
   }
 
   template <class Sent>
   HWY_INLINE void turn(M exists, const Sent& turned) {
-    m_turned = m_turned + keep(exists, turned.onward);
-    m_turned_scattered = m_turned_scattered + keep(exists, turned.scattered);
-    m_turned_extra = m_turned_extra + keep(exists, turned.extra);
+    m_turned = add_where(exists, m_turned, turned.onward);
+    m_turned_scattered = add_where(exists, m_turned_scattered, turned.scattered);
+    m_turned_extra = add_where(exists, m_turned_extra, turned.extra);
   }
 
   HWY_INLINE void lean(M inside, V arriving, V incidence) {
-    m_incidence = m_incidence + keep(inside, arriving * incidence);
+    m_incidence = add_where(inside, m_incidence, arriving * incidence);
     m_least = min(m_least, select(inside, incidence, m_least));
     m_most = max(m_most, select(inside, incidence, m_most));
   }
 
   HWY_INLINE void extrapolate(M inside, V arriving) {
-    m_extrapolated = m_extrapolated + keep(inside, arriving);
+    m_extrapolated = add_where(inside, m_extrapolated, arriving);
   }
 
   HWY_INLINE void collect(Entry& entry) const {

@@ -104,6 +104,9 @@ HWY_INLINE V select(M m, V yes, V no) {
 HWY_INLINE V keep(M m, V a) {
   return {m.x ? a.x : 0.0};
 }
+HWY_INLINE V add_where(M m, V sum, V a) {
+  return {m.x ? sum.x + a.x : sum.x};
+}
 HWY_INLINE bool any(M m) {
   return m.x;
 }
@@ -233,6 +236,9 @@ HWY_INLINE bool all(M m) {
   return hn::AllTrue(Doubles(), m);
 }
 #if HWY_TARGET == HWY_AVX3
+HWY_INLINE V add_where(M m, V sum, V a) {
+  return V{_mm512_mask_add_pd(sum.raw, m.raw, sum.raw, a.raw)};
+}
 HWY_INLINE std::uint64_t bits(M m) {
   return m.raw;
 }
@@ -240,6 +246,9 @@ HWY_INLINE M mask(std::uint64_t word) {
   return {static_cast<__mmask8>(word)};
 }
 #else
+HWY_INLINE V add_where(M m, V sum, V a) {
+  return sum + keep(m, a);
+}
 HWY_INLINE std::uint64_t bits(M m) {
   std::uint8_t bytes[8] = {};
   hn::StoreMaskBits(Doubles(), m, bytes);
