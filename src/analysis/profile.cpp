@@ -20,6 +20,8 @@ template <class... Kinds>
 struct Overloaded : Kinds... {
   using Kinds::operator()...;
 };
+template <class... Kinds>
+Overloaded(Kinds...) -> Overloaded<Kinds...>;
 
 std::optional<double> conic_sag(double radius, double conic, double r) {
   const double curvature = 1.0 / radius;

@@ -72,6 +72,8 @@ std::vector<report::PageMap> maps_of(const Input& input, const analysis::Polariz
     std::string words = file.name.substr(0, file.name.size() - 4);
     std::ranges::replace(words, '-', ' ');
     std::ranges::replace(words, '_', ' ');
+    if (words.ends_with(" deg"))
+      words.insert(words.size() - 4, ",");
     maps.push_back({std::move(file.bytes), std::move(words)});
   }
   return maps;

@@ -187,11 +187,12 @@ private:
       const Vector2d step = points[i] - points[i - 1];
       if (!(step.norm() < longest))
         return;
-      for (; next <= step.norm(); next += spacing) {
-        const Vector2d foot = points[i - 1] + next * step.normalized();
+      const int count = std::max(0, static_cast<int>(std::floor((step.norm() - next) / spacing)) + 1);
+      for (int stroke = 0; stroke < count; ++stroke) {
+        const Vector2d foot = points[i - 1] + (next + stroke * spacing) * step.normalized();
         strokes += path_of({foot, foot + length * (behind + 0.7 * step.normalized())});
       }
-      next -= step.norm();
+      next += count * spacing - step.norm();
     }
     if (!strokes.empty())
       m_xml.leaf("path", {{"class", "hatch"}, {"d", strokes}});
@@ -220,8 +221,9 @@ private:
     const Box above = m_extent.box;
     const int rows = (static_cast<int>(m_view.stations.size()) + columns - 1) / columns;
     for (std::size_t i = 0; i < m_view.stations.size(); ++i) {
-      const Vector2d foot(above.low[0] + column_width * (static_cast<int>(i) / rows),
-                          above.high[1] + line_height * (2 + static_cast<int>(i) % rows));
+      const int column = static_cast<int>(i) / rows;
+      const int row = static_cast<int>(i) % rows;
+      const Vector2d foot(above.low[0] + column_width * column, above.high[1] + line_height * (2 + row));
       m_extent.add(Box{foot - Vector2d(0.0, text_height), foot + Vector2d(column_width, 4.0)});
       m_xml.open("text", {{"x", coordinate(foot[0])}, {"y", coordinate(foot[1])}});
       m_xml.words("tspan", {{"class", "number"}}, std::to_string(i + 1));

@@ -67,7 +67,7 @@ std::vector<std::size_t> crowd(std::vector<std::size_t> stations, const std::vec
                                     : std::vector<std::size_t>(middle, stations.end());
 }
 
-Extent grown(Extent extent) {
+Extent grown(const Extent& extent) {
   const Vector2d more = Vector2d::Constant(room * extent.size().maxCoeff());
   return {{extent.box.low - more, extent.box.high + more}};
 }
