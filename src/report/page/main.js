@@ -45,10 +45,11 @@ function wireKeys() {
   });
 }
 
+/** Print has no folds to open, but rows by the hundred serve nobody on paper. */
 function openForPrint() {
   const folded = [];
   window.addEventListener("beforeprint", () => {
-    document.querySelectorAll("details:not([open])").forEach((details) => {
+    document.querySelectorAll("details:not([open]):not(#coatings details)").forEach((details) => {
       details.open = true;
       folded.push(details);
     });
