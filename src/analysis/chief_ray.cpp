@@ -125,10 +125,8 @@ std::optional<ChiefWalk> walk_chief(const Train& train) {
   const Assembly& assembly = *train.assembly;
   const trace::Plan& plan = train.plans.front();
   const auto launch = trace::chief_launch(assembly, train.path, plan, assembly.light.fields.front());
-  if (!launch)
-    return std::nullopt;
   const std::vector<trace::PlanOp> ops = opened(plan);
-  RayBlock block = single_ray(assembly, *launch);
+  RayBlock block = single_ray(assembly, launch);
   return ChiefWalker(train, block, ops).walk();
 }
 

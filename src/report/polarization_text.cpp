@@ -53,8 +53,7 @@ std::string chief_table(const ChiefRay& chief, const TextStyle& style) {
 
 std::string chief_part(const std::optional<ChiefRay>& chief, const TextStyle& style) {
   if (!chief)
-    return wrapped("There is no chief ray: it cannot be aimed, misses a surface, or is totally reflected.",
-                   style.width);
+    return wrapped("There is no chief ray: it misses a surface or is totally reflected.", style.width);
   const std::string heading =
       fmt::format("Chief ray {}: its state behind each station, and what that station alone does. Angles in "
                   "degrees; ellipticity above 0 is right-handed (IEEE).",

@@ -238,15 +238,16 @@ std::optional<std::vector<Footprint>> footprints(const Assembly& assembly, const
   return all.size() == fields.size() ? std::optional(std::move(all)) : std::nullopt;
 }
 
-std::optional<std::array<double, 2>> chief_launch(const Assembly& assembly, const Path& path,
-                                                  const Plan& plan, const Field& field) {
+std::array<double, 2> chief_launch(const Assembly& assembly, const Path& path, const Plan& plan,
+                                   const Field& field) {
   const auto stop = first_stop(assembly);
   if (!stop)
     return assembly.light.beam.at;
   const auto launch = Aimer(assembly, path, plan, *stop).aim_at(field, Vector2d::Zero());
+  // At a stop in an image of the object all rays of a field meet in one point: none of them is nearer.
   if (!launch)
-    return std::nullopt;
-  return std::array{(*launch)[0], (*launch)[1]};
+    return assembly.light.beam.at;
+  return {(*launch)[0], (*launch)[1]};
 }
 
 } // namespace lightledger::trace

@@ -22,9 +22,8 @@ footprints(const assembly::Assembly& assembly, const Path& path, const Plan& pla
 
 /// Where a field's chief ray crosses the launch plane, in mm: the centre of the beam, or, where there is a
 /// stop, the point from which a real ray of the plan's wavelength meets the first stop's vertex to 1e-10 mm,
-/// past all apertures. None where no ray does.
-[[nodiscard]] std::optional<std::array<double, 2>> chief_launch(const assembly::Assembly& assembly,
-                                                                const Path& path, const Plan& plan,
-                                                                const assembly::Field& field);
+/// past all apertures; the centre of the beam too where no ray does.
+[[nodiscard]] std::array<double, 2> chief_launch(const assembly::Assembly& assembly, const Path& path,
+                                                 const Plan& plan, const assembly::Field& field);
 
 } // namespace lightledger::trace
