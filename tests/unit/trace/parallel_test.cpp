@@ -42,12 +42,12 @@ TEST(Parallel, HandsOnWhatAJobThrows) {
 /// Waits a while for another thread, without ordering what the two do.
 void meet_another(std::atomic<int>& arrived) {
   arrived.fetch_add(1, std::memory_order_relaxed);
-  const auto patience = std::chrono::steady_clock::now() + std::chrono::seconds(5);
+  const auto patience = std::chrono::steady_clock::now() + std::chrono::seconds(2);
   while (arrived.load(std::memory_order_relaxed) < 2 && std::chrono::steady_clock::now() < patience)
     continue;
 }
 
-TEST(Parallel, GivesAsManyThreadsAsAskedFor) {
+std::array<std::thread::id, 2> threads_of_two_jobs() {
   std::atomic<int> arrived = 0;
   std::array<std::thread::id, 2> thread;
   with_threads(2, [&] {
@@ -56,7 +56,17 @@ TEST(Parallel, GivesAsManyThreadsAsAskedFor) {
       thread[job] = std::this_thread::get_id();
     });
   });
-  EXPECT_NE(thread[0], thread[1]);
+  return thread;
+}
+
+/// On a busy machine the second thread may come late: some tries.
+TEST(Parallel, GivesAsManyThreadsAsAskedFor) {
+  bool two = false;
+  for (int attempt = 0; attempt < 10 && !two; ++attempt) {
+    const auto thread = threads_of_two_jobs();
+    two = thread[0] != thread[1];
+  }
+  EXPECT_TRUE(two);
 }
 
 #ifdef __SANITIZE_THREAD__
