@@ -3,6 +3,7 @@
 #include <lightledger/trace/parallel.hpp>
 
 #include <tbb/global_control.h>
+#include <tbb/info.h>
 #include <tbb/parallel_for.h>
 #include <tbb/task_arena.h>
 
@@ -29,8 +30,9 @@ void with_threads(int threads, const std::function<void()>& work) {
     from_work.give();
   };
   to_work.give();
-  if (threads <= 0) {
-    tbb::task_arena().execute(handed_over);
+  if (threads <= tbb::info::default_concurrency()) {
+    // An arena alone: a global limit, once lifted, can leave later arenas without their workers.
+    tbb::task_arena(threads > 0 ? threads : tbb::task_arena::automatic).execute(handed_over);
   } else {
     // A number asked for holds also where the machine has fewer cores.
     const tbb::global_control allowed(tbb::global_control::max_allowed_parallelism,
