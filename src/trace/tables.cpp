@@ -1,6 +1,5 @@
 #include <lightledger/optics/polarization.hpp>
 #include <lightledger/trace/interact.hpp>
-#include <lightledger/trace/parallel.hpp>
 #include <lightledger/trace/tables.hpp>
 
 #include <algorithm>
@@ -113,11 +112,9 @@ public:
   }
 
   void fulfil() {
-    parallel_jobs(m_orders.size(), [&](std::size_t i) {
-      Order& order = m_orders[i];
+    for (Order& order : m_orders)
       if (auto table = tabulate(order.plan->ops[order.ops.front()], order.range))
         order.table = std::make_shared<const AmplitudeTable>(*table);
-    });
     for (Order& order : m_orders) {
       if (!order.table)
         continue;
