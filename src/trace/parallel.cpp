@@ -7,6 +7,10 @@
 #include <tbb/parallel_for.h>
 #include <tbb/task_arena.h>
 
+#include <map>
+#include <memory>
+#include <mutex>
+
 namespace lightledger::trace {
 
 void parallel_jobs(std::size_t count, const std::function<void(std::size_t)>& job) {
@@ -21,6 +25,21 @@ void parallel_jobs(std::size_t count, const std::function<void(std::size_t)>& jo
   from_jobs.take();
 }
 
+namespace {
+
+/// One arena for each number of threads, kept: arenas that come and go can be left without their workers.
+tbb::task_arena& arena_of(int threads) {
+  static std::mutex guard;
+  static std::map<int, std::unique_ptr<tbb::task_arena>> arenas;
+  const std::lock_guard lock(guard);
+  auto& arena = arenas[threads];
+  if (!arena)
+    arena = std::make_unique<tbb::task_arena>(threads);
+  return *arena;
+}
+
+} // namespace
+
 void with_threads(int threads, const std::function<void()>& work) {
   Handover to_work;
   Handover from_work;
@@ -31,8 +50,7 @@ void with_threads(int threads, const std::function<void()>& work) {
   };
   to_work.give();
   if (threads <= tbb::info::default_concurrency()) {
-    // An arena alone: a global limit, once lifted, can leave later arenas without their workers.
-    tbb::task_arena(threads > 0 ? threads : tbb::task_arena::automatic).execute(handed_over);
+    arena_of(threads > 0 ? threads : tbb::task_arena::automatic).execute(handed_over);
   } else {
     // A number asked for holds also where the machine has fewer cores.
     const tbb::global_control allowed(tbb::global_control::max_allowed_parallelism,

@@ -7,7 +7,6 @@
 #include <chrono>
 #include <cstdlib>
 #include <numeric>
-#include <set>
 #include <stdexcept>
 #include <thread>
 #include <vector>
@@ -40,20 +39,6 @@ TEST(Parallel, HandsOnWhatAJobThrows) {
   EXPECT_THROW(parallel_jobs(10, fail), std::runtime_error);
 }
 
-/// How many of the threads allowed really come is the library's affair, and depends on what else runs.
-TEST(Parallel, GivesNoMoreThreadsThanAskedFor) {
-  for (const int threads : {1, 2}) {
-    std::vector<std::thread::id> seen(64);
-    with_threads(threads, [&] {
-      parallel_jobs(seen.size(), [&](std::size_t job) { seen[job] = std::this_thread::get_id(); });
-    });
-    const std::set<std::thread::id> different(seen.begin(), seen.end());
-    EXPECT_LE(different.size(), static_cast<std::size_t>(threads));
-  }
-}
-
-#ifdef __SANITIZE_THREAD__
-
 /// Waits a while for another thread, without ordering what the two do.
 void meet_another(std::atomic<int>& arrived) {
   arrived.fetch_add(1, std::memory_order_relaxed);
@@ -61,6 +46,30 @@ void meet_another(std::atomic<int>& arrived) {
   while (arrived.load(std::memory_order_relaxed) < 2 && std::chrono::steady_clock::now() < patience)
     continue;
 }
+
+std::array<std::thread::id, 2> threads_of_two_jobs() {
+  std::atomic<int> arrived = 0;
+  std::array<std::thread::id, 2> thread;
+  with_threads(2, [&] {
+    parallel_jobs(2, [&](std::size_t job) {
+      meet_another(arrived);
+      thread[job] = std::this_thread::get_id();
+    });
+  });
+  return thread;
+}
+
+/// On a busy machine the second thread may come late: some tries.
+TEST(Parallel, GivesAsManyThreadsAsAskedFor) {
+  bool two = false;
+  for (int attempt = 0; attempt < 10 && !two; ++attempt) {
+    const auto thread = threads_of_two_jobs();
+    two = thread[0] != thread[1];
+  }
+  EXPECT_TRUE(two);
+}
+
+#ifdef __SANITIZE_THREAD__
 
 /// Two jobs that count in the same variable.
 void race() {
