@@ -19,7 +19,7 @@ protected:
   static void SetUpTestSuite() {
     s_scratch = std::make_unique<Scratch>();
     const Outcome outcome =
-        run_shell(std::string("cmake --install " LIGHTLEDGER_BUILD_DIR " --prefix ") + at(""));
+        run_shell(std::string("cmake --install '" LIGHTLEDGER_BUILD_DIR "' --prefix ") + at(""));
     EXPECT_EQ(outcome.code, 0) << outcome.err;
   }
   static void TearDownTestSuite() { s_scratch.reset(); }

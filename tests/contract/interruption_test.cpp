@@ -13,11 +13,11 @@ using testing::HasSubstr;
 using testing::IsEmpty;
 
 /// Enough work for the longest patience.
-const std::string endless = std::string("budget ") + minimal + " --rays 4000000000";
+const std::string endless = std::string("budget '") + minimal + "' --rays 4000000000";
 
 /// Runs the program for a while, then sends it a signal.
 Outcome interrupted(const std::string& signal, const std::string& arguments) {
-  return run_shell("timeout --preserve-status -s " + signal + " 0.4 " LIGHTLEDGER_PROGRAM " " + arguments);
+  return run_shell("timeout --preserve-status -s " + signal + " 0.4 '" LIGHTLEDGER_PROGRAM "' " + arguments);
 }
 
 TEST(Interruption, LeavesNoFileAndSaysSo) {
