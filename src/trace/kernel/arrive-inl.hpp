@@ -207,6 +207,19 @@ HWY_INLINE M refract(const PlanOp& op, const Ray& ray, const Hit& hit, int i, Me
   return set(0.0) < square;
 }
 
+/// A beam that leaves. Where the basis was kept, it is set across the new direction again.
+HWY_INLINE void send_out(RayBlock& out, int i, const V (&d)[3], const Basis& basis) {
+  V u[3] = {basis.s[0], basis.s[1], basis.s[2]};
+  const M none = basis.sin_squared < set(no_plane_of_incidence);
+  if (any(none)) {
+    const V along = keep(none, dot(u, d)); // the other rays keep their bits, whatever their neighbours do
+    for (int axis = 0; axis < 3; ++axis)
+      u[axis] = fnma(along, d[axis], u[axis]);
+  }
+  put(out.u, i, u);
+  put(out.d, i, d);
+}
+
 /// Basis and directions of the beams that leave.
 template <Transverse Kind>
 void depart(const PlanOp& op_seen, const Arriving& arriving, const Departing& out, Meeting& m) {
@@ -234,14 +247,10 @@ void depart(const PlanOp& op_seen, const Arriving& arriving, const Departing& ou
     const V back = set(-2.0) * hit.cosine;
     const V bounced[3] = {fma(back, hit.normal[0], ray.d[0]), fma(back, hit.normal[1], ray.d[1]),
                           fma(back, hit.normal[2], ray.d[2])};
-    if (out.pass != nullptr) {
-      put(out.pass->u, i, basis.s);
-      put(out.pass->d, i, passed);
-    }
-    if (out.bounce != nullptr) {
-      put(out.bounce->u, i, basis.s);
-      put(out.bounce->d, i, bounced);
-    }
+    if (out.pass != nullptr)
+      send_out(*out.pass, i, passed, basis);
+    if (out.bounce != nullptr)
+      send_out(*out.bounce, i, bounced, basis);
   }
   if constexpr (Kind == Transverse::interface)
     m.crosses = op.swallows ? 0 : crosses;
